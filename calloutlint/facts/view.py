@@ -1,0 +1,81 @@
+"""What a rule can ask: views over the model whose members are facts with a name, a type and a docstring.
+
+A fact is a method of a `View` marked with `@fact`; it is computed at most once per view. Its return
+annotation is its type in the condition language:
+
+    Length, Angle, Number   exact decimals; a length is in the unit of the drawing that the view belongs to
+    int, bool, str          a count, a flag, a text
+    a StrEnum               one of a known set of words
+    a View                  something that has facts of its own
+    tuple[T, ...]           a list
+
+`T | None` says that the fact may be unknown; a condition that meets None is unknown, and a rule whose
+condition is unknown stays silent.
+"""
+
+import inspect
+from collections.abc import Mapping
+from dataclasses import dataclass
+from functools import cache, cached_property
+from types import NoneType
+from typing import Annotated, Any, ClassVar, TypeVar, get_args, get_type_hints
+
+from decimal import Decimal
+
+from calloutlint.model.source import Span
+from calloutlint.units import Unit
+
+Length = Annotated[Decimal, "length"]
+Angle = Annotated[Decimal, "angle"]
+Number = Annotated[Decimal, "number"]
+
+T = TypeVar("T")
+
+
+class fact(cached_property[T]):  # noqa: N801 - used as a decorator only
+    """Marks a method of a view as a fact: computed once, then kept on the view."""
+
+
+@dataclass(frozen=True, slots=True)
+class FactEntry:
+    """What is known of a fact: `result` is its annotation without None, `optional` whether None may come."""
+
+    name: str
+    result: Any
+    optional: bool
+    doc: str
+
+
+class View:
+    """Base of everything a rule can ask.
+
+    `subject` is its name in rule sheets; `part` the model object it speaks of, where a finding about it
+    stands and what a redline changes; `unit` the unit that its lengths are in.
+    """
+
+    subject: ClassVar[str]
+    unit: Unit | None
+    part: Any = None
+
+    @property
+    def span(self) -> Span | None:
+        """Where the part stands in its callout."""
+        return getattr(self.part, "span", None)
+
+
+@cache
+def facts_of(view: type[View]) -> Mapping[str, FactEntry]:
+    """The facts of a view class by name, in the order they are written, inherited ones first."""
+    found: dict[str, FactEntry] = {}
+    for owner in reversed(view.__mro__):
+        for name, member in vars(owner).items():
+            if isinstance(member, fact):
+                found[name] = _entry(name, member)
+    return found
+
+
+def _entry(name: str, member: fact[Any]) -> FactEntry:
+    annotation = get_type_hints(member.func, include_extras=True)["return"]
+    options = [option for option in get_args(annotation) if option is not NoneType]
+    optional = NoneType in get_args(annotation)
+    return FactEntry(name, options[0] if optional else annotation, optional, inspect.getdoc(member.func) or "")

@@ -1,0 +1,1 @@
+"""The drawing as data: frozen, exact, with its units; knows no file and no grammar."""
