@@ -16,11 +16,10 @@ condition is unknown stays silent.
 import inspect
 from collections.abc import Mapping
 from dataclasses import dataclass
+from decimal import Decimal
 from functools import cache, cached_property
 from types import NoneType
 from typing import Annotated, Any, ClassVar, TypeVar, get_args, get_type_hints
-
-from decimal import Decimal
 
 from calloutlint.model.source import Span
 from calloutlint.units import Unit
@@ -75,7 +74,17 @@ def facts_of(view: type[View]) -> Mapping[str, FactEntry]:
 
 
 def _entry(name: str, member: fact[Any]) -> FactEntry:
-    annotation = get_type_hints(member.func, include_extras=True)["return"]
+    annotation = get_type_hints(member.func, localns=_views_by_name(), include_extras=True)["return"]
     options = [option for option in get_args(annotation) if option is not NoneType]
     optional = NoneType in get_args(annotation)
     return FactEntry(name, options[0] if optional else annotation, optional, inspect.getdoc(member.func) or "")
+
+
+def _views_by_name() -> dict[str, type[View]]:
+    """Every view class, so that views may name each other without importing each other."""
+    found, waiting = {}, [View]
+    while waiting:
+        view = waiting.pop()
+        found[view.__name__] = view
+        waiting += view.__subclasses__()
+    return found

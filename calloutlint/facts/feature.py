@@ -1,0 +1,133 @@
+"""What the feature of a callout is: inside or outside material, round, a width, a plain surface."""
+
+from __future__ import annotations
+
+from calloutlint.facts.onward import PartView
+from calloutlint.facts.view import fact
+from calloutlint.model.callout import Callout, Meaning
+from calloutlint.model.hole import StepKind
+from calloutlint.model.size import Depth, Size, SizeForm, Through
+from calloutlint.model.thread import Thread
+
+INTERNAL_WORDS = {Meaning.HOLE, Meaning.SLOT, Meaning.GROOVE, Meaning.BORE}
+EXTERNAL_WORDS = {Meaning.SHAFT, Meaning.PIN, Meaning.BOSS, Meaning.TAB}
+SURFACE_WORDS = {Meaning.SURFACE, Meaning.FACE}
+SPHERICAL = {SizeForm.SPHERICAL_DIAMETER, SizeForm.SPHERICAL_RADIUS}
+
+
+def leading_size(callout: Callout) -> Size | None:
+    """The size that says what the feature is: the first that is no angle."""
+    return next((size for size in callout.sizes if size.form is not SizeForm.ANGLE), None)
+
+
+def side_by_words(callout: Callout) -> bool | None:
+    """True internal, False external, None not said, by the words of the callout."""
+    meanings = callout.meanings
+    if meanings & INTERNAL_WORDS:
+        return None if meanings & EXTERNAL_WORDS else True
+    return False if meanings & EXTERNAL_WORDS else None
+
+
+def side_by_hole(callout: Callout) -> bool | None:
+    """True where a diameter goes through, has a depth, or has hole steps; else None."""
+    sunk = any(step.kind is not StepKind.TAP for step in callout.steps)
+    size = leading_size(callout)
+    bored = size is not None and size.form is SizeForm.DIAMETER and isinstance(size.extent, Through | Depth)
+    return True if bored or sunk else None
+
+
+def side_by_letters(callout: Callout) -> bool | None:
+    """True internal, False external, None not said, by thread class and fit letter."""
+    for thread in callout.threads:
+        side = side_of_thread(thread)
+        if side is not None:
+            return side
+    size = leading_size(callout)
+    if size is None or size.fit is None:
+        return None
+    return size.fit.letters[0].isupper()
+
+
+def side_of_thread(thread: Thread) -> bool | None:
+    """True internal, False external by the class: 2B, 6H inside; 2A, 6g outside; None where none is stated."""
+    letters = [char for char in thread.class_ or "" if char.isalpha()]
+    if not letters:
+        return None
+    if thread.class_ in {"1A", "2A", "3A", "1B", "2B", "3B"}:
+        return letters[0] == "B"
+    return letters[0].isupper()
+
+
+class FeatureView(PartView):
+    """The feature that a callout speaks of."""
+
+    subject = "feature"
+    part: Callout
+
+    @fact
+    def internal(self) -> bool | None:
+        """Whether it is a hole, slot or other internal feature: by words, joint, hole signs, then letters."""
+        return self._side
+
+    @fact
+    def external(self) -> bool | None:
+        """Whether it is a shaft, tab or other external feature."""
+        return None if self._side is None else not self._side
+
+    @property
+    def _side(self) -> bool | None:
+        said = side_by_words(self.part)
+        if said is not None:
+            return said
+        if self._callout.joined:
+            return True
+        holed = side_by_hole(self.part)
+        return side_by_letters(self.part) if holed is None else holed
+
+    @fact
+    def of_size(self) -> bool:
+        """Whether the callout states a size or a thread."""
+        return bool(self.part.threads) or leading_size(self.part) is not None
+
+    @fact
+    def threaded(self) -> bool:
+        """Whether it is a screw thread."""
+        return bool(self.part.threads)
+
+    @fact
+    def round(self) -> bool | None:
+        """Whether it is a cylinder: a diameter or a thread; unknown where no size is stated."""
+        if self.part.threads:
+            return True
+        size = leading_size(self.part)
+        if size is None:
+            return True if Meaning.CYLINDER in self.part.meanings else None
+        return size.form is SizeForm.DIAMETER
+
+    @fact
+    def sphere(self) -> bool | None:
+        """Whether it is a sphere; unknown where no size is stated."""
+        if Meaning.SPHERE in self.part.meanings:
+            return True
+        size = leading_size(self.part)
+        return size.form in SPHERICAL if size else (False if self.part.threads else None)
+
+    @fact
+    def surface(self) -> bool | None:
+        """Whether it is a plain surface: words say so, or it is a datum feature without any size."""
+        if self.part.meanings & SURFACE_WORDS:
+            return True
+        if self.of_size:
+            return False
+        return True if self.part.datum_features and not self.part.meanings else None
+
+    @fact
+    def called_surface(self) -> bool:
+        """Whether the callout's words say SURFACE or FACE."""
+        return bool(self.part.meanings & SURFACE_WORDS)
+
+    @fact
+    def several(self) -> bool:
+        """Whether the callout speaks for more than one feature."""
+        count = self.part.count
+        return count is not None and count.number != 1

@@ -1,0 +1,318 @@
+"""Facts about one line of a feature control frame: characteristic, tolerance, datum references."""
+
+from __future__ import annotations
+
+from collections import Counter
+from typing import TYPE_CHECKING
+
+from calloutlint.facts.onward import PartView
+from calloutlint.facts.view import Length, fact
+from calloutlint.model.callout import Meaning
+from calloutlint.model.frame import (
+    Characteristic,
+    DatumRef,
+    Frame,
+    Modifier,
+    ModifierUse,
+    ScopeKind,
+    Segment,
+    Zone,
+    ZoneShape,
+)
+
+if TYPE_CHECKING:
+    from calloutlint.facts.callout import CalloutView
+
+FORM = {
+    Characteristic.STRAIGHTNESS,
+    Characteristic.FLATNESS,
+    Characteristic.CIRCULARITY,
+    Characteristic.CYLINDRICITY,
+}
+ORIENTATION = {Characteristic.ANGULARITY, Characteristic.PERPENDICULARITY, Characteristic.PARALLELISM}
+PROFILE = {Characteristic.LINE_PROFILE, Characteristic.SURFACE_PROFILE}
+RUNOUT = {Characteristic.CIRCULAR_RUNOUT, Characteristic.TOTAL_RUNOUT}
+MATERIAL = (Modifier.MMC, Modifier.LMC, Modifier.RFS)
+
+
+class ToleranceView(PartView):
+    """The tolerance compartment of a frame line. Its lengths are unknown where no value is written."""
+
+    subject = "tolerance"
+
+    def __init__(self, zone: Zone | None, frame: FrameView) -> None:
+        super().__init__(zone, frame.callout)
+        self._frame = frame
+        self._uses: tuple[ModifierUse, ...] = zone.modifiers if zone else ()
+
+    @fact
+    def value(self) -> Length | None:
+        """The tolerance as stated."""
+        return self._length(self.part.value) if self.part else None
+
+    @fact
+    def written(self) -> str:
+        """The tolerance value as written."""
+        return self.part.value.text if self.part and self.part.value else ""
+
+    @fact
+    def shape(self) -> ZoneShape | None:
+        """Width, diameter or sphere; unknown where no tolerance is written."""
+        return self.part.shape if self.part else None
+
+    @fact
+    def modifiers(self) -> tuple[Modifier, ...]:
+        """The modifiers in the order written."""
+        return tuple(use.kind for use in self._uses)
+
+    @fact
+    def projected(self) -> Length | None:
+        """Height of the projected zone; unknown where none is written."""
+        return self._amount(Modifier.PROJECTED)
+
+    @fact
+    def unequal(self) -> Length | None:
+        """Amount of an unequally disposed zone outside the material; unknown where none is written."""
+        return self._amount(Modifier.UNEQUAL)
+
+    def _amount(self, kind: Modifier) -> Length | None:
+        use = self.part.modifier(kind) if self.part else None
+        return self._length(use.value) if use else None
+
+    @fact
+    def per_unit(self) -> bool:
+        """Whether the tolerance is stated per unit of length or area."""
+        return self.part is not None and self.part.per is not None
+
+    @fact
+    def out_of_order(self) -> bool:
+        """Whether a material condition modifier does not come first, or the statistical symbol not last."""
+        kinds = list(self.modifiers)
+        late_material = any(kind in MATERIAL for kind in kinds[1:]) and kinds[0] not in MATERIAL
+        early_statistical = Modifier.STATISTICAL in kinds[:-1]
+        return late_material or early_statistical
+
+    @fact
+    def at_lmc(self) -> Length | None:
+        """The tolerance with its whole bonus, at the hole's least material condition."""
+        bonus = self._frame.hole.bonus
+        return None if self.value is None or bonus is None else self.value + bonus
+
+
+class DatumView(PartView):
+    """One datum compartment of a frame line."""
+
+    subject = "datum"
+    part: DatumRef
+
+    def __init__(self, part: DatumRef, frame: FrameView, place: int) -> None:
+        super().__init__(part, frame.callout)
+        self._frame = frame
+        self._place = place
+
+    @fact
+    def frame(self) -> FrameView:
+        """The frame line that it stands in."""
+        return self._frame
+
+    @fact
+    def name(self) -> str:
+        """The datum as named: `A`, `A-B`."""
+        return self.part.name
+
+    @fact
+    def place(self) -> int:
+        """Order of precedence, from 1."""
+        return self._place
+
+    @fact
+    def letters(self) -> tuple[str, ...]:
+        """Its letters; two or more in a common datum."""
+        return tuple(letter.letter for letter in self.part.letters)
+
+    @fact
+    def modifiers(self) -> tuple[Modifier, ...]:
+        """Its modifiers, those of single letters of a common datum included."""
+        own = (use.kind for letter in self.part.letters for use in letter.modifiers)
+        return (*own, *(use.kind for use in self.part.modifiers))
+
+    @fact
+    def freedoms(self) -> tuple[str, ...]:
+        """The degrees of freedom named with it, as written."""
+        return self.part.freedoms
+
+    @fact
+    def undefined(self) -> tuple[str, ...]:
+        """Letters that are defined nowhere on the drawing or its other sheets."""
+        known = self._callout.drawing.defined_letters
+        return tuple(letter for letter in self.letters if letter not in known)
+
+    @fact
+    def plane(self) -> bool | None:
+        """Whether every datum feature it names is a plane; unknown where one is not known."""
+        kinds = [self._callout.drawing.is_plane(letter) for letter in self.letters]
+        if None in kinds:
+            return None
+        return all(kinds)
+
+    @fact
+    def own(self) -> bool:
+        """Whether it names, alone, a datum feature that this very callout establishes."""
+        return len(self.letters) == 1 and self.letters[0] in self._callout.datum_letters
+
+
+class FrameView(PartView):
+    """One line of a feature control frame."""
+
+    subject = "frame"
+    part: Segment
+
+    def __init__(self, part: Segment, callout: CalloutView, frame: Frame, above: FrameView | None) -> None:
+        super().__init__(part, callout)
+        self.whole = frame
+        self._above = above
+
+    @fact
+    def characteristic(self) -> Characteristic:
+        """The geometric characteristic."""
+        return self.part.characteristic
+
+    @fact
+    def form(self) -> bool:
+        """Whether it is a form tolerance."""
+        return self.part.characteristic in FORM
+
+    @fact
+    def orientation(self) -> bool:
+        """Whether it is an orientation tolerance."""
+        return self.part.characteristic in ORIENTATION
+
+    @fact
+    def profile(self) -> bool:
+        """Whether it is a profile tolerance."""
+        return self.part.characteristic in PROFILE
+
+    @fact
+    def runout(self) -> bool:
+        """Whether it is a runout tolerance."""
+        return self.part.characteristic in RUNOUT
+
+    @fact
+    def tolerance(self) -> ToleranceView:
+        """Its tolerance compartment."""
+        return ToleranceView(self.part.zone, self)
+
+    @fact
+    def datums(self) -> tuple[DatumView, ...]:
+        """Its datum compartments in order of precedence."""
+        return tuple(DatumView(ref, self, place) for place, ref in enumerate(self.part.datums, start=1))
+
+    @fact
+    def composite(self) -> bool:
+        """Whether it is a line of a composite frame."""
+        return self.whole.composite
+
+    @fact
+    def row(self) -> int:
+        """Its line in a composite frame, from 1."""
+        return 1 if self._above is None else self._above.row + 1
+
+    @fact
+    def above(self) -> FrameView | None:
+        """The line above it in a composite frame; unknown for the first."""
+        return self._above
+
+    @fact
+    def follows_above(self) -> bool | None:
+        """Whether its datums are the leading datums of the line above in the same order."""
+        if self._above is None:
+            return None
+        names = [datum.name for datum in self.datums]
+        return names == [datum.name for datum in self._above.datums][: len(names)]
+
+    @fact
+    def size(self) -> Length | None:
+        """Total size tolerance of the feature that it controls."""
+        size = self._callout.size
+        return size.total if size else None
+
+    @fact
+    def scope(self) -> ScopeKind | None:
+        """All around, all over, between or from-to; unknown where nothing is said."""
+        return self.whole.scope.kind if self.whole.scope else None
+
+    @fact
+    def repeated_letters(self) -> tuple[str, ...]:
+        """Letters that stand in two of its datum compartments."""
+        compartments = Counter(letter for datum in self.datums for letter in set(datum.letters))
+        return tuple(sorted(letter for letter, number in compartments.items() if number > 1))
+
+    @fact
+    def doubled_letters(self) -> tuple[str, ...]:
+        """Letters that stand twice in one common datum, as in `A-A`."""
+        return tuple(sorted({x for d in self.datums for x in d.letters if d.letters.count(x) > 1}))
+
+    @fact
+    def bidirectional(self) -> bool:
+        """Whether the callout has two or more position frames without a diameter: one for each direction."""
+        first_lines = (view for view in self._callout.frames if view.row == 1)
+        positions = [view for view in first_lines if view.characteristic is Characteristic.POSITION]
+        return sum(view.tolerance.shape is ZoneShape.WIDTH for view in positions) > 1
+
+    @fact
+    def twin(self) -> FrameView | None:
+        """An earlier single frame of the callout that says the same of the feature; unknown where none does.
+
+        The same characteristic, datums and scope. Two directions (both without ⌀), one at Ⓜ and one at Ⓛ, and
+        frames that differ in a projected zone, free state, tangent plane or unit are not twins.
+        """
+        if self.composite:
+            return None
+        for other in self._callout.frames:
+            if other is self:
+                return None
+            if not other.composite and _twins(other, self):
+                return other
+        return None
+
+    @fact
+    def position_partner(self) -> FrameView | None:
+        """The widest position line with the same primary datum and material modifier, not projected."""
+        if not self.datums:
+            return None
+        partners = [view for view in self._callout.frames if _refines(self, view)]
+        return max(partners, key=lambda view: view.tolerance.value or 0, default=None)
+
+    @fact
+    def each_element(self) -> bool:
+        """Whether the callout's words limit it to line elements."""
+        return Meaning.EACH_ELEMENT in self._callout.part.meanings
+
+
+def _twins(one: FrameView, other: FrameView) -> bool:
+    if (one.characteristic, one.part.datums, one.whole.scope) != (
+        other.characteristic,
+        other.part.datums,
+        other.whole.scope,
+    ):
+        return False
+    if not one.profile and one.tolerance.shape is other.tolerance.shape is ZoneShape.WIDTH:
+        return False
+    kinds, others = set(one.tolerance.modifiers), set(other.tolerance.modifiers)
+    if {Modifier.MMC, Modifier.LMC} <= kinds | others:
+        return False
+    if one.tolerance.per_unit or other.tolerance.per_unit:
+        return False
+    return kinds - set(MATERIAL) == others - set(MATERIAL)
+
+
+def _refines(orientation: FrameView, position: FrameView) -> bool:
+    if position.characteristic is not Characteristic.POSITION or not position.datums:
+        return False
+    same_primary = position.part.datums[0] == orientation.part.datums[0]
+    kinds, others = (set(view.tolerance.modifiers) for view in (orientation, position))
+    return same_primary and Modifier.PROJECTED not in kinds | others and _material(kinds) == _material(others)
+
+
+def _material(kinds: set[Modifier]) -> set[Modifier]:
+    return kinds & {Modifier.MMC, Modifier.LMC}

@@ -1,0 +1,132 @@
+"""Facts about a callout's feature as a hole: its limits, what is done to it, what goes through it."""
+
+from __future__ import annotations
+
+from decimal import Decimal
+
+from calloutlint.facts.feature import leading_size
+from calloutlint.facts.onward import PartView
+from calloutlint.facts.view import Length, fact
+from calloutlint.model.callout import Callout
+from calloutlint.model.fastener import Fastener
+from calloutlint.model.hole import StepKind
+from calloutlint.model.size import Depth, Size, SizeForm, SizeStatus, Through
+from calloutlint.trade.clearance import ClearanceSizes, clearance_sizes, is_published
+from calloutlint.units import Unit, convert
+
+NOT_CLEARANCE = {StepKind.REAM, StepKind.TAP}
+
+
+class HoleView(PartView):
+    """A hole: clearance, fixing or plain. Its facts are unknown where the callout states no single diameter."""
+
+    subject = "hole"
+    part: Callout
+
+    @property
+    def _size(self) -> Size | None:
+        size = leading_size(self.part)
+        return size if size is not None and size.form is SizeForm.DIAMETER and not size.doubtful else None
+
+    @fact
+    def nominal(self) -> Length | None:
+        """Nominal diameter."""
+        return self._length(self._size.nominal) if self._size else None
+
+    @fact
+    def mmc(self) -> Length | None:
+        """Smallest diameter of the hole: its maximum material condition."""
+        return self._callout.view_of(self._size).smallest if self._size else None
+
+    @fact
+    def lmc(self) -> Length | None:
+        """Largest diameter of the hole: its least material condition."""
+        return self._callout.view_of(self._size).largest if self._size else None
+
+    @fact
+    def bonus(self) -> Length | None:
+        """Size tolerance of the hole: the bonus that Ⓜ would allow at least material condition."""
+        return None if self.mmc is None or self.lmc is None else self.lmc - self.mmc
+
+    @fact
+    def through(self) -> bool:
+        """Whether the hole goes through."""
+        return self._size is not None and isinstance(self._size.extent, Through)
+
+    @fact
+    def threaded(self) -> bool:
+        """Whether the hole is tapped."""
+        return bool(self.part.threads)
+
+    @fact
+    def plain(self) -> bool:
+        """Whether it is a through hole as fasteners pass: no thread, fit code, ream or tap; steps allowed."""
+        size = self._size
+        if size is None or self.threaded or size.fit is not None or not self.through:
+            return False
+        finished = any(step.kind in NOT_CLEARANCE for step in self.part.steps)
+        return size.status is SizeStatus.TOLERANCED and not finished
+
+    @fact
+    def joined(self) -> bool:
+        """Whether a joint stated in words has this as a clearance hole."""
+        return self._callout.joined
+
+    @fact
+    def clearance(self) -> bool:
+        """Whether it is a clearance hole: stated by a joint, else assumed from the published sizes."""
+        return self.joined or self.presumed or self.guessed
+
+    @fact
+    def presumed(self) -> bool:
+        """Whether it is taken for a clearance hole of a fastener in the drawing's parts list."""
+        return bool(self.presumed_fasteners)
+
+    @fact
+    def presumed_fasteners(self) -> tuple[str, ...]:
+        """Fasteners of the parts list whose close to loose sizes take in this hole."""
+        if not self._open_to_assumption or self.nominal is None:
+            return ()
+        return tuple(f.text for f in self.drawing_model.fasteners if _admits(f, self.nominal, self.unit))
+
+    @fact
+    def guessed(self) -> bool:
+        """Whether, without a parts list, its nominal equals a published clearance size."""
+        if not self._open_to_assumption or self.drawing_model.fasteners or self.nominal is None:
+            return False
+        return self.unit in {Unit.INCH, Unit.MM} and is_published(self.nominal, self.unit)
+
+    @property
+    def _open_to_assumption(self) -> bool:
+        return not self._callout.in_any_joint and self.plain and not self.part.datum_features
+
+    @fact
+    def depth(self) -> Length | None:
+        """Depth of the drilled hole; unknown for a through hole or where none is stated."""
+        drills = [step.extent for step in self.part.steps if step.kind is StepKind.DRILL]
+        sizes = [size.extent for size in self.part.sizes if size.form is SizeForm.DIAMETER]
+        depths = [extent.size for extent in [*sizes, *drills] if isinstance(extent, Depth) and extent.size]
+        return self._length(depths[0].nominal) if depths else None
+
+    @fact
+    def thread_depth(self) -> Length | None:
+        """Depth of full thread as stated (nominal)."""
+        depths = [t.extent.size for t in self.part.threads if isinstance(t.extent, Depth) and t.extent.size]
+        return self._length(depths[0].nominal) if depths else None
+
+
+def _admits(fastener: Fastener, nominal: Decimal, unit: Unit | None) -> bool:
+    sizes = _sizes_for(fastener)
+    diameter = fastener.thread.diameter if fastener.thread else None
+    if sizes is None or diameter is None or diameter.unit is None or unit is None:
+        return False
+    close = convert(sizes.close, diameter.unit, unit)
+    loose = convert(sizes.loose, diameter.unit, unit)
+    return close <= nominal <= loose
+
+
+def _sizes_for(fastener: Fastener) -> ClearanceSizes | None:
+    diameter = fastener.thread.diameter if fastener.thread else None
+    if diameter is None or diameter.unit is None:
+        return None
+    return clearance_sizes(diameter.amount, diameter.unit)

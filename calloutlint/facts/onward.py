@@ -1,0 +1,74 @@
+"""What every view that stands on a callout can say: its callout, its drawing, its standard."""
+
+from __future__ import annotations
+
+from decimal import Decimal
+from typing import TYPE_CHECKING, Any
+
+from calloutlint.facts.view import View, fact
+from calloutlint.model.callout import Callout
+from calloutlint.model.drawing import Drawing
+from calloutlint.model.values import Value
+from calloutlint.units import Unit, convert
+
+if TYPE_CHECKING:
+    from calloutlint.facts.callout import CalloutView
+    from calloutlint.facts.drawing import DrawingView, StandardView
+    from calloutlint.facts.feature import FeatureView
+    from calloutlint.facts.hole import HoleView
+
+
+def amount_in(value: Value | None, unit: Unit | None) -> Decimal | None:
+    """The amount of a drawn value in `unit`; as it stands where either unit is not known, None for None."""
+    if value is None:
+        return None
+    if value.unit is None or unit is None or value.unit is Unit.DEGREE:
+        return value.amount
+    return convert(value.amount, value.unit, unit)
+
+
+class PartView(View):
+    """A part of a callout. `part` is the model object that a finding marks and a redline changes."""
+
+    def __init__(self, part: Any, callout: CalloutView) -> None:
+        self.part = part
+        self._callout = callout
+        self.unit = callout.unit
+
+    @property
+    def callout_model(self) -> Callout:
+        """The callout as read."""
+        return self._callout.callout_model
+
+    @property
+    def drawing_model(self) -> Drawing:
+        """The drawing as read."""
+        return self._callout.drawing_model
+
+    def _length(self, value: Value | None) -> Decimal | None:
+        return amount_in(value, self.unit)
+
+    @fact
+    def callout(self) -> CalloutView:
+        """The callout that this stands in."""
+        return self._callout
+
+    @fact
+    def drawing(self) -> DrawingView:
+        """The drawing that this stands on."""
+        return self._callout.drawing
+
+    @fact
+    def standard(self) -> StandardView:
+        """The standard that the drawing states."""
+        return self._callout.drawing.standard
+
+    @fact
+    def feature(self) -> FeatureView:
+        """What the callout's feature is: internal or external, round, a width, a plain surface."""
+        return self._callout.feature
+
+    @fact
+    def hole(self) -> HoleView:
+        """The callout's feature as a hole: its limits, what goes through it."""
+        return self._callout.hole

@@ -1,0 +1,99 @@
+"""Facts about a package: its drawings, and what ties them together."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from functools import cached_property
+
+from calloutlint.facts.assembly import Assembly
+from calloutlint.facts.callout import CalloutView
+from calloutlint.facts.drawing import DrawingView
+from calloutlint.facts.view import View, fact
+from calloutlint.model.callout import Callout
+from calloutlint.model.drawing import Drawing, Package
+
+
+@dataclass(frozen=True, slots=True)
+class DatumIndex:
+    """Where the datum letters of a drawing, all its sheets together, are defined and referenced."""
+
+    definitions: dict[str, list[Callout]]
+    references: frozenset[str]
+
+
+class PackageView(View):
+    """Drawings reviewed together."""
+
+    subject = "package"
+    part: Package
+
+    def __init__(self, part: Package) -> None:
+        self.part = part
+        self.unit = None
+        self.callout_model = None
+        self.drawing_model = None
+        self._indexes: dict[str, DatumIndex] = {}
+
+    @fact
+    def name(self) -> str:
+        """The package's name."""
+        return self.part.name
+
+    @fact
+    def drawings(self) -> tuple[DrawingView, ...]:
+        """Its drawings, sheet by sheet."""
+        return tuple(DrawingView(drawing, self) for drawing in self.part.drawings)
+
+    @cached_property
+    def assembly(self) -> Assembly:
+        """The stated joints of the package."""
+        return Assembly(self.part)
+
+    @cached_property
+    def _views(self) -> dict[int, CalloutView]:
+        return {id(view.part): view for drawing in self.drawings for view in drawing.callouts}
+
+    def view_of(self, callout: Callout) -> CalloutView:
+        """The view of a callout of the package."""
+        return self._views[id(callout)]
+
+    def datum_index(self, drawing: Drawing) -> DatumIndex:
+        """The datum letters of a drawing; sheets with the same number and revision count as one drawing."""
+        key = f"{drawing.number}\0{drawing.revision}" if drawing.number else drawing.file
+        if key not in self._indexes:
+            sheets = [other for other in self.part.drawings if _same_drawing(other, drawing)]
+            self._indexes[key] = _index(sheets)
+        return self._indexes[key]
+
+    def is_duplicate(self, drawing: Drawing) -> bool:
+        """Whether an earlier drawing has the same number, revision and sheet."""
+        same = (drawing.number, drawing.revision, drawing.sheet)
+        if drawing.number is None:
+            return False
+        for other in self.part.drawings:
+            if other is drawing:
+                return False
+            if (other.number, other.revision, other.sheet) == same:
+                return True
+        return False
+
+
+def _same_drawing(one: Drawing, other: Drawing) -> bool:
+    if one is other:
+        return True
+    same = (one.number, one.revision) == (other.number, other.revision)
+    return same and one.number is not None and one.sheet != other.sheet
+
+
+def _index(sheets: list[Drawing]) -> DatumIndex:
+    features: dict[str, list[Callout]] = {}
+    targets: dict[str, list[Callout]] = {}
+    references: set[str] = set()
+    for callout in (callout for sheet in sheets for callout in sheet.callouts):
+        for letter in dict.fromkeys(feature.letter for feature in callout.datum_features):
+            features.setdefault(letter, []).append(callout)
+        for target in callout.datum_targets:
+            targets.setdefault(target.letter, []).append(callout)
+        for segment in callout.segments:
+            references |= {letter.letter for ref in segment.datums for letter in ref.letters}
+    return DatumIndex(targets | features, frozenset(references))

@@ -1,0 +1,244 @@
+"""Facts about a size: its limits, its tolerance, how it is written."""
+
+from __future__ import annotations
+
+from decimal import Decimal
+from enum import StrEnum
+from typing import TYPE_CHECKING
+
+from calloutlint.facts.onward import PartView, amount_in
+from calloutlint.facts.view import Length, fact
+from calloutlint.model.size import Deviations, Limits, PlusMinus, Size, SizeForm, SizeModifier, SizeStatus
+from calloutlint.model.values import Value
+from calloutlint.trade.general_tolerances import general_tolerance
+from calloutlint.units import Unit
+
+if TYPE_CHECKING:
+    from calloutlint.facts.callout import CalloutView
+
+
+class Role(StrEnum):
+    """What a size measures in its callout."""
+
+    FEATURE = "feature"
+    STEP = "step"
+    DEPTH = "depth"
+    STEP_ANGLE = "step angle"
+
+
+def bounds(size: Size, unit: Unit | None) -> tuple[Decimal, Decimal] | None:
+    """Smallest and largest size in `unit` from explicit limits or deviations; None where there are none.
+
+    Limits count whichever is written first. A size with MAX or MIN alone has no bounds.
+    """
+    tolerance = size.tolerance
+    if isinstance(tolerance, Limits):
+        ends = (amount_in(tolerance.first, unit), amount_in(tolerance.second, unit))
+        return None if None in ends else (min(ends), max(ends))  # type: ignore[type-var, return-value]
+    nominal = amount_in(size.nominal, unit)
+    spread = deviations(size, unit)
+    if nominal is None or spread is None:
+        return None
+    return nominal + min(spread), nominal + max(spread)
+
+
+def deviations(size: Size, unit: Unit | None) -> tuple[Decimal, Decimal] | None:
+    """Upper and lower deviation as written, in `unit`; None where the tolerance is not given by deviations."""
+    match size.tolerance:
+        case PlusMinus(amount):
+            value = amount_in(amount, unit)
+            return None if value is None else (value, -value)
+        case Deviations(upper, lower):
+            ends = amount_in(upper, unit), amount_in(lower, unit)
+            return None if None in ends else ends  # type: ignore[return-value]
+        case _:
+            return None
+
+
+def written_values(size: Size) -> tuple[Value, ...]:
+    """Every number of a size in its own unit: nominal, deviations or limits; the dual dimension left out."""
+    match size.tolerance:
+        case PlusMinus(amount):
+            more: tuple[Value, ...] = (amount,)
+        case Deviations(upper, lower):
+            more = (upper, lower)
+        case Limits(first, second):
+            more = (first, second)
+        case _:
+            more = ()
+    return more if size.nominal is None else (size.nominal, *more)
+
+
+class SizeView(PartView):
+    """A size, a depth, or the diameter or angle of a hole step."""
+
+    subject = "size"
+    part: Size
+
+    def __init__(
+        self, part: Size, callout: CalloutView, role: Role = Role.FEATURE, *, stock: bool = False
+    ) -> None:
+        super().__init__(part, callout)
+        self._role = role
+        self._stock = stock
+
+    @fact
+    def role(self) -> Role:
+        """What it measures: the feature itself, a hole step, a depth, a step's angle."""
+        return self._role
+
+    @fact
+    def form(self) -> SizeForm:
+        """What its symbol says: linear, diameter, radius, square, angle…"""
+        return self.part.form
+
+    @fact
+    def status(self) -> SizeStatus:
+        """Toleranced, basic, reference, maximum or minimum."""
+        return self.part.status
+
+    @fact
+    def modifiers(self) -> tuple[SizeModifier, ...]:
+        """Symbols that follow the size, such as ST or E."""
+        return self.part.modifiers
+
+    @fact
+    def nominal(self) -> Length | None:
+        """Nominal size; unknown where only limits are written."""
+        return self._length(self.part.nominal)
+
+    @fact
+    def smallest(self) -> Length | None:
+        """Lower limit of size from its explicit tolerance, else from the general tolerance."""
+        limits = self._limits
+        return limits[0] if limits else None
+
+    @fact
+    def largest(self) -> Length | None:
+        """Upper limit of size from its explicit tolerance, else from the general tolerance."""
+        limits = self._limits
+        return limits[1] if limits else None
+
+    @fact
+    def total(self) -> Length | None:
+        """Total size tolerance: upper limit less lower limit."""
+        limits = self._limits
+        return limits[1] - limits[0] if limits else None
+
+    @property
+    def _limits(self) -> tuple[Decimal, Decimal] | None:
+        explicit = bounds(self.part, self.unit)
+        if explicit or self.part.status is not SizeStatus.TOLERANCED or self.part.fit:
+            return explicit or self._fit_limits
+        if self.nominal is None or self.general is None:
+            return None
+        return self.nominal - self.general, self.nominal + self.general
+
+    @property
+    def _fit_limits(self) -> tuple[Decimal, Decimal] | None:
+        return self._callout.fit_limits(self.part) if self.part.fit else None
+
+    @fact
+    def upper(self) -> Length | None:
+        """Upper deviation as written, the first of the two; a limit called MAX counts as upper."""
+        return self._written_ends[0] if self._written_ends else None
+
+    @fact
+    def lower(self) -> Length | None:
+        """Lower deviation as written, the second of the two; a limit called MIN counts as lower."""
+        return self._written_ends[1] if self._written_ends else None
+
+    @property
+    def _written_ends(self) -> tuple[Decimal, Decimal] | None:
+        tolerance = self.part.tolerance
+        if isinstance(tolerance, Limits):
+            first, second = self._length(tolerance.first), self._length(tolerance.second)
+            return (first, second) if tolerance.named and first is not None and second is not None else None
+        return deviations(self.part, self.unit)
+
+    @fact
+    def toleranced(self) -> bool:
+        """Whether it carries a tolerance of its own: deviations, limits, a fit code, MAX or MIN."""
+        bounded = self.part.status in {SizeStatus.MAXIMUM, SizeStatus.MINIMUM}
+        return bounded or self.part.tolerance is not None or self.part.fit is not None
+
+    @fact
+    def exempt(self) -> bool:
+        """Whether it needs no tolerance: basic, reference, a countersink's angle, a drill called by name."""
+        status = self.part.status in {SizeStatus.BASIC, SizeStatus.REFERENCE}
+        return status or self._stock or self._role is Role.STEP_ANGLE
+
+    @fact
+    def general(self) -> Length | None:
+        """The general tolerance (plus and minus) that covers this size; unknown where none does."""
+        tolerances = self.drawing_model.general
+        if tolerances is None:
+            return None
+        return general_tolerance(tolerances, self.part, self.unit)
+
+    @fact
+    def covered(self) -> bool | None:
+        """Whether general tolerances cover this size; unknown where they were not fully read."""
+        if self.general is not None:
+            return True
+        tolerances = self.drawing_model.general
+        return None if tolerances is not None and tolerances.unread else False
+
+    @fact
+    def repeats_general(self) -> bool | None:
+        """Whether its explicit tolerance is just the general tolerance."""
+        ends = deviations(self.part, self.unit)
+        if ends is None or self.general is None:
+            return None
+        return ends == (self.general, -self.general)
+
+    @fact
+    def dual_agrees(self) -> bool | None:
+        """Whether the bracketed size is the same size in the other unit, within rounding.
+
+        The nominal has to agree to half a unit in the last place of either writing; limits, which may be
+        rounded inward, to less than one unit.
+        """
+        dual = self.part.dual
+        if dual is None or self.unit not in {Unit.INCH, Unit.MM}:
+            return None
+        return _agrees(self.part, dual, self.unit)
+
+    @fact
+    def dual(self) -> str:
+        """The bracketed size as written; empty where there is none."""
+        dual = self.part.dual
+        return dual.nominal.text if dual and dual.nominal else ""
+
+    @fact
+    def in_other_unit(self) -> str:
+        """The nominal size converted to the bracketed size's unit, to its places."""
+        dual, nominal = self.part.dual, self.part.nominal
+        if dual is None or dual.nominal is None or nominal is None:
+            return ""
+        amount = amount_in(nominal, dual.nominal.unit)
+        return "" if amount is None else f"{amount:.{dual.nominal.places}f}"
+
+
+def _agrees(size: Size, dual: Size, unit: Unit) -> bool:
+    pairs = [(size.nominal, dual.nominal, Decimal("0.5"))]
+    match size.tolerance, dual.tolerance:
+        case PlusMinus(one), PlusMinus(other):
+            pairs.append((one, other, Decimal(1)))
+        case Deviations(upper, lower), Deviations(dual_upper, dual_lower):
+            pairs += [(upper, dual_upper, Decimal(1)), (lower, dual_lower, Decimal(1))]
+        case Limits(first, second), Limits(dual_first, dual_second):
+            pairs += [(first, dual_first, Decimal(1)), (second, dual_second, Decimal(1))]
+    return all(_same(one, other, share) for one, other, share in pairs if one is not None and other is not None)
+
+
+def _same(one: Value, other: Value, share: Decimal) -> bool:
+    there, back = amount_in(one, other.unit), amount_in(other, one.unit)
+    if there is None or back is None:
+        return True
+    close = abs(there - other.amount) <= share * _last_place(other)
+    return close or abs(back - one.amount) <= share * _last_place(one)
+
+
+def _last_place(value: Value) -> Decimal:
+    return Decimal(1).scaleb(-value.places)

@@ -1,0 +1,65 @@
+"""Everything rules may examine, and the order in which it is examined."""
+
+from collections.abc import Iterator
+
+from calloutlint.facts.callout import CalloutView
+from calloutlint.facts.drawing import DrawingView, LineView
+from calloutlint.facts.frame import DatumView, FrameView
+from calloutlint.facts.marks import DefinitionView, GapView, SymbolView, TargetView, UnreadView
+from calloutlint.facts.package import PackageView
+from calloutlint.facts.size import SizeView
+from calloutlint.facts.step import StepView
+from calloutlint.facts.thread import ThreadView
+from calloutlint.facts.view import View
+from calloutlint.model.drawing import Package
+
+SUBJECTS: dict[str, type[View]] = {
+    view.subject: view
+    for view in (
+        PackageView,
+        DrawingView,
+        LineView,
+        CalloutView,
+        UnreadView,
+        GapView,
+        SizeView,
+        ThreadView,
+        StepView,
+        FrameView,
+        DatumView,
+        SymbolView,
+        DefinitionView,
+        TargetView,
+    )
+}
+
+
+def subjects(package: Package) -> PackageView:
+    """The view of a package, from which every other view is reached."""
+    return PackageView(package)
+
+
+def walk(package: PackageView) -> Iterator[View]:
+    """Every view that rules may examine, in document order."""
+    yield package
+    for drawing in package.drawings:
+        yield drawing
+        yield from drawing.lines
+        for callout in drawing.callouts:
+            yield from walk_callout(callout)
+
+
+def walk_callout(callout: CalloutView) -> Iterator[View]:
+    """A callout and every view of its parts."""
+    yield callout
+    yield from callout.unread
+    yield from callout.gaps
+    yield from callout.sizes
+    yield from callout.threads
+    yield from callout.steps
+    for frame in callout.frames:
+        yield frame
+        yield from frame.datums
+    yield from callout.symbols
+    yield from callout.definitions
+    yield from callout.targets
