@@ -1,0 +1,44 @@
+"""What the README shows is what the program does today."""
+
+import re
+import shlex
+from pathlib import Path
+
+import pytest
+
+from calloutlint.cli import main
+
+README = (Path(__file__).parent.parent / "README.md").read_text(encoding="utf-8")
+SHEETS = dict(re.findall(r"`([\w-]+\.txt)`[^`]*?\n```text\n(.*?)```", README, re.DOTALL))
+SESSIONS = re.findall(r"```console\n\$ calloutlint ([^\n]+)\n(.*?)```", README, re.DOTALL)
+
+
+@pytest.mark.parametrize(("arguments", "shown"), SESSIONS, ids=[arguments for arguments, _ in SESSIONS])
+def test_a_shown_run_is_current(
+    arguments: str,
+    shown: str,
+    tmp_path: Path,
+    monkeypatch: pytest.MonkeyPatch,
+    capsys: pytest.CaptureFixture[str],
+) -> None:
+    for name, text in SHEETS.items():
+        (tmp_path / name).write_text(text, encoding="utf-8")
+    monkeypatch.chdir(tmp_path)
+    monkeypatch.setenv("COLUMNS", "100")
+    main(shlex.split(arguments))
+    printed = "\n".join(line.rstrip() for line in capsys.readouterr().out.splitlines())
+    assert printed.strip("\n") == shown.strip("\n")
+
+
+def test_the_readme_shows_a_sheet_and_a_run() -> None:
+    assert SHEETS
+    assert SESSIONS
+
+
+def test_every_command_is_in_the_table(capsys: pytest.CaptureFixture[str]) -> None:
+    with pytest.raises(SystemExit):
+        main(["--help"])
+    offered = re.search(r"\{([\w,]+)\}", capsys.readouterr().out)
+    assert offered
+    for command in offered[1].split(","):
+        assert f"| `calloutlint {command}" in README
