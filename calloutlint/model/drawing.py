@@ -63,13 +63,18 @@ class Process:
 
 @dataclass(frozen=True, slots=True)
 class SheetLine:
-    """A line of a sheet outside the callouts. `key` is None for a line that is no `key: value` pair."""
+    """A line of a sheet outside the callouts. `key` is None for a line that is no `key: value` pair.
+
+    `known` is False for a line that belongs nowhere, a key that is not known, and a value that cannot be
+    read; `reason` then says which, in words.
+    """
 
     number: int
     text: str
     key: str | None = None
     value: str = ""
     known: bool = True
+    reason: str | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -104,10 +109,15 @@ class Drawing:
 
 @dataclass(frozen=True, slots=True)
 class Package:
-    """Drawings reviewed together, with the joints that tie them."""
+    """Drawings reviewed together, with the joints that tie them.
+
+    `gate` is the grade at which a run fails; `house` are folders of house rule sheets, `waivers` files of
+    recorded waivers, both as paths that can be opened.
+    """
 
     name: str
     drawings: tuple[Drawing, ...]
     joints: tuple[Joint, ...] = ()
     gate: str | None = None
     house: tuple[str, ...] = ()
+    waivers: tuple[str, ...] = ()

@@ -1,0 +1,1 @@
+"""Readers: each turns files into drawings."""

@@ -1,0 +1,93 @@
+"""The definition of a package: what its package.toml states."""
+
+import tomllib
+from collections.abc import Callable, Iterable
+from dataclasses import dataclass
+from pathlib import Path
+from typing import Any
+
+from calloutlint.errors import SheetError
+from calloutlint.model.fastener import HoleRef, Joint
+from calloutlint.reading.encoding import read_text_file
+from calloutlint.reading.joints import JointTextError, parse_joint
+
+DEFINITION = "package.toml"
+GATES = ("critical", "major", "minor", "observation")
+
+
+@dataclass(frozen=True, slots=True)
+class Definition:
+    """What a package.toml states; paths are not yet resolved."""
+
+    file: Path
+    name: str | None = None
+    drawings: tuple[str, ...] = ()
+    joints: tuple[Joint, ...] = ()
+    house: tuple[str, ...] = ()
+    waivers: tuple[str, ...] = ()
+    gate: str | None = None
+
+
+def read_definition(folder: Path) -> Definition:
+    """What the package.toml of a folder states, an empty definition where there is none.
+
+    Raises `SheetError` naming the file and the key for unknown keys, wrong types and joints that do not read.
+    """
+    file = folder / DEFINITION
+    if not file.exists():
+        return Definition(file)
+    try:
+        table = tomllib.loads(read_text_file(file).text.replace("\r\n", "\n"))
+    except tomllib.TOMLDecodeError as error:
+        raise SheetError(f"{file}: this is no TOML: {error}") from None
+    unknown = [key for key in table if key not in _CHECKS]
+    if unknown:
+        raise SheetError(f"{file}: {unknown[0]!r} is no key of a package; known are {', '.join(_CHECKS)}")
+    return Definition(file, **{key: _CHECKS[key](file, key, value) for key, value in table.items()})
+
+
+def _text(file: Path, key: str, value: Any) -> str:
+    if not isinstance(value, str) or not value.strip():
+        raise SheetError(f"{file}: {key}: {value!r} stands here; a text was expected")
+    return value
+
+
+def _texts(file: Path, key: str, value: Any) -> tuple[str, ...]:
+    if not isinstance(value, list):
+        raise SheetError(f"{file}: {key}: {value!r} stands here; a list of texts was expected")
+    return tuple(_text(file, f"{key}[{number}]", item) for number, item in enumerate(value))
+
+
+def _gate(file: Path, key: str, value: Any) -> str:
+    if value not in GATES:
+        raise SheetError(f"{file}: {key}: {value!r} is no grade; expected {', '.join(GATES)}")
+    return str(value)
+
+
+def _joints(file: Path, key: str, value: Any) -> tuple[Joint, ...]:
+    joints = []
+    for number, text in enumerate(_texts(file, key, value)):
+        try:
+            joint = parse_joint(text)
+        except JointTextError as error:
+            raise SheetError(f"{file}: {key}[{number}]: {error}") from None
+        _refuse_bare_balloons(f"{file}: {key}[{number}]", joint.holes + joint.mates)
+        joints.append(joint)
+    return tuple(joints)
+
+
+def _refuse_bare_balloons(place: str, holes: Iterable[HoleRef]) -> None:
+    for hole in holes:
+        if hole.drawing is None:
+            expected = f"DRAWING:{hole.balloon}"
+            raise SheetError(f"{place}: balloon {hole.balloon} names no drawing; expected {expected}")
+
+
+_CHECKS: dict[str, Callable[[Path, str, Any], Any]] = {
+    "name": _text,
+    "drawings": _texts,
+    "joints": _joints,
+    "house": _texts,
+    "waivers": _texts,
+    "gate": _gate,
+}

@@ -1,0 +1,120 @@
+"""How a sheet's lines fall into title-block lines, callouts and lines that belong to neither."""
+
+import re
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass, field
+
+from calloutlint.callouts.spelling import opens_feature
+from calloutlint.model.drawing import SheetLine
+from calloutlint.model.source import SourceLine
+from calloutlint.reading.keys import is_known, normal_key
+
+_TAG = re.compile(
+    r"\s*(?P<balloon>\d{1,5}(?:\.\d{1,2})?[A-Za-z]?)"
+    r"(?:[ \t]+(?P<zone>[A-Za-z]{1,2}-?\d{1,2}|\d{1,2}-?[A-Za-z]{1,2}))?\)[ \t]*"
+)
+_KEY = re.compile(r"(?P<indent>\s*)(?P<key>[A-Za-z][A-Za-z0-9 ./_&'-]{0,39}?)[ \t]*:(?:[ \t]+|$)(?P<value>.*)")
+_INDENTED_COMMENT = re.compile(r"\s*#(?:\s+(?!\d)|$)")
+_STRAY = "the line belongs to no callout; a balloon such as 12) opens one"
+
+
+@dataclass(slots=True)
+class Block:
+    """The lines of one callout, before they are parsed. `balloon` is its number on a sheet without tags."""
+
+    balloon: str
+    zone: str | None = None
+    lines: list[SourceLine] = field(default_factory=list)
+
+
+@dataclass(slots=True)
+class Layout:
+    """A sheet taken apart: callouts in order, title-block lines, and lines that belong to no callout."""
+
+    blocks: list[Block] = field(default_factory=list)
+    pairs: list[SheetLine] = field(default_factory=list)
+    strays: list[SheetLine] = field(default_factory=list)
+
+
+def lay_out(lines: Sequence[str]) -> Layout:
+    """Takes a sheet's lines apart; on a sheet without any balloon tag the callouts are numbered 1, 2, 3 …"""
+    tagged = any(_TAG.match(line) for line in lines)
+    return _tagged(lines) if tagged else _untagged(lines)
+
+
+def _tagged(lines: Sequence[str]) -> Layout:
+    layout = Layout()
+    block: Block | None = None
+    for number, line in enumerate(lines, 1):
+        if not line.strip():
+            block = None
+        elif _is_comment(line):
+            continue
+        elif tag := _TAG.match(line):
+            block = Block(tag["balloon"], tag["zone"])
+            layout.blocks.append(block)
+            block.lines.append(_source(number, line, tag.end()))
+        elif pair := _pair(number, line, inside=block is not None):
+            block = None
+            layout.pairs.append(pair)
+        elif block is None:
+            layout.strays.append(SheetLine(number, line.strip(), known=False, reason=_STRAY))
+        else:
+            block.lines.append(_source(number, line))
+    for block in layout.blocks:
+        block.lines = [line for line in block.lines if line.text] or block.lines[:1]
+    return layout
+
+
+def _untagged(lines: Sequence[str]) -> Layout:
+    layout = Layout()
+    runs: list[list[SourceLine]] = []
+    open_run = after_text = by_blank = False
+    for number, line in enumerate(lines, 1):
+        if not line.strip():
+            open_run, after_text = False, open_run or after_text
+        elif _is_comment(line):
+            continue
+        elif not opens_feature(line) and (pair := _pair(number, line, inside=bool(runs))):
+            layout.pairs.append(pair)
+            open_run = after_text = False
+        else:
+            if not open_run:
+                by_blank = by_blank or after_text
+                runs.append([])
+            runs[-1].append(_source(number, line))
+            open_run, after_text = True, False
+    groups = runs if by_blank else [group for run in runs for group in _by_features(run)]
+    layout.blocks = [Block(str(number), lines=group) for number, group in enumerate(groups, 1)]
+    return layout
+
+
+def _by_features(run: Sequence[SourceLine]) -> Iterator[list[SourceLine]]:
+    group: list[SourceLine] = []
+    for line in run:
+        if group and opens_feature(line.text):
+            yield group
+            group = []
+        group.append(line)
+    yield group
+
+
+def _is_comment(line: str) -> bool:
+    return line.startswith(("# ", "#\t")) or _INDENTED_COMMENT.match(line) is not None
+
+
+def _source(number: int, line: str, start: int = 0) -> SourceLine:
+    text = line[start:].lstrip()
+    return SourceLine(number, len(line) - len(text), text.rstrip())
+
+
+def _pair(number: int, line: str, inside: bool) -> SheetLine | None:
+    """A `key: value` line. Inside a callout an unknown key counts only flush left, else it is callout text."""
+    found = _KEY.match(line)
+    if found is None:
+        return None
+    key = normal_key(found["key"])
+    known = is_known(key)
+    if inside and not known and found["indent"]:
+        return None
+    return SheetLine(number, line.strip(), key, found["value"].strip(), known)

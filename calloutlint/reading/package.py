@@ -1,0 +1,83 @@
+"""A drawing package: sheets reviewed together, from a folder, from files, or from the shipped demo."""
+
+from collections.abc import Callable, Iterable, Sequence
+from pathlib import Path
+
+from calloutlint import _resources
+from calloutlint.errors import SheetError
+from calloutlint.model.drawing import Drawing, Package
+from calloutlint.reading.definition import DEFINITION, GATES, Definition, read_definition
+from calloutlint.reading.sheet import read_sheet
+
+READERS: dict[str, Callable[[Path], Drawing]] = {".txt": read_sheet}
+"""Suffixes that are taken from a folder, and what reads them; a file named outright is read as a sheet."""
+
+
+def read_package(paths: Sequence[Path]) -> Package:
+    """The package that files and folders make together, drawings in the order given and no file twice.
+
+    Raises `SheetError` with one line for each file that cannot be read, or for a broken package.toml.
+    """
+    folders = {path: read_definition(path) for path in map(_folder_of, paths) if path.is_dir()}
+    files: dict[Path, Path] = {}
+    for path in map(_folder_of, paths):
+        for file in _sheets(path, folders[path]) if path in folders else [path]:
+            files.setdefault(file.resolve() if file.exists() else file, file)
+    definitions = list(folders.values())
+    return Package(
+        name=", ".join(_name(path, folders.get(path)) for path in map(_folder_of, paths)),
+        drawings=_read_all(files.values()),
+        joints=tuple(joint for definition in definitions for joint in definition.joints),
+        gate=max((d.gate for d in definitions if d.gate), key=GATES.index, default=None),
+        house=tuple(str(d.file.parent / folder) for d in definitions for folder in d.house),
+        waivers=tuple(str(d.file.parent / file) for d in definitions for file in d.waivers),
+    )
+
+
+def demo_package() -> Package:
+    """The package that ships with the program: an invented waterworks assembly."""
+    return read_package([Path(str(_resources.folder("demo")))])
+
+
+def _folder_of(path: Path) -> Path:
+    return path.parent if path.name == DEFINITION else path
+
+
+def _name(path: Path, definition: Definition | None) -> str:
+    return (definition and definition.name) or path.resolve().name or str(path)
+
+
+def _read_all(files: Iterable[Path]) -> tuple[Drawing, ...]:
+    drawings, problems = [], []
+    for file in files:
+        try:
+            drawings.append(READERS.get(file.suffix.lower(), read_sheet)(file))
+        except SheetError as error:
+            problems.append(str(error))
+    if problems:
+        raise SheetError("\n".join(problems))
+    return tuple(drawings)
+
+
+def _sheets(folder: Path, definition: Definition) -> list[Path]:
+    """The sheet files of a folder: those that its globs name, else those with a known suffix, by name."""
+    found: dict[Path, None] = {}
+    try:
+        for number, pattern in enumerate(definition.drawings):
+            matches = [path for path in sorted(folder.glob(pattern)) if not path.is_dir()]
+            if not matches:
+                raise SheetError(f"{definition.file}: drawings[{number}]: no file matches {pattern!r}")
+            found.update(dict.fromkeys(matches))
+        if not definition.drawings:
+            found = dict.fromkeys(path for path in sorted(folder.iterdir()) if _is_sheet(path))
+    except (NotImplementedError, ValueError) as error:
+        raise SheetError(f"{definition.file}: drawings: a pattern cannot be used: {error}") from None
+    except OSError as error:
+        raise SheetError(f"{folder}: the folder cannot be read: {error.strerror or error}") from None
+    if not found:
+        raise SheetError(f"{folder}: no callout sheets in this folder; files named *.txt were expected")
+    return list(found)
+
+
+def _is_sheet(path: Path) -> bool:
+    return path.suffix.lower() in READERS and not path.name.startswith(".") and not path.is_dir()

@@ -1,0 +1,148 @@
+"""The `tolerances` and `process` lines of a title block."""
+
+import re
+from collections.abc import Iterable
+from dataclasses import dataclass, field
+from decimal import Decimal
+
+from calloutlint.callouts.value import parse_value
+from calloutlint.model.drawing import GeneralTolerances, PlacesTolerance, Process
+from calloutlint.model.values import Value
+from calloutlint.units import Unit
+
+MOST_PLACES = 6
+
+_SPELLINGS = (
+    (re.compile(r"%%p|\+\s*/\s*-|\+-", re.IGNORECASE), "±"),
+    (re.compile(r"%%d|(?<=\d)\s*(?:degrees?|degs?)\b\.?|º|˚", re.IGNORECASE), "°"),
+    (re.compile(r"[′’]"), "'"),
+    (re.compile(r"[″”]"), '"'),
+    (re.compile(r"[‐‑–−]"), "-"),
+)
+_COUNTS = {"one": 1, "two": 2, "three": 3, "four": 4}
+_NUMBER = r"(?:\d+\s+\d+/\d+|\d+/\d+|\d*\.\d+|\d+\.?)"
+_UNIT = r"(?:\s*(?P<unit>mm|in(?:ch(?:es)?)?\b\.?|\"))?"
+_AMOUNT = rf"[\s=:]*±\s*(?P<amount>{_NUMBER}){_UNIT}"
+_ANGLE = r"[\s=:]*±\s*(?:(?P<degrees>\d*\.?\d+)\s*(?:°|(?!['\d])))?\s*(?:(?P<minutes>\d+)\s*')?"
+
+_ISO_2768 = re.compile(
+    r"""
+    (?:(?:DIN|EN|BS|NF)[\s-]+)* ISO\s*2768
+    (?:\s*-\s*[12](?!\d))? (?:\s*:\s*\d{4})? \s*-?\s*
+    (?P<linear>fine|medium|coarse|very\ coarse|[fmcv])? \s*
+    (?P<geometrical>[HKL])?
+    (?:\s*-\s*E)? \b                                  # E: the envelope requirement of ISO 2768-2
+    """,
+    re.IGNORECASE | re.VERBOSE,
+)
+_ANGLES = re.compile(rf"(?:angles?|angular|ang\b\.?|∠){_ANGLE}", re.IGNORECASE)
+_PLACES = re.compile(
+    rf"(?<![\w.])(?:[X0]{{0,4}}\.(?P<places>X{{1,6}}|0{{1,6}})|X{{1,4}}|0)(?![\w.]){_AMOUNT}", re.IGNORECASE
+)
+_PLACE_WORD = r"(?:pl(?:aces?|cs?)?|decimals?|dec|dims?)\b\.?"
+_IN_WORDS = re.compile(
+    rf"(?P<count>\d|one|two|three|four)[\s-]*{_PLACE_WORD}(?:\s*{_PLACE_WORD})*{_AMOUNT}", re.IGNORECASE
+)
+_FRACTIONS = re.compile(rf"fraction(?:s|al)?\b{_AMOUNT}", re.IGNORECASE)
+_ANY = re.compile(_AMOUNT, re.IGNORECASE)
+_FILLER = re.compile(
+    r"""
+    \bunless\ otherwise\ (?:specified|stated|noted|indicated|shown)\b | \buos\b
+    | \b(?:general|tolerances?|tols?|linear|decimals?|dimensions?|dims?|sizes?)\b\.?
+    | \b(?:and|are|in\ inch(?:es)?|in\ mm|on|per|to)\b
+    | \bISO\s*8015(?!\d)                                # a principle, no tolerance
+    """,
+    re.IGNORECASE | re.VERBOSE,
+)
+_PROCESS = re.compile(rf"(?P<what>location|position|size)[\s=:]*(?P<amount>{_NUMBER}){_UNIT}", re.IGNORECASE)
+
+
+def read_general_tolerances(written: str, unit: Unit | None) -> GeneralTolerances:
+    """General tolerances by decimal places or ISO 2768 class, with the angular one.
+
+    An amount without a unit of its own is in `unit`. A bare `±0.2` holds for every number of places, one for
+    fractions for sizes without decimals. What is not understood is in `unread`.
+    """
+    text = _spelled(written)
+    found = _Found(unit)
+    rest = _decimal_points(text)
+    for pattern, take in (
+        (_ISO_2768, found.iso_2768_class),
+        (_ANGLES, found.angle_tolerance),
+        (_FRACTIONS, found.for_fractions),
+        (_IN_WORDS, found.for_counted_places),
+        (_PLACES, found.for_written_places),
+        (_ANY, found.for_all_places),
+        (_FILLER, lambda match: ";"),
+    ):
+        rest = pattern.sub(take, rest)
+    unread = tuple(piece for part in re.split(r"[,;|]", rest) if (piece := part.strip(" :/-()")))
+    return GeneralTolerances(text, tuple(found.places), found.angle, found.linear, found.geometrical, unread)
+
+
+def read_process(written: str, unit: Unit | None) -> Process | None:
+    """The stated spread `location 0.05, size 0.02`; None where neither can be read."""
+    matches = _PROCESS.finditer(_decimal_points(written))
+    found = {match["what"].lower(): _length(match, unit) for match in matches}
+    location, size = found.get("location") or found.get("position"), found.get("size")
+    return Process(written, location, size) if location or size else None
+
+
+@dataclass(slots=True)
+class _Found:
+    """What has been understood so far; each method takes one match and gives back what is left of it."""
+
+    unit: Unit | None
+    places: list[PlacesTolerance] = field(default_factory=list)
+    angle: Value | None = None
+    linear: str | None = None
+    geometrical: str | None = None
+
+    def iso_2768_class(self, match: re.Match[str]) -> str:
+        linear = match["linear"] and match["linear"][0].lower()
+        geometrical = match["geometrical"] and match["geometrical"].upper()
+        if not (linear or geometrical) or (linear and self.linear) or (geometrical and self.geometrical):
+            return match[0]
+        self.linear, self.geometrical = linear or self.linear, geometrical or self.geometrical
+        return ";"
+
+    def angle_tolerance(self, match: re.Match[str]) -> str:
+        degrees, minutes = match["degrees"], match["minutes"]
+        if self.angle or not (degrees or minutes):
+            return match[0]
+        text = (f"{degrees}°" if degrees else "") + (f"{minutes}'" if minutes else "")
+        self.angle = Value(text, Decimal(degrees or 0) + Decimal(minutes or 0) / 60, Unit.DEGREE)
+        return ";"
+
+    def for_fractions(self, match: re.Match[str]) -> str:
+        return self._add((0,), match)
+
+    def for_counted_places(self, match: re.Match[str]) -> str:
+        count = match["count"].lower()
+        return self._add((_COUNTS.get(count) or int(count),), match)
+
+    def for_written_places(self, match: re.Match[str]) -> str:
+        return self._add((len(match["places"] or ""),), match)
+
+    def for_all_places(self, match: re.Match[str]) -> str:
+        return self._add(range(MOST_PLACES + 1), match)
+
+    def _add(self, places: Iterable[int], match: re.Match[str]) -> str:
+        amount = _length(match, self.unit)
+        self.places += [PlacesTolerance(number, amount) for number in places]
+        return ";"
+
+
+def _length(match: re.Match[str], unit: Unit | None) -> Value:
+    own = match["unit"]
+    return parse_value(match["amount"], (Unit.MM if own.lower() == "mm" else Unit.INCH) if own else unit)
+
+
+def _spelled(written: str) -> str:
+    for spelling, canonical in _SPELLINGS:
+        written = spelling.sub(canonical, written)
+    return " ".join(written.split())
+
+
+def _decimal_points(text: str) -> str:
+    return re.sub(r"(?<=\d),(?=\d)|(?<=[Xx]),(?=[Xx])", ".", text)
