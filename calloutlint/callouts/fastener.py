@@ -1,0 +1,187 @@
+"""Reading fastener designations: `1/4-20 UNC-2A x .75 SHCS`, `ISO 4762 - M6 x 20`, `⌀6 m6 dowel pin`."""
+
+import re
+from dataclasses import dataclass
+from decimal import Decimal
+
+from calloutlint.callouts import fastener_words as words
+from calloutlint.callouts.pin import find_pin
+from calloutlint.callouts.value import parse_value
+from calloutlint.model.fastener import Fastener
+from calloutlint.model.thread import Thread, ThreadSystem
+from calloutlint.model.values import Value
+from calloutlint.trade.inches import number_diameter
+from calloutlint.trade.metric import is_plausible_pitch
+from calloutlint.units import Unit
+
+_SPELLINGS = (
+    (r"[×✕*]", "x"),
+    (r"[″”“]|''", '"'),
+    (r"[–—−]", "-"),
+    (r"[Øø⌀∅]|%%[cC]|\bDIAM?(?:ETER)?\b\.?", "⌀"),
+    (r"(?<=\d),(?=\d)", "."),
+    (r"^\s*(?:\(\d+\)|\d+\s*[xX](?=\s|#|M)|QTY\.?\s*\d+)\s*", ""),
+)
+_FRACTIONS = {"¼": "1/4", "½": "1/2", "¾": "3/4", "⅛": "1/8", "⅜": "3/8", "⅝": "5/8", "⅞": "7/8"}
+_FRACTION = r"\d{1,2}/(?:2|4|8|16|32|64)(?!\d)"
+_LENGTH = rf"(?P<length>\d+[ -]{_FRACTION}|{_FRACTION}|\d*\.\d+|\d+)"
+_METRIC = re.compile(r"(?<![A-Za-z0-9.])(?P<series>MJ?)\s?(?P<size>\d+(?:\.\d+)?)(?![\d/])", re.IGNORECASE)
+_METRIC_NUMBER = re.compile(r"\s*x\s*P?\s*(?P<number>\d+(?:\.\d+)?)(?:\s*mm\b)?", re.IGNORECASE)
+_METRIC_CLASS = re.compile(r"\s*-?\s*(?P<class>(?:\d[a-hE-H]){1,2})(?![A-Za-z0-9.])")
+_INCH = re.compile(
+    r"(?<![A-Za-z0-9./])(?:(?:#|NO\.?\s*|NUMBER\s+)(?P<number>\d{1,2})"
+    rf"|(?P<size>\d[ -]{_FRACTION}|{_FRACTION}|\d?\.\d{{1,4}}|\d{{1,2}}))(?![\d/.])"
+    r"(?P<mark>\s*(?:\"|IN(?:CH)?\b\.?))?"
+    r"(?:\s*-\s*(?P<tpi>\d{1,2}(?:\.5)?)(?![\d./]))?",
+    re.IGNORECASE,
+)
+_SERIES = re.compile(
+    r"[\s-]*(?P<series>(?:\d{1,2}\s*-?\s*)?UNJ?R?(?:C|F|EF|S)?|N(?:C|F|EF|S))(?![A-Z])(?P<class>[\s-]*[1-5][AB]?G?\b)?"
+    r"|[\s-]+(?P<bare>[123][AB])\b",
+    re.IGNORECASE,
+)
+_INCH_LENGTH = re.compile(rf"\s*x\s*{_LENGTH}", re.IGNORECASE)
+_SAID_LENGTH = (
+    re.compile(rf"(?<![\d./-]){_LENGTH}\s*(?:\"|MM|IN\.?)?\s*(?:LG|LONG|LENGTH)\b", re.IGNORECASE),
+    re.compile(rf"(?<=[\sA-Z])x\s*{_LENGTH}", re.IGNORECASE),
+)
+_LEFT_HAND = re.compile(r"\bLH\b|\bLEFT[ -]HAND", re.IGNORECASE)
+
+
+@dataclass(frozen=True, slots=True)
+class _Found:
+    thread: Thread | None = None
+    length: Value | None = None
+
+
+def parse_fastener(text: str) -> Fastener:
+    """The fastener that a designation names; never raises.
+
+    A designation that is not understood has neither `thread` nor `pin`. A thread's diameter is the basic
+    major diameter in inches or mm; a pitch that is not written stays None. A pin's size has a unit only
+    where its spelling shows one.
+    """
+    folded = " ".join(text.split())
+    standard, rest = words.standard_in(_spelled(folded))
+    if words.is_otherwise_sized(rest):
+        return Fastener(folded, head=words.head_in(rest, standard), standard=standard)
+    found, pin = _Found(), None
+    if not words.names_pin(rest, standard):
+        found = _find_thread(rest)
+    if found.thread is None and ("⌀" in rest or words.names_pin(rest, standard)):
+        pin, length = find_pin(rest, standard)
+        found = _Found(None, length)
+    return Fastener(
+        text=folded,
+        thread=found.thread,
+        pin=pin,
+        head=words.head_in(rest, standard),
+        standard=standard,
+        length=found.length,
+        knurled="KNURL" in folded.upper(),
+        washer=words.has_washer(folded),
+    )
+
+
+def _spelled(text: str) -> str:
+    for symbol, fraction in _FRACTIONS.items():
+        text = re.sub(rf"\s*{symbol}", f" {fraction}", text)
+    for pattern, symbol in _SPELLINGS:
+        text = re.sub(pattern, symbol, text, flags=re.IGNORECASE)
+    return text
+
+
+def _find_thread(text: str) -> _Found:
+    metric = _METRIC.search(text)
+    if metric:
+        return _metric(metric, text)
+    found = (_inch(match, text) for match in _INCH.finditer(text))
+    return next((one for one in found if one.thread), _Found())
+
+
+def _metric(match: re.Match[str], text: str) -> _Found:
+    size = parse_value(match["size"], Unit.MM)
+    pitch, class_, length = None, None, None
+    place = match.end()
+    while number := (_METRIC_CLASS.match(text, place) or _METRIC_NUMBER.match(text, place)):
+        place = number.end()
+        if "class" in number.re.groupindex:
+            class_ = number["class"]
+            continue
+        value = parse_value(number["number"], Unit.MM)
+        if pitch is None and length is None and is_plausible_pitch(size.amount, value.amount):
+            pitch = value
+        else:
+            length = value
+    thread = Thread(
+        ThreadSystem.METRIC,
+        size=f"M{size.text}",
+        diameter=size,
+        series=match["series"].upper(),
+        pitch=pitch,
+        class_=class_,
+        left_hand=bool(_LEFT_HAND.search(text)),
+    )
+    return _Found(thread, length or _said_length(text, Unit.MM))
+
+
+def _inch(match: re.Match[str], text: str) -> _Found:
+    series = _SERIES.match(text, match.end())
+    end = series.end() if series else match.end()
+    length = _INCH_LENGTH.match(text, end)
+    size = _inch_size(match, named=bool(series) or words.names_screw(text) or _stands_alone(match, text))
+    if size is None:
+        return _Found()
+    name, diameter = size
+    thread = Thread(
+        ThreadSystem.UNIFIED,
+        size=name,
+        diameter=diameter,
+        series=re.sub(r"[\s-]", "", series["series"]).upper() if series and series["series"] else "",
+        tpi=parse_value(match["tpi"], None) if match["tpi"] else None,
+        class_=_unified_class(series) if series else None,
+        left_hand=bool(_LEFT_HAND.search(text)),
+    )
+    return _Found(thread, parse_value(length["length"], Unit.INCH) if length else _said_length(text, Unit.INCH))
+
+
+def _unified_class(series: re.Match[str]) -> str | None:
+    return (series["class"] or series["bare"] or "").strip(" -").upper() or None
+
+
+def _inch_size(match: re.Match[str], named: bool) -> tuple[str, Value] | None:
+    """Name and basic major diameter, where a pitch or a word says that this number is a thread size.
+
+    A whole number without a pitch needs an inch mark besides. With a symbol of a diameter before it, a size
+    without a pitch is a plain bolt.
+    """
+    written = (match["size"] or "").replace("-", " ")
+    if not (match["tpi"] or (named and not match.string[: match.start()].rstrip().endswith("⌀"))):
+        return None
+    number = match["number"] or (written if _is_number_size(written, match["tpi"]) else None)
+    if number is not None:
+        diameter = number_diameter(int(number))
+        text = f"{diameter}".removeprefix("0")
+        return (f"#{int(number)}", Value(text, diameter, Unit.INCH)) if diameter is not None else None
+    told = match["tpi"] or match["mark"] or not written.isdecimal()
+    return (written, parse_value(written, Unit.INCH)) if told else None
+
+
+def _stands_alone(match: re.Match[str], text: str) -> bool:
+    """Whether the designation is only the size, its length aside."""
+    length = _INCH_LENGTH.match(text, match.end())
+    rest = text[: match.start()] + text[length.end() if length else match.end() :]
+    return not rest.strip(" ;,-")
+
+
+def _is_number_size(written: str, tpi: str | None) -> bool:
+    """Whether a whole number before a pitch is a number size: `10-32`, `1-64` are; `1-8`, `2-12` are not."""
+    if not tpi or not written.isdecimal() or int(written) > 12:
+        return False
+    finest_inch = {0: 0, 1: 33}.get(int(written), 23)
+    return Decimal(tpi) > finest_inch
+
+
+def _said_length(text: str, unit: Unit) -> Value | None:
+    match = next((found for pattern in _SAID_LENGTH if (found := pattern.search(text))), None)
+    return parse_value(match["length"], unit) if match else None
