@@ -1,0 +1,136 @@
+"""Puts rules to everything that a package holds; knows no rule."""
+
+import re
+from collections import Counter
+from collections.abc import Iterable, Iterator, Sequence
+from dataclasses import dataclass
+from enum import StrEnum
+
+from calloutlint.facts.view import View
+from calloutlint.model.drawing import Package, Standard
+from calloutlint.model.source import Span
+from calloutlint.rulebook.finding import Finding
+from calloutlint.rulebook.rule import Rule
+
+IN_FRAMES = {"frame", "datum"}
+
+
+@dataclass(frozen=True, slots=True)
+class Agenda:
+    """The rules for one subject under one standard, by the word that the fact `fact` must hold."""
+
+    fact: str | None
+    always: tuple[Rule, ...]
+    by_word: dict[StrEnum, tuple[Rule, ...]]
+
+    def rules(self, view: View) -> tuple[Rule, ...]:
+        """The rules that can fire on a view."""
+        return self.by_word.get(getattr(view, self.fact), self.always) if self.fact else self.always
+
+
+class Engine:
+    """Rules sorted for speed: by subject, by standard, by what `when` requires of one fact."""
+
+    def __init__(self, rules: Sequence[Rule]) -> None:
+        self._by_subject: dict[str, list[Rule]] = {}
+        for rule in rules:
+            self._by_subject.setdefault(rule.view.subject, []).append(rule)
+        self._agendas: dict[tuple[str, Standard | None], Agenda] = {}
+        self._yields = {rule.id: frozenset(rule.sheet.yields_to) for rule in rules if rule.sheet.yields_to}
+
+    def findings(self, views: Iterable[View]) -> list[Finding]:
+        """What the rules find in the views, in the order of the views, without what yields to another finding."""
+        found = [(view, finding) for view in views for finding in self._about(view)]
+        return _unrepeated(self._yielded(found))
+
+    def _about(self, view: View) -> Iterator[Finding]:
+        if getattr(view.part, "doubtful", False) or getattr(view, "doubtful", False):
+            return
+        for rule in self._agenda(view).rules(view):
+            if rule.fires(view):
+                finding = rule.judge(view)
+                if finding is not None:
+                    yield finding
+
+    def _agenda(self, view: View) -> Agenda:
+        drawing = getattr(view, "drawing_model", None)
+        key = (view.subject, drawing.standard if drawing else None)
+        agenda = self._agendas.get(key)
+        if agenda is None:
+            rules = [rule for rule in self._by_subject.get(view.subject, []) if rule.applies_under(key[1])]
+            agenda = self._agendas[key] = agenda_of(rules)
+        return agenda
+
+    def _yielded(self, found: list[tuple[View, Finding]]) -> list[Finding]:
+        """The findings without those whose rule yields to another that found something in the same place."""
+        kept = []
+        for view, finding in found:
+            stronger = self._yields.get(finding.rule, frozenset())
+            if not (stronger and any(o.rule in stronger and _same_place(v, o, view, finding) for v, o in found)):
+                kept.append(finding)
+        return kept
+
+
+def agenda_of(rules: Sequence[Rule]) -> Agenda:
+    """Rules sorted by the fact on which most of them depend, each list in the order given."""
+    facts = Counter(fact for rule in rules for fact in rule.index)
+    if not facts:
+        return Agenda(None, tuple(rules), {})
+    fact = facts.most_common(1)[0][0]
+    words = {word for rule in rules for word in rule.index.get(fact, ())}
+    always = tuple(rule for rule in rules if fact not in rule.index)
+    by_word = {w: tuple(r for r in rules if fact not in r.index or w in r.index[fact]) for w in words}
+    return Agenda(fact, always, by_word)
+
+
+def _same_place(view: View, finding: Finding, other_view: View, other: Finding) -> bool:
+    """The same callout, and for two findings in frames the same line; without callouts the same drawing."""
+    if finding.drawing is not other.drawing or finding.callout is not other.callout:
+        return False
+    if view.subject in IN_FRAMES and other_view.subject in IN_FRAMES:
+        return _overlap(finding.span, other.span)
+    return True
+
+
+def _overlap(one: Span | None, other: Span | None) -> bool:
+    if one is None or other is None:
+        return True
+    return one.line == other.line and one.start < other.end and other.start < one.end
+
+
+def _unrepeated(findings: list[Finding]) -> list[Finding]:
+    """Findings without those that say the same of the same part again."""
+    seen = set()
+    kept = []
+    for finding in findings:
+        key = (finding.rule, id(finding.drawing), id(finding.callout), id(finding.part), finding.message)
+        if key not in seen:
+            seen.add(key)
+            kept.append(finding)
+    return kept
+
+
+def ordered(findings: list[Finding], package: Package) -> list[Finding]:
+    """Findings by drawing (the package as a whole first), balloon, place in the callout, then grade."""
+    places = {id(drawing): number for number, drawing in enumerate(package.drawings)}
+
+    def key(finding: Finding) -> tuple[object, ...]:
+        callout, span = finding.callout, finding.span or Span(-1, -1, -1)
+        line = callout.source[0].number if callout and callout.source else -1
+        return (
+            places.get(id(finding.drawing), -1),
+            balloon_key(callout.balloon) if callout else [],
+            line,
+            span.line,
+            span.start,
+            -finding.grade,
+            finding.rule,
+        )
+
+    return sorted(findings, key=key)  # type: ignore[arg-type]
+
+
+def balloon_key(balloon: str) -> list[tuple[int, int, str]]:
+    """Sorts balloons as people count: 2 before 10, 4 before 4.1 before 4A."""
+    pieces = re.findall(r"\d+|\D+", balloon)
+    return [(0, int(piece), "") if piece.isdecimal() else (1, 0, piece) for piece in pieces]

@@ -1,0 +1,85 @@
+"""Reads the text of a condition or a correction into a syntax tree."""
+
+from collections.abc import Iterable, Iterator
+from functools import cache
+from typing import Literal
+
+from lark import Lark, Token, Tree
+from lark.exceptions import UnexpectedCharacters, UnexpectedEOF, UnexpectedInput, UnexpectedToken
+
+from calloutlint._resources import read_text
+from calloutlint.rulebook.text_error import TextError
+
+Syntax = Tree[Token] | Token
+Start = Literal["either", "changes"]
+
+_EXPECTED = {
+    "PATH": "a name",
+    "NUMBER": "a number",
+    "MEASURE": "a length or an angle",
+    "QUOTED": "a text in quotes",
+    "ORDER": "a comparison",
+    "EQUALITY": "a comparison",
+    "SIGN": "+ or -",
+    "SCALE": "* or /",
+    "LSQB": "[",
+    "RSQB": "]",
+    "LPAR": "(",
+    "RPAR": ")",
+    "COMMA": ",",
+    "COLON": ":",
+    "$END": "the end",
+}
+_UNSAID = {"MEASURE", "QUANTIFIER", "COUNT_OF", "COUNT_EACH", "KNOWN", "UNKNOWN", "LPAR", "LSQB"}
+
+
+@cache
+def _parser() -> Lark:
+    grammar = read_text("grammar", "condition.lark")
+    return Lark(grammar, parser="lalr", start=["either", "changes"], maybe_placeholders=False)
+
+
+def parse(text: str, start: Start = "either") -> Tree[Token]:
+    """The syntax tree of a condition or value (`either`), or of the corrections of a redline (`changes`).
+
+    Raises:
+        TextError: the text is not in the language; the message says what was expected.
+    """
+    try:
+        return _parser().parse(text, start=start)
+    except UnexpectedEOF as error:
+        raise TextError(f"the text ends too early: expected {_listed(error.expected)}", len(text), len(text)) from None
+    except UnexpectedInput as error:
+        raise _unexpected(error, text) from None
+
+
+def _unexpected(error: UnexpectedInput, text: str) -> TextError:
+    if isinstance(error, UnexpectedToken):
+        if error.token.type == "$END":
+            return TextError(f"the text ends too early: expected {_listed(error.expected)}", len(text), len(text))
+        start = error.token.start_pos or 0
+        message = f"'{error.token}' cannot stand here: expected {_listed(error.expected)}"
+        return TextError(message, start, start + len(error.token))
+    start = error.pos_in_stream or 0
+    expected = error.allowed if isinstance(error, UnexpectedCharacters) else ()
+    return TextError(f"'{text[start]}' cannot stand here: expected {_listed(expected or ())}", start, start + 1)
+
+
+def _listed(terminals: Iterable[str]) -> str:
+    names = sorted({_EXPECTED.get(name, name.lower()) for name in terminals if name not in _UNSAID})
+    return " or ".join(names) or "a condition"
+
+
+def tokens(syntax: Syntax) -> Iterator[Token]:
+    """Every token of a tree, in reading order."""
+    if isinstance(syntax, Token):
+        yield syntax
+        return
+    for child in syntax.children:
+        yield from tokens(child)
+
+
+def place(syntax: Syntax) -> tuple[int, int]:
+    """Where a tree stands in its text: offset of its first character and of the one after its last."""
+    found = list(tokens(syntax))
+    return (found[0].start_pos or 0, found[-1].end_pos or 0) if found else (0, 0)
