@@ -1,0 +1,1 @@
+"""The commands, one a module: each adds its arguments to the parser and says what to run."""

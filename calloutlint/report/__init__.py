@@ -1,0 +1,1 @@
+"""What a reader gets: the terminal, and the record for programs."""

@@ -1,0 +1,147 @@
+"""A callout laid out for drawing: lines of text, frames with their compartments, datum feature symbols."""
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+from itertools import accumulate
+
+from calloutlint.callouts.write import Style, write_part
+from calloutlint.model.callout import Callout, DatumFeature, Part, Unread
+from calloutlint.model.frame import Frame, Scope, ScopeKind, Segment
+from calloutlint.model.source import Span
+from calloutlint.report.printable import printable
+
+
+@dataclass(frozen=True, slots=True)
+class Piece:
+    """Text to draw, with the part it stands for and its place in the source.
+
+    `ends` is given for text drawn as the source has it: where each of its characters ends in `text`.
+    """
+
+    text: str
+    part: object = None
+    span: Span | None = None
+    ends: tuple[int, ...] = ()
+
+    def columns(self, span: Span | None) -> tuple[int, int] | None:
+        """The columns of `text` that a span of the source takes; None where that is not known."""
+        if not self.ends or self.span is None or span is None:
+            return None
+        first, last = (max(0, min(edge - self.span.start, len(self.ends))) for edge in (span.start, span.end))
+        return (self.ends[first - 1] if first else 0), (self.ends[last - 1] if last else 0)
+
+
+@dataclass(frozen=True, slots=True)
+class TextRow:
+    """Sizes, threads, steps and words that stand on one line."""
+
+    pieces: tuple[Piece, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class FrameRow:
+    """One line of a feature control frame; the first cell is the symbol, empty on a composite's lower lines."""
+
+    pieces: tuple[Piece, ...]
+    segment: Segment | None = None
+    lower: bool = False
+    beside: str = ""
+
+
+@dataclass(frozen=True, slots=True)
+class DatumRow:
+    """Datum feature symbols side by side."""
+
+    pieces: tuple[Piece, ...]
+
+
+Row = TextRow | FrameRow | DatumRow
+
+
+def lay_out(callout: Callout, style: Style) -> list[Row]:
+    """The rows of a callout in reading order, lines that hold unread text as they stand in the source."""
+    torn = {part.span.line for part in callout.unread if part.span.line < len(callout.source)}
+    rows: list[Row] = []
+    for part in callout.parts:
+        for line, row in _rows_of(part, style):
+            if line not in torn:
+                _add(rows, row, line)
+            elif not any(_stands_on(row, line) for row in rows):
+                rows.append(_verbatim(callout, line, style))
+    return rows
+
+
+def _rows_of(part: Part, style: Style) -> Iterator[tuple[int, Row]]:
+    if isinstance(part, Frame):
+        yield from _frame_rows(part, style)
+    elif isinstance(part, DatumFeature):
+        yield part.span.line, DatumRow((Piece(printable(part.letter, style), part, part.span),))
+    else:
+        yield part.span.line, TextRow((Piece(_text(part, style), part, part.span),))
+
+
+def _frame_rows(frame: Frame, style: Style) -> Iterator[tuple[int, Row]]:
+    if frame.count:
+        piece = Piece(frame.count.written, frame.count, frame.count.span)
+        yield frame.count.span.line, TextRow((piece,))
+    for number, segment in enumerate(frame.segments):
+        beside = _scope_words(frame.scope, style) if frame.scope and not number else ""
+        yield segment.span.line, FrameRow(_cells(segment, style), segment, number > 0, beside)
+
+
+def _cells(segment: Segment, style: Style) -> tuple[Piece, ...]:
+    texts = [text.strip() for text in _text(segment, style).split("|")]
+    parts = [None, *([segment.zone] if segment.zone else []), *segment.datums]
+    spans = [part.span if part else None for part in parts]
+    return tuple(Piece(text, part, span) for text, part, span in zip(texts, parts, spans, strict=True))
+
+
+def _text(part: Part | Segment, style: Style) -> str:
+    written = write_part(part, style)
+    return printable(written if isinstance(written, str) else " ".join(written), style)
+
+
+def _scope_words(scope: Scope, style: Style) -> str:
+    arrows = {ScopeKind.BETWEEN: ("↔", "<->"), ScopeKind.FROM_TO: ("→", "->")}
+    if scope.kind not in arrows:
+        return scope.kind.value.upper()
+    arrow = arrows[scope.kind][style is Style.ASCII]
+    return printable(f"{scope.start} {arrow} {scope.end}", style)
+
+
+def _add(rows: list[Row], row: Row, line: int) -> None:
+    """Append a row, or join it to the last one where both are text of one line, or both datum symbols."""
+    last = rows[-1] if rows else None
+    if isinstance(row, TextRow) and isinstance(last, TextRow) and _stands_on(last, line):
+        rows[-1] = TextRow(last.pieces + row.pieces)
+    elif isinstance(row, DatumRow) and isinstance(last, DatumRow):
+        rows[-1] = DatumRow(last.pieces + row.pieces)
+    else:
+        rows.append(row)
+
+
+def _stands_on(row: Row, line: int) -> bool:
+    return any(piece.span is not None and piece.span.line == line for piece in row.pieces)
+
+
+def _verbatim(callout: Callout, line: int, style: Style) -> Row:
+    """A source line as written; one that holds unread text between bars is still drawn in compartments."""
+    text = callout.source[line].text
+    unread = [part for part in callout.unread if part.span.line == line]
+    if "|" not in text or not any(part.in_frame for part in unread):
+        return TextRow((_quoted(text, line, 0, unread, style),))
+    pieces, start = [], 0
+    for cell in text.split("|"):
+        pieces.append(_quoted(cell, line, start, unread, style))
+        start += len(cell) + 1
+    lower = not pieces[0].text
+    return FrameRow(tuple(piece for piece in pieces if piece.text or lower), lower=lower)
+
+
+def _quoted(text: str, line: int, start: int, unread: list[Unread], style: Style) -> Piece:
+    begin = start + len(text) - len(text.lstrip())
+    span = Span(line, begin, start + len(text.rstrip()))
+    inside = next((part for part in unread if span.start <= part.span.start < span.end), None)
+    shown = [printable(character, style) for character in text.strip()]
+    ends = tuple(accumulate(map(len, shown)))
+    return Piece("".join(shown), inside, span, ends)

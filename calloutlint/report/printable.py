@@ -1,0 +1,44 @@
+"""Text made safe for a terminal: no control characters, and in plain output nothing beyond ASCII."""
+
+import unicodedata
+
+from calloutlint.callouts.write import Style
+
+# The ASCII forms of canonical text, and of the signs that messages and titles use besides.
+_ASCII = {
+    "⏤": "STR", "⏥": "FLAT", "○": "CIR", "⌭": "CYL", "⌒": "LPROF", "⌓": "SPROF", "∠": "ANG", "⟂": "PERP",
+    "∥": "PAR", "⌖": "POS", "◎": "CONC", "⌯": "SYM", "↗": "CRUN", "⌰": "TRUN",
+    "⌀": "DIA ", "□": "SQ ", "↧": "DEPTH", "⌴": "CBORE", "⌵": "CSK", "▷": "TRANSLATION", "△": "DYNAMIC",
+    "±": "+/-", "°": " DEG", "×": "x", "−": "-", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-",
+    "→": "->", "↔": "<->", "←": "<-", "≤": "<=", "≥": ">=", "≠": "!=", "√": "sqrt", "²": "^2", "³": "^3",
+    "‘": "'", "’": "'", "“": '"', "”": '"', "„": '"', "⟨": "<", "⟩": ">", "µ": "u", "μ": "u",
+    "½": "1/2", "¼": "1/4", "¾": "3/4", "\N{NO-BREAK SPACE}": " ",
+}  # fmt: skip
+
+_UNSEEN = {"Cc", "Cf", "Cs", "Co", "Cn", "Zl", "Zp"}
+
+
+def printable(text: str, style: Style) -> str:
+    """`text` with every control or unassigned character shown as `�` (`?` in ASCII); tabs become spaces."""
+    if text.isascii() and text.isprintable():
+        return text
+    spelled = _ascii if style is Style.ASCII else _visible
+    return "".join(map(spelled, text))
+
+
+def _visible(character: str) -> str:
+    if (character.isspace() and character.isprintable()) or character == "\t":
+        return " "
+    return "\N{REPLACEMENT CHARACTER}" if unicodedata.category(character) in _UNSEEN else character
+
+
+def _ascii(character: str) -> str:
+    if character in _ASCII:
+        return _ASCII[character]
+    if "Ⓐ" <= character <= "Ⓩ":
+        return f"({chr(ord(character) - ord('Ⓐ') + ord('A'))})"
+    shown = _visible(character)
+    if shown.isascii():
+        return shown
+    letters = unicodedata.normalize("NFKD", shown).encode("ascii", "ignore").decode()
+    return letters or "?"

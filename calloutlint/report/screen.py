@@ -1,0 +1,79 @@
+"""Where results are written: a stream, its width, and whether it can show colours and drawing symbols."""
+
+import os
+from collections.abc import Iterable, Mapping
+from typing import TextIO
+
+from rich.cells import cell_len
+from rich.console import Console
+from rich.text import Text
+
+from calloutlint.report.printable import printable
+from calloutlint.report.styles import ASCII, UNICODE
+from calloutlint.report.wrap import wrap
+
+NARROWEST = 40
+
+# Locale settings that an interpreter sets by itself in the C locale (PEP 538).
+_COERCED = {"", "C.UTF-8", "C.utf8", "UTF-8"}
+
+
+class Screen:
+    """Prints lines of text as they are: nothing in them is taken for markup."""
+
+    def __init__(self, stream: TextIO, *, plain: bool = False, width: int | None = None) -> None:
+        """Write to `stream`, `width` columns wide (None: as wide as the terminal, else 80)."""
+        plain = plain or not draws_symbols(stream.encoding, os.environ)
+        self._console = Console(
+            file=stream,
+            width=width,
+            color_system=None if plain else "auto",
+            markup=False,
+            highlight=False,
+            emoji=False,
+        )
+        self.glyphs = ASCII if plain else UNICODE
+        self.width = max(self._console.width, NARROWEST)
+
+    def spell(self, text: str) -> str:
+        """`text` as this screen can show it."""
+        return printable(text, self.glyphs.spelling)
+
+    def line(self, line: Text | str = "", style: str = "") -> None:
+        """Print one line, as wide as it is."""
+        text = line if isinstance(line, Text) else Text(self.spell(line), style)
+        self._console.print(text, soft_wrap=True, markup=False, highlight=False, emoji=False)
+
+    def lines(self, lines: Iterable[Text], indent: int = 0) -> None:
+        """Print lines drawn elsewhere, moved right by `indent`."""
+        for line in lines:
+            self.line(Text(" " * indent).append_text(line))
+
+    def paragraph(self, text: str, style: str = "", *, indent: int = 0, head: Text | None = None) -> None:
+        """Print `text` wrapped, moved right by `indent`, its lines hanging from the end of `head`."""
+        opening = Text(" " * indent).append_text(head or Text())
+        hang = cell_len(opening.plain)
+        for line in self.wrapped(text, hang) or [""]:
+            self.line(opening.append(line, style or None))
+            opening = Text(" " * hang)
+
+    def wrapped(self, text: str, indent: int = 0) -> list[str]:
+        """`text` as this screen can show it, in lines that fit it after `indent` columns."""
+        paragraphs = [self.spell(line) for line in text.splitlines()]
+        return wrap("\n".join(paragraphs), max(self.width - indent, NARROWEST // 2))
+
+    def rule(self, style: str = "") -> None:
+        """Print a line across the screen."""
+        self.line(Text(self.glyphs.rule * self.width, style))
+
+
+def draws_symbols(encoding: str | None, environment: Mapping[str, str]) -> bool:
+    """Whether drawing symbols can be shown: by the encoding of a stream, and where the user set no C locale."""
+    try:
+        "⌖⏥Ⓜ┶━".encode(encoding or "utf-8")
+    except (LookupError, UnicodeEncodeError):
+        return False
+    stated = environment.get("LC_ALL") or environment.get("LC_CTYPE", "")
+    if stated in _COERCED and not environment.get("LC_ALL"):
+        stated = environment.get("LANG", "")
+    return stated not in {"C", "POSIX"}
