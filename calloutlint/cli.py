@@ -20,7 +20,7 @@ def main(arguments: Sequence[str] | None = None) -> int:
         options = understand(build_parser(), arguments)
         status = 0
         with reader_may_leave():
-            status = options.run(options)
+            status = int(options.run(options))
     except CalloutlintError as error:
         return _fail(str(error))
     except KeyboardInterrupt:

@@ -28,8 +28,8 @@ def add(commands: Subparsers) -> None:
     parser = commands.add_parser(
         "redline",
         help="show the corrections, or write them into the sheets",
-        description="Show the correction of each finding that has one. With --incorporate, write the proven ones "
-        "into the sheets, touching nothing else in them.",
+        description="Show the correction of each finding that has one; --incorporate writes the proven ones "
+        "into the sheets and touches nothing else in them.",
         epilog="Exit status: as for 'check'; with --incorporate, of the sheets as they are afterwards.",
     )
     paths_argument(parser)
