@@ -1,0 +1,112 @@
+"""Frames that differ where they should agree: by the order of their datums, or by a material boundary.
+
+A conflict stands on the later of two callouts. The frame that most callouts of a drawing use is taken as
+the one that is meant; lines of one callout may differ from each other.
+
+Source: ASME Y14.5 (datum precedence; material boundaries of datum features; simultaneous requirements).
+"""
+
+from collections import Counter
+from collections.abc import Callable, Hashable, Iterable, Iterator, Sequence
+from dataclasses import dataclass
+
+from calloutlint.facts.datums.frames import Use, may_be_tied, uses_of
+from calloutlint.model.callout import Callout
+from calloutlint.model.drawing import Drawing
+from calloutlint.model.fastener import Joint
+from calloutlint.model.frame import Characteristic
+
+
+@dataclass(frozen=True, slots=True)
+class Conflict:
+    """Two frame lines that differ: `use` in the later callout, where the finding stands, and `other`.
+
+    `joint` is the joint that both callouts belong to, None where there is none.
+    """
+
+    use: Use
+    other: Use
+    joint: Joint | None = None
+
+
+def order_conflicts(drawing: Drawing, joints: Sequence[Joint] = ()) -> tuple[Conflict, ...]:
+    """Frames with the same letters in another order.
+
+    `joints` are those of the package, beside the drawing's own. A conflict inside one joint names
+    it, and the callout is not reported again for the rest of the drawing.
+    """
+    uses = list(uses_of(drawing))
+    found: dict[str, Conflict] = {}
+    for joint in (*drawing.joints, *joints):
+        balloons = balloons_on(joint, drawing)
+        for use, other in _deviating((u for u in uses if u.callout.balloon in balloons), _letters, _order):
+            found.setdefault(use.callout.balloon, Conflict(use, other, joint))
+    for use, other in _deviating(uses, _letters, _order):
+        found.setdefault(use.callout.balloon, Conflict(use, other))
+    return tuple(found[c.balloon] for c in _distinct(drawing.callouts) if c.balloon in found)
+
+
+def boundary_conflicts(drawing: Drawing) -> tuple[Conflict, ...]:
+    """Positions with the same datums in the same order, but other material boundaries, that nothing parts."""
+    positions = (u for u in uses_of(drawing) if u.segment.characteristic is Characteristic.POSITION)
+    uses = filter(may_be_tied, positions)
+    return tuple(Conflict(use, other) for use, other in _deviating(uses, _order, _boundaries))
+
+
+def balloons_on(joint: Joint, drawing: Drawing) -> frozenset[str]:
+    """Balloons of a joint that stand on a drawing."""
+    return frozenset(
+        hole.balloon
+        for hole in (*joint.holes, *joint.mates)
+        if hole.drawing == drawing.number or (hole.drawing is None and joint in drawing.joints)
+    )
+
+
+def _letters(use: Use) -> Hashable:
+    return frozenset(use.order)
+
+
+def _order(use: Use) -> Hashable:
+    return use.order
+
+
+def _boundaries(use: Use) -> Hashable:
+    return use.boundaries
+
+
+def _deviating(
+    uses: Iterable[Use], group: Callable[[Use], Hashable], variant: Callable[[Use], Hashable]
+) -> Iterator[tuple[Use, Use]]:
+    """Within each group, a use of every callout that lacks the prevailing variant, and a use that has it.
+
+    Where the deviating callout stands before all that have the prevailing variant, the pair is turned
+    round, so that it stands on the later callout, once.
+    """
+    groups: dict[Hashable, list[Use]] = {}
+    for use in uses:
+        groups.setdefault(group(use), []).append(use)
+    for members in groups.values():
+        yield from _against_prevailing(members, variant)
+
+
+def _against_prevailing(members: list[Use], variant: Callable[[Use], Hashable]) -> Iterator[tuple[Use, Use]]:
+    by_callout: dict[str, list[Use]] = {}
+    for use in members:
+        by_callout.setdefault(use.callout.balloon, []).append(use)
+    votes = Counter(key for uses in by_callout.values() for key in dict.fromkeys(map(variant, uses)))
+    prevailing = max(votes, key=lambda key: votes[key])
+    model = next(use for use in members if variant(use) == prevailing)
+    early: list[Use] = []
+    for uses in by_callout.values():
+        if any(variant(use) == prevailing for use in uses):
+            continue
+        if members.index(uses[0]) < members.index(model):
+            early.append(uses[0])
+        else:
+            yield uses[0], model
+    if early:
+        yield model, early[-1]
+
+
+def _distinct(callouts: Iterable[Callout]) -> list[Callout]:
+    return list({callout.balloon: callout for callout in callouts}.values())

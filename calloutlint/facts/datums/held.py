@@ -1,0 +1,125 @@
+"""What each reference of a frame holds, what it leaves, and which references add nothing.
+
+Source: ASME Y14.5 (degrees of freedom constrained by primary, secondary and tertiary datum features),
+ISO 5459 (datum systems).
+"""
+
+from dataclasses import dataclass
+from itertools import takewhile
+
+from calloutlint.facts.datums.arrangement import Reference, holds_all, takes_nothing, usual
+from calloutlint.facts.datums.kinds import DatumKind
+from calloutlint.facts.datums.motion import FREEDOMS, Freedom
+from calloutlint.facts.datums.relations import Link, Relation
+from calloutlint.facts.datums.scheme import DatumScheme
+from calloutlint.model.frame import DatumRef, Segment
+
+
+@dataclass(frozen=True, slots=True)
+class Held:
+    """One reference of a frame in order of precedence.
+
+    `freedoms` is what it would hold standing first, `new` what it takes after those before it, both in the
+    usual arrangement and None where that is not known. `assumed` says what had to be taken for granted.
+    """
+
+    ref: DatumRef
+    kind: DatumKind | None
+    freedoms: tuple[Freedom, ...] | None
+    new: tuple[Freedom, ...] | None
+    assumed: str | None = None
+
+
+def held(segment: Segment, scheme: DatumScheme) -> tuple[Held, ...]:
+    """What each datum reference of a frame line holds, in order of precedence."""
+    references = scheme.references(segment)
+    known = tuple(takewhile(lambda reference: reference is not None, references))
+    taken = usual(_present(known), _relations(scheme, known)) or ()
+    result = []
+    for order, ref in enumerate(segment.datums):
+        here = taken[order] if order < len(taken) else None
+        assumed = _assumed(references, order, scheme) if here else None
+        alone, new = (here.alone, here.new) if here else (None, None)
+        result.append(Held(ref, scheme.kind(ref), _in_order(alone), _in_order(new), assumed))
+    return tuple(result)
+
+
+def left(segment: Segment, scheme: DatumScheme) -> tuple[Freedom, ...] | None:
+    """Freedoms that no reference of a frame line takes away; None where a reference is not known."""
+    taken: set[Freedom] = set()
+    for each in held(segment, scheme):
+        if each.new is None:
+            return None
+        taken.update(each.new)
+    return tuple(freedom for freedom in FREEDOMS if freedom not in taken)
+
+
+def redundant(segment: Segment, scheme: DatumScheme) -> tuple[DatumRef, ...]:
+    """References that take away no freedom after those before them, however the features may stand.
+
+    Frames with named degrees of freedom are left out: there the names say what each one holds.
+    """
+    if any(ref.freedoms for ref in segment.datums):
+        return ()
+    references = scheme.references(segment)
+    return tuple(
+        ref for order, ref in enumerate(segment.datums) if order and _adds_nothing(references, order, scheme)
+    )
+
+
+def _adds_nothing(references: tuple[Reference | None, ...], order: int, scheme: DatumScheme) -> bool:
+    earlier = references[:order]
+    if None in earlier:
+        return False
+    present = _present(earlier)
+    relations = _relations(scheme, earlier)
+    last = references[order]
+    if last is None:
+        return holds_all(present, relations)
+    return takes_nothing((*present, last), _relations(scheme, (*earlier, last)))
+
+
+def _present(references: tuple[Reference | None, ...]) -> tuple[Reference, ...]:
+    return tuple(reference for reference in references if reference is not None)
+
+
+def _relations(scheme: DatumScheme, references: tuple[Reference | None, ...]) -> tuple[Relation, ...]:
+    letters = (letter for reference in _present(references) for letter, _ in reference.members)
+    return scheme.relations.among(letters)
+
+
+def _in_order(freedoms: tuple[Freedom, ...] | None) -> tuple[Freedom, ...] | None:
+    return None if freedoms is None else tuple(freedom for freedom in FREEDOMS if freedom in freedoms)
+
+
+def _assumed(references: tuple[Reference | None, ...], order: int, scheme: DatumScheme) -> str | None:
+    """What the usual arrangement took for granted of one reference: its kind, its direction, its likeness."""
+    reference = references[order]
+    if reference is None:
+        return None
+    said = [f"{letter} {geometry.assumed}" for letter, geometry in reference.members if geometry.assumed]
+    letters = [letter for letter, _ in reference.members]
+    before = [letter for r in _present(references[:order]) for letter, _ in r.members]
+    if len(letters) > 1 and not _told(letters, letters, scheme):
+        said.append(f"{' and '.join(letters)} taken as standing in one line or plane")
+    if before and _has_direction(reference) and not _told(letters, before, scheme):
+        others = " and ".join(dict.fromkeys(before))
+        said.append(f"{'-'.join(letters)} taken in its usual direction to {others}")
+    return "; ".join(said) or None
+
+
+def _has_direction(reference: Reference) -> bool:
+    return any(geometry.kind is not DatumKind.POINT for _, geometry in reference.members)
+
+
+def _told(some: list[str], others: list[str], scheme: DatumScheme) -> bool:
+    """Whether a callout says how one of these features stands to one of the others."""
+    return any(
+        relation.link is not Link.OBLIQUE
+        and (
+            (relation.letter in some and relation.to in others)
+            or (relation.letter in others and relation.to in some)
+        )
+        for relation in scheme.relations.known
+        if relation.letter != relation.to
+    )

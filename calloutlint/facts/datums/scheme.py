@@ -1,0 +1,126 @@
+"""The datum scheme of a drawing: its datum features, what they are, how they stand to each other."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass, replace
+
+from calloutlint.facts.datums.arrangement import Reference
+from calloutlint.facts.datums.kinds import DatumGeometry, DatumKind, geometry_of, letters_of
+from calloutlint.facts.datums.motion import FREEDOMS, Freedom
+from calloutlint.facts.datums.relations import Relations, relations_of
+from calloutlint.facts.datums.targets import contacts_of
+from calloutlint.model.callout import Callout, DatumTarget
+from calloutlint.model.drawing import Drawing
+from calloutlint.model.frame import DatumRef, Modifier, Segment
+
+
+@dataclass(frozen=True, slots=True)
+class Established:
+    """A datum feature of a drawing.
+
+    `callouts` carry its datum feature symbol (more than one only by mistake, none where targets alone
+    establish it); `targets` are its datum targets with the callouts they stand in; `geometry` is None
+    where the callouts do not tell what it is.
+    """
+
+    letter: str
+    callouts: tuple[Callout, ...]
+    targets: tuple[tuple[Callout, DatumTarget], ...]
+    geometry: DatumGeometry | None
+
+
+@dataclass(frozen=True, slots=True)
+class DatumScheme:
+    """All datum features of a drawing by letter, in the order they are established, and their relations."""
+
+    drawing: Drawing
+    features: Mapping[str, Established]
+    relations: Relations
+
+    def kind(self, ref: DatumRef) -> DatumKind | None:
+        """The kind of datum a reference stands for; None where unknown, or where a common datum mixes kinds."""
+        geometries = [self._geometry(letter.letter) for letter in ref.letters]
+        kinds = {geometry.kind if geometry else None for geometry in geometries}
+        return kinds.pop() if len(kinds) == 1 else None
+
+    def reference(self, ref: DatumRef) -> Reference | None:
+        """A reference ready to be computed; None where one of its features is not known."""
+        members = [(letter.letter, self._geometry(letter.letter)) for letter in ref.letters]
+        known = tuple((letter, geometry) for letter, geometry in members if geometry is not None)
+        uses = _modifiers(ref)
+        if not known or len(known) < len(members) or _reduced({g.kind for _, g in known}, uses):
+            return None
+        named = tuple(freedom for freedom in map(freedom_named, ref.freedoms) if freedom is not None)
+        return Reference(known, named, Modifier.ORIENTATION_ONLY in uses)
+
+    def references(self, segment: Segment) -> tuple[Reference | None, ...]:
+        """The references of a frame line in order of precedence."""
+        return tuple(self.reference(ref) for ref in segment.datums)
+
+    def _geometry(self, letter: str) -> DatumGeometry | None:
+        feature = self.features.get(letter)
+        return feature.geometry if feature else None
+
+
+_SECTIONS = {Modifier.ANY_CROSS_SECTION, Modifier.SPECIFIED_CROSS_SECTION, Modifier.ANY_LONGITUDINAL_SECTION}
+_SITUATIONS = {
+    Modifier.POINT: DatumKind.POINT,
+    Modifier.LINE: DatumKind.AXIS,
+    Modifier.PLANE: DatumKind.PLANE,
+}
+
+
+def _modifiers(ref: DatumRef) -> set[Modifier]:
+    uses = (*ref.modifiers, *(use for letter in ref.letters for use in letter.modifiers))
+    return {use.kind for use in uses}
+
+
+def _reduced(kinds: set[DatumKind], uses: set[Modifier]) -> bool:
+    """Whether a modifier takes a section or a part of the datum, so that less than its kind is held."""
+    parts = {_SITUATIONS[use] for use in uses if use in _SITUATIONS}
+    return bool(uses & _SECTIONS) or bool(parts - kinds)
+
+
+def scheme_of(drawing: Drawing) -> DatumScheme:
+    """The datum scheme of a drawing."""
+    letters = dict.fromkeys(
+        letter
+        for callout in drawing.callouts
+        for letter in (*letters_of(callout), *(target.letter for target in callout.datum_targets))
+    )
+    features = {letter: _established(letter, drawing) for letter in letters}
+    geometries = {letter: feature.geometry for letter, feature in features.items()}
+    relations = (
+        relation
+        for feature in features.values()
+        for callout in feature.callouts
+        for relation in relations_of(feature.letter, callout, geometries)
+    )
+    return DatumScheme(drawing, features, Relations.closed(relations))
+
+
+def _established(letter: str, drawing: Drawing) -> Established:
+    callouts = tuple(callout for callout in drawing.callouts if letter in letters_of(callout))
+    targets = tuple(
+        (callout, target)
+        for callout in drawing.callouts
+        for target in callout.datum_targets
+        if target.letter == letter
+    )
+    return Established(letter, callouts, targets, _geometry(callouts, targets))
+
+
+def _geometry(
+    callouts: tuple[Callout, ...], targets: tuple[tuple[Callout, DatumTarget], ...]
+) -> DatumGeometry | None:
+    """What all callouts of a letter agree on; a plane that targets touch has as many contacts as they give."""
+    speaking = callouts or tuple(dict.fromkeys(callout for callout, _ in targets))
+    found = {geometry_of(callout) for callout in speaking}
+    geometry = found.pop() if len(found) == 1 else None
+    if geometry is None or not targets or geometry.kind is not DatumKind.PLANE:
+        return geometry
+    return replace(geometry, contacts=contacts_of(target for _, target in targets))
+
+
+def freedom_named(name: str) -> Freedom | None:
+    """The degree of freedom that a letter names, in either case; None for any other text."""
+    return next((freedom for freedom in FREEDOMS if freedom.value == name.lower()), None)
