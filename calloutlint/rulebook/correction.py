@@ -10,11 +10,11 @@ from lark import Token, Tree
 
 from calloutlint.facts.view import View
 from calloutlint.rulebook.finding import Edit
-from calloutlint.rulebook.kinds import QUANTITIES, TEXT, Kind, Listing, Thing, Words, kind_of, members
+from calloutlint.rulebook.kinds import QUANTITIES, TEXT, Kind, Thing, Words, members, single, vocabulary
 from calloutlint.rulebook.resolve import Resolver
 from calloutlint.rulebook.scope import Scope
-from calloutlint.rulebook.syntax import parse, place
-from calloutlint.rulebook.terms import Fact, Term, Writer
+from calloutlint.rulebook.syntax import Syntax, parse, phrase, place
+from calloutlint.rulebook.terms import Fact, Term, reading
 from calloutlint.rulebook.text_error import TextError, nearest
 
 VERBS = {
@@ -28,7 +28,10 @@ VERBS = {
 
 @dataclass(frozen=True)
 class Change:
-    """One change: `target` gives the view or views to change, `word` the symbol or fact, `new` the value to write."""
+    """One change.
+
+    `target` gives the view or views to change, `word` the symbol or the fact, `new` the value to write.
+    """
 
     verb: str
     target: Term
@@ -36,16 +39,16 @@ class Change:
     new: Term | None = None
 
     @cached_property
-    def _read(self) -> tuple[Callable[[View], Any], Callable[[View], Any] | None]:
-        writer = Writer()
-        target = writer.function(self.target.value(writer))
-        return target, writer.function(self.new.value(writer)) if self.new else None
+    def _read_target(self) -> Callable[[View], Any]:
+        return reading(self.target.value)
+
+    @cached_property
+    def _read_new(self) -> Callable[[View], Any]:
+        return reading(self.new.value) if self.new else lambda examined: None
 
     def edit(self, view: View) -> Edit | None:
-        """The change for an examined view; None where its target or its value is unknown, or there is no target."""
-        read_target, read_new = self._read
-        target = read_target(view)
-        new = read_new(view) if read_new else None
+        """The change for an examined view; None where it has no target, or target or value is unknown."""
+        target, new = self._read_target(view), self._read_new(view)
         if target is None or target == () or (self.new is not None and new is None):
             return None
         part = tuple(item.part for item in target) if isinstance(target, tuple) else target.part
@@ -76,7 +79,7 @@ def correction(text: str, scope: Scope) -> Correction:
     return Correction(tuple(_change(tree, scope) for tree in parse(text, "changes").children))
 
 
-def _change(tree: Tree[Token] | Token, scope: Scope) -> Change:
+def _change(tree: Syntax, scope: Scope) -> Change:
     assert isinstance(tree, Tree)
     form = tree.data
     if form in {"add", "drop_word"}:
@@ -91,50 +94,35 @@ def _change(tree: Tree[Token] | Token, scope: Scope) -> Change:
         return Change(form, owner, word)
     new = Resolver(scope).term(tree.children[1])
     if new.kind not in QUANTITIES and new.kind is not TEXT and not isinstance(new.kind, Words):
-        raise TextError(f"a quantity, a word or a text is needed, this is {new.kind.name}", *place(tree.children[1]))
+        problem = f"a quantity, a word or a text is needed, this is {new.kind.name}"
+        raise TextError(problem, *place(tree.children[1]))
     return Change(form, owner, word, new)
 
 
-def _part(scope: Scope, path: Tree[Token] | Token) -> Term:
+def _part(scope: Scope, path: Syntax) -> Term:
     """The view, or the list of views, that a path names."""
     assert isinstance(path, Token)
     term = scope.path(path)
-    if _view(term.kind) is None:
+    if not isinstance(single(term.kind), Thing):
         raise TextError(f"'{path}' is {term.kind.name}, not a part of the callout", *place(path))
     return term
 
 
-def _owner_and_fact(scope: Scope, path: Tree[Token] | Token) -> tuple[Term, str | None]:
+def _owner_and_fact(scope: Scope, path: Syntax) -> tuple[Term, str | None]:
     """The part that a path names; or the part and the name of its fact, where the path ends in one."""
     assert isinstance(path, Token)
     term = scope.path(path)
-    if _view(term.kind) is not None:
+    if isinstance(single(term.kind), Thing):
         return term, None
     if isinstance(term, Fact):
         return term.owner, term.name
     raise TextError(f"'{path}' cannot be changed: it is no part of the callout", *place(path))
 
 
-def _view(kind: Kind) -> type[View] | None:
-    inner = kind.item if isinstance(kind, Listing) else kind
-    return inner.view if isinstance(inner, Thing) else None
-
-
-def _symbol(words: Tree[Token] | Token, kind: Kind) -> str:
+def _symbol(words: Syntax, kind: Kind) -> str:
     """The word to add or drop, one of those that facts of the part may hold."""
-    assert isinstance(words, Tree)
-    symbol = " ".join(str(token) for token in words.children).strip("\"'")
-    known = _symbols(kind)
+    symbol = phrase(words)
+    known = [word for member in members(single(kind)).values() for word in vocabulary(single(member.kind))]
     if symbol not in known:
         raise TextError(f"'{symbol}' says nothing of {kind.name}{nearest(symbol, known)}", *place(words))
     return symbol
-
-
-def _symbols(kind: Kind) -> list[str]:
-    inner = kind.item if isinstance(kind, Listing) else kind
-    found: list[str] = []
-    for entry in members(inner).values():
-        held = kind_of(entry.result)
-        held = held.item if isinstance(held, Listing) else held
-        found += list(held.vocabulary) if isinstance(held, Words) else []
-    return found

@@ -39,7 +39,7 @@ class Engine:
         self._yields = {rule.id: frozenset(rule.sheet.yields_to) for rule in rules if rule.sheet.yields_to}
 
     def findings(self, views: Iterable[View]) -> list[Finding]:
-        """What the rules find in the views, in the order of the views, without what yields to another finding."""
+        """What the rules find in the views, in their order, without what yields to another finding."""
         found = [(view, finding) for view in views for finding in self._about(view)]
         return _unrepeated(self._yielded(found))
 
@@ -66,20 +66,23 @@ class Engine:
         kept = []
         for view, finding in found:
             stronger = self._yields.get(finding.rule, frozenset())
-            if not (stronger and any(o.rule in stronger and _same_place(v, o, view, finding) for v, o in found)):
+            rivals = [(v, f) for v, f in found if f.rule in stronger] if stronger else []
+            if not any(_same_place(v, f, view, finding) for v, f in rivals):
                 kept.append(finding)
         return kept
 
 
 def agenda_of(rules: Sequence[Rule]) -> Agenda:
     """Rules sorted by the fact on which most of them depend, each list in the order given."""
-    facts = Counter(fact for rule in rules for fact in rule.index)
+    facts = Counter(fact for rule in rules for fact in rule.required_words)
     if not facts:
         return Agenda(None, tuple(rules), {})
     fact = facts.most_common(1)[0][0]
-    words = {word for rule in rules for word in rule.index.get(fact, ())}
-    always = tuple(rule for rule in rules if fact not in rule.index)
-    by_word = {w: tuple(r for r in rules if fact not in r.index or w in r.index[fact]) for w in words}
+    words = {word for rule in rules for word in rule.required_words.get(fact, ())}
+    always = tuple(rule for rule in rules if fact not in rule.required_words)
+    by_word = {
+        w: tuple(r for r in rules if fact not in r.required_words or w in r.required_words[fact]) for w in words
+    }
     return Agenda(fact, always, by_word)
 
 
@@ -127,7 +130,7 @@ def ordered(findings: list[Finding], package: Package) -> list[Finding]:
             finding.rule,
         )
 
-    return sorted(findings, key=key)  # type: ignore[arg-type]
+    return sorted(findings, key=key)
 
 
 def balloon_key(balloon: str) -> list[tuple[int, int, str]]:

@@ -7,7 +7,7 @@ from dataclasses import dataclass
 from calloutlint.model.drawing import Standard, System
 
 EDITIONS = {System.ASME: (1982, 1994, 2009, 2018), System.ISO: (None,)}
-FORMS = '"ASME Y14.5", "ASME Y14.5-2018", "ASME Y14.5-2009 and later", "ASME Y14.5-1994 and earlier" or "ISO GPS"'
+FORMS = "ASME Y14.5, ASME Y14.5-2018, ASME Y14.5-2009 and later, ASME Y14.5-1994 and earlier, or ISO GPS"
 _FORM = re.compile(r"(?P<system>ASME Y14\.5|ISO GPS)(-(?P<year>\d{4})( and (?P<side>later|earlier))?)?")
 
 

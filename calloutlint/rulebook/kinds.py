@@ -1,11 +1,13 @@
 """Kinds of value in a condition: what may be compared with what, and how messages name it."""
 
+from collections.abc import Mapping
 from dataclasses import dataclass
 from decimal import Decimal
 from enum import StrEnum
+from functools import cache
 from typing import Annotated, Any, get_args, get_origin
 
-from calloutlint.facts.view import FactEntry, View, facts_of
+from calloutlint.facts.view import View, facts_of
 
 
 @dataclass(frozen=True, slots=True)
@@ -39,6 +41,16 @@ class Listing(Kind):
     """A list of values of one kind."""
 
     item: Kind
+
+
+@dataclass(frozen=True, slots=True)
+class Member:
+    """A fact that may follow a thing after a dot; `optional` says whether it may be unknown."""
+
+    name: str
+    kind: Kind
+    optional: bool
+    doc: str
 
 
 LENGTH = Kind("a length")
@@ -76,13 +88,32 @@ def kind_of(annotation: Any) -> Kind:
     if isinstance(annotation, type) and issubclass(annotation, StrEnum):
         return Words("a word", annotation)
     if isinstance(annotation, type) and issubclass(annotation, View):
-        return Thing(f"a {annotation.subject}", annotation)
+        return Thing(with_article(annotation.subject), annotation)
     raise TypeError(f"no kind of value for {annotation!r}")
 
 
-def members(kind: Kind) -> dict[str, FactEntry]:
-    """The facts that may follow a value of this kind after a dot."""
-    return dict(facts_of(kind.view)) if isinstance(kind, Thing) else {}
+def with_article(noun: str) -> str:
+    """`a frame`, `an unread`."""
+    return f"{'an' if noun[:1] in 'aeiou' else 'a'} {noun}"
+
+
+@cache
+def members(kind: Kind) -> Mapping[str, Member]:
+    """The facts that may follow a value of this kind after a dot, by name."""
+    if not isinstance(kind, Thing):
+        return {}
+    entries = facts_of(kind.view)  # type: ignore[arg-type]  # mypy takes View's own __hash__ for that of the class
+    return {name: Member(name, kind_of(e.result), e.optional, e.doc) for name, e in entries.items()}
+
+
+def single(kind: Kind) -> Kind:
+    """The kind of one item of a list, or the kind itself."""
+    return kind.item if isinstance(kind, Listing) else kind
+
+
+def vocabulary(kind: Kind) -> Mapping[str, StrEnum]:
+    """The words that a value of this kind may be; none where it is no word."""
+    return kind.vocabulary if isinstance(kind, Words) else {}
 
 
 def comparable(left: Kind, right: Kind) -> bool:

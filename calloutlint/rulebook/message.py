@@ -1,17 +1,17 @@
 """Messages of a rule: text with expressions in braces."""
 
 import re
-from collections.abc import Callable, Iterator
+from collections.abc import Callable
 from dataclasses import dataclass, field
 from functools import cached_property
 from typing import Any
 
 from calloutlint.facts.view import View
 from calloutlint.rulebook.figures import figure, written
-from calloutlint.rulebook.kinds import ANGLE, FLAG, LENGTH, QUANTITIES, Kind, Listing, Thing, kind_of, members
+from calloutlint.rulebook.kinds import ANGLE, FLAG, LENGTH, QUANTITIES, Kind, Listing, Thing, members, single
 from calloutlint.rulebook.resolve import expression
 from calloutlint.rulebook.scope import Scope, follow
-from calloutlint.rulebook.terms import Term, Writer
+from calloutlint.rulebook.terms import Term, reading
 from calloutlint.rulebook.text_error import TextError
 
 _PIECE = re.compile(r"\{\{|\}\}|\{([^{}]*)\}|[{}]")
@@ -29,8 +29,7 @@ class Slot:
     @cached_property
     def read(self) -> Callable[[View], Any]:
         """The value for a view, None where it is unknown."""
-        writer = Writer()
-        return writer.function(self.term.value(writer))
+        return reading(self.term.value)
 
 
 @dataclass(frozen=True, slots=True)
@@ -39,11 +38,6 @@ class Message:
 
     pieces: tuple[str | Slot, ...]
     figures: tuple[Slot, ...] = ()
-
-    @property
-    def slots(self) -> Iterator[Slot]:
-        """Its expressions, in order."""
-        return (piece for piece in self.pieces if isinstance(piece, Slot))
 
     def say(self, view: View) -> "Said | None":
         """The message about a view; None where a value in it is unknown."""
@@ -75,7 +69,7 @@ class Said:
     figures: dict[str, str] = field(default_factory=dict)
 
 
-def message(text: str, scope: Scope, figures: list[Slot] | None = None) -> Message:
+def message(text: str, scope: Scope) -> Message:
     """A message, checked: `{expression}`, `{expression:+}` for a written sign, `{{` and `}}` for braces.
 
     Raises:
@@ -94,7 +88,7 @@ def message(text: str, scope: Scope, figures: list[Slot] | None = None) -> Messa
         else:
             raise TextError("this brace has no partner: write it twice to show one", found.start(), found.end())
     pieces.append(text[end:])
-    return Message(tuple(piece for piece in pieces if piece), tuple(figures or ()))
+    return Message(tuple(piece for piece in pieces if piece))
 
 
 def slot(text: str, scope: Scope, offset: int = 0) -> Slot:
@@ -118,10 +112,10 @@ def slot(text: str, scope: Scope, offset: int = 0) -> Slot:
 def _shown(term: Term) -> Term:
     """What is written for a term: for a thing, its value, else its text as written, else its name."""
     facts = members(term.kind)
-    chosen = next((facts[name] for name in _SHOWN if name in facts and _writable(kind_of(facts[name].result))), None)
+    shown = (facts[name] for name in _SHOWN if name in facts and _writable(facts[name].kind))
+    chosen = next(shown, None)
     return follow(term, chosen) if chosen else term
 
 
 def _writable(kind: Kind) -> bool:
-    inner = kind.item if isinstance(kind, Listing) else kind
-    return kind is not FLAG and inner is not FLAG and not isinstance(inner, Thing | Listing)
+    return single(kind) is not FLAG and not isinstance(single(kind), Thing | Listing)

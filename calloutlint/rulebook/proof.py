@@ -34,7 +34,7 @@ class Proof:
 
 
 def prove(rulebook: Rulebook, ids: Sequence[str] = ()) -> list[Proof]:
-    """Runs the cases of rules, each beside only those that it yields to; of every rule where no ids are given."""
+    """Runs the cases of some rules, or of all, each rule beside only those that it yields to."""
     by_id = {rule.id: rule for rule in rulebook.rules}
     chosen = [by_id[id_] for id_ in ids] if ids else rulebook.rules
     return [prove_rule(rule, by_id) for rule in chosen]

@@ -1,16 +1,16 @@
 """The reference of facts: what conditions can ask, by subject."""
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Mapping
 from dataclasses import dataclass
 
 from calloutlint.facts.subjects import SUBJECTS
-from calloutlint.facts.view import FactEntry, View, facts_of
-from calloutlint.rulebook.kinds import ANGLE, LENGTH, Kind, Listing, Thing, Words, kind_of
+from calloutlint.facts.view import View
+from calloutlint.rulebook.kinds import ANGLE, LENGTH, Member, Thing, members, single, vocabulary
 
 
 @dataclass(frozen=True, slots=True)
 class FactLine:
-    """A fact as listed. `kind` says what it is; `unit` is empty for what has none; `words` are those it may hold."""
+    """A fact as listed; `unit` is empty where it has none, `words` are those that it may hold."""
 
     name: str
     kind: str
@@ -38,7 +38,7 @@ def facts(subjects: Mapping[str, type[View]] = SUBJECTS) -> list[SubjectFacts]:
             subject=view.subject,
             examined=view in examined,
             doc=(view.__doc__ or "").strip(),
-            facts=tuple(_line(entry) for entry in facts_of(view).values()),
+            facts=tuple(_line(member) for member in members(Thing("", view)).values()),
         )
         for view in _reached(subjects)
     ]
@@ -46,25 +46,14 @@ def facts(subjects: Mapping[str, type[View]] = SUBJECTS) -> list[SubjectFacts]:
 
 def _reached(subjects: Mapping[str, type[View]]) -> list[type[View]]:
     found = list(subjects.values())
-    for view in found:
-        led = (_view(kind_of(entry.result)) for entry in facts_of(view).values())
-        found += [v for v in dict.fromkeys(led) if v is not None and v not in found]
+    for view in found:  # the list grows while it is gone through
+        kinds = (single(member.kind) for member in members(Thing("", view)).values())
+        led = dict.fromkeys(kind.view for kind in kinds if isinstance(kind, Thing))
+        found += [view for view in led if view not in found]
     return found
 
 
-def _view(kind: Kind) -> type[View] | None:
-    inner = kind.item if isinstance(kind, Listing) else kind
-    return inner.view if isinstance(inner, Thing) else None
-
-
-def _line(entry: FactEntry) -> FactLine:
-    kind = kind_of(entry.result)
-    inner = kind.item if isinstance(kind, Listing) else kind
+def _line(member: Member) -> FactLine:
+    inner = single(member.kind)
     unit = "drawing's unit" if inner is LENGTH else "degrees" if inner is ANGLE else ""
-    words = tuple(inner.vocabulary) if isinstance(inner, Words) else ()
-    return FactLine(entry.name, kind.name, unit, entry.optional, words, entry.doc)
-
-
-def rows(subjects: list[SubjectFacts]) -> Iterator[tuple[str, FactLine]]:
-    """Every fact with its subject, for a flat listing."""
-    return ((group.subject, line) for group in subjects for line in group.facts)
+    return FactLine(member.name, member.kind.name, unit, member.optional, tuple(vocabulary(inner)), member.doc)

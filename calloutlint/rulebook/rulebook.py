@@ -11,10 +11,11 @@ from calloutlint.errors import RuleSheetError
 from calloutlint.facts.subjects import SUBJECTS, subjects, walk
 from calloutlint.facts.view import View
 from calloutlint.model.drawing import Package
+from calloutlint.rulebook.build import build_rule
 from calloutlint.rulebook.engine import Engine, ordered
 from calloutlint.rulebook.finding import Finding
 from calloutlint.rulebook.house import gather
-from calloutlint.rulebook.rule import Rule, build_rule
+from calloutlint.rulebook.rule import Rule
 from calloutlint.rulebook.sheet import Filed
 
 
@@ -26,7 +27,7 @@ class Rulebook:
 
     @cached_property
     def digest(self) -> str:
-        """SHA-256 over what the rules say, the cases left out; the same for the same rules whatever their files."""
+        """SHA-256 over what the rules say, the cases left out; it does not depend on where the files are."""
         contents = [rule.sheet.model_dump(mode="json", exclude={"case"}) for rule in self.rules]
         return hashlib.sha256(json.dumps(contents, sort_keys=True).encode()).hexdigest()
 
@@ -64,7 +65,7 @@ def build_rulebook(sheets: Sequence[Filed], known: Mapping[str, type[View]] = SU
     rules = []
     for filed in sheets:
         try:
-            rules.append(build_rule(filed.sheet, filed.file, known))
+            rules.append(build_rule(filed, known))
         except RuleSheetError as error:
             problems.append(str(error))
     if problems:

@@ -5,8 +5,17 @@ from dataclasses import dataclass, field
 
 from lark import Token
 
-from calloutlint.facts.view import FactEntry, View
-from calloutlint.rulebook.kinds import FLAG, Kind, Listing, Thing, Words, kind_of, members
+from calloutlint.facts.view import View
+from calloutlint.rulebook.kinds import (
+    FLAG,
+    Kind,
+    Member,
+    Thing,
+    members,
+    single,
+    vocabulary,
+    with_article,
+)
 from calloutlint.rulebook.terms import EXAMINED, Constant, Fact, Term, Variable
 from calloutlint.rulebook.text_error import TextError, nearest
 
@@ -28,7 +37,7 @@ class Scope:
     @property
     def examined(self) -> Variable:
         """The examined view itself."""
-        return Variable(EXAMINED, Thing(f"a {self.view.subject}", self.view))
+        return Variable(EXAMINED, Thing(with_article(self.view.subject), self.view))
 
     @property
     def names(self) -> list[str]:
@@ -45,8 +54,8 @@ class Scope:
             return self.limits[name]
         if name == NEVER:
             return Constant(constant=False, kind=FLAG)
-        entry = members(self.examined.kind).get(name)
-        return follow(self.examined, entry) if entry else None
+        member = members(self.examined.kind).get(name)
+        return follow(self.examined, member) if member else None
 
     def with_variable(self, token: Token, kind: Kind) -> "tuple[Scope, Variable]":
         """The scope inside `any NAME of …`, and the variable.
@@ -72,54 +81,24 @@ class Scope:
         first, *rest = token.split(".")
         term = self.lookup(first)
         if term is None:
-            raise TextError(f"'{first}' is not known here{nearest(first, self.names)}", start, start + len(first))
-        place = start + len(first) + 1
+            raise TextError(f"'{first}' is not known here{self._hint(first)}", start, start + len(first))
+        start += len(first) + 1
         for name in rest:
-            entry = members(term.kind).get(name)
-            if entry is None:
+            member = members(term.kind).get(name)
+            if member is None:
                 problem = f"{term.kind.name} has no fact '{name}'{nearest(name, members(term.kind))}"
-                raise TextError(problem, place, place + len(name))
-            term = follow(term, entry)
-            place += len(name) + 1
+                raise TextError(problem, start, start + len(name))
+            term = follow(term, member)
+            start += len(name) + 1
         return term
 
+    def _hint(self, name: str) -> str:
+        kinds = (single(member.kind) for member in members(self.examined.kind).values())
+        if any(name in vocabulary(kind) for kind in kinds):
+            return ": it is a word, and words stand after 'is', after 'has' and in lists"
+        return nearest(name, self.names)
 
-def follow(owner: Term, entry: FactEntry) -> Fact:
+
+def follow(owner: Term, member: Member) -> Fact:
     """A fact of what `owner` stands for."""
-    return Fact(owner, entry.name, kind_of(entry.result), entry.optional or owner.optional)
-
-
-def facts_with_word(owner: Term, word: str) -> list[tuple[Fact, Constant]]:
-    """Facts of `owner` that hold one word of a set with `word` in it, each with the word."""
-    found = []
-    for entry in members(owner.kind).values():
-        kind = kind_of(entry.result)
-        if isinstance(kind, Words) and word in kind.vocabulary:
-            found.append((follow(owner, entry), Constant(kind.vocabulary[word], kind)))
-    return found
-
-
-def lists_with_word(owner: Term, word: str) -> list[tuple[Fact, Constant]]:
-    """Facts of `owner` that hold a list of words of a set with `word` in it, each with the word."""
-    found = []
-    for entry in members(owner.kind).values():
-        kind = kind_of(entry.result)
-        if isinstance(kind, Listing) and isinstance(kind.item, Words) and word in kind.item.vocabulary:
-            found.append((follow(owner, entry), Constant(kind.item.vocabulary[word], kind.item)))
-    return found
-
-
-def words_of(owner: Term) -> list[str]:
-    """Every word that `owner is …` may be followed by: its flags, and the words of its facts."""
-    found: list[str] = []
-    for entry in members(owner.kind).values():
-        kind = kind_of(entry.result)
-        found += [entry.name] if kind is FLAG else list(kind.vocabulary) if isinstance(kind, Words) else []
-    return found
-
-
-def listed_words_of(owner: Term) -> list[str]:
-    """Every word that `owner has …` may be followed by."""
-    kinds = [kind_of(entry.result) for entry in members(owner.kind).values()]
-    lists = [kind.item for kind in kinds if isinstance(kind, Listing)]
-    return [word for item in lists if isinstance(item, Words) for word in item.vocabulary]
+    return Fact(owner, member.name, member.kind, member.optional or owner.optional)

@@ -74,7 +74,7 @@ class Sheet(Form):
     demand: Text
     say: Text
     figures: list[Text] = Field(default_factory=list)
-    assumed: str = ""
+    assumed: str | None = None
     redline: str = ""
     stands_on: str = ""
     yields_to: list[RuleId] = Field(default_factory=list)
@@ -113,7 +113,7 @@ def read_sheet(text: str, file: str, *, cases: bool) -> Sheet | Amendment:
         RuleSheetError: the text is not TOML, or a key is unknown, missing or wrong.
     """
     data = _toml(text if cases else text.partition(CASES_OPEN)[0], file)
-    model = Amendment if {"retires", "amends"} & data.keys() else Sheet
+    model: type[Sheet] | type[Amendment] = Amendment if {"retires", "amends"} & data.keys() else Sheet
     try:
         sheet = model.model_validate(data)
     except ValidationError as error:
@@ -138,7 +138,7 @@ def _check_amendment(sheet: Amendment, file: str) -> None:
         raise RuleSheetError(f"{file}: amends {sheet.amends}, but states neither a grade nor a limit")
 
 
-def _problem(file: str, detail: Any, model: type[BaseModel]) -> str:
+def _problem(file: str, detail: Any, model: type[Form]) -> str:
     """One line for one thing that pydantic found: the file, the key, what is wrong."""
     path = [part for part in detail["loc"] if isinstance(part, int) or part in _keys()]
     key = ".".join(str(part + 1) if isinstance(part, int) else part for part in path)
@@ -152,9 +152,10 @@ def _problem(file: str, detail: Any, model: type[BaseModel]) -> str:
 
 
 def _keys() -> set[str]:
-    return {name for model in (Sheet, Amendment, Variant, Case) for name in model.model_fields}
+    models: tuple[type[Form], ...] = (Sheet, Amendment, Variant, Case)
+    return {name for model in models for name in model.model_fields}
 
 
-def _keys_of(model: type[BaseModel], path: tuple[str | int, ...]) -> list[str]:
-    inner = {"variant": Variant, "case": Case}.get(str(path[0]), model) if len(path) > 1 else model
-    return list(inner.model_fields)
+def _keys_of(model: type[Form], path: tuple[str | int, ...]) -> list[str]:
+    inner: dict[str, type[Form]] = {"variant": Variant, "case": Case}
+    return list((inner.get(str(path[0]), model) if len(path) > 1 else model).model_fields)

@@ -5,7 +5,7 @@ from functools import cache
 from typing import Literal
 
 from lark import Lark, Token, Tree
-from lark.exceptions import UnexpectedCharacters, UnexpectedEOF, UnexpectedInput, UnexpectedToken
+from lark.exceptions import UnexpectedCharacters, UnexpectedInput, UnexpectedToken
 
 from calloutlint._resources import read_text
 from calloutlint.rulebook.text_error import TextError
@@ -47,8 +47,6 @@ def parse(text: str, start: Start = "either") -> Tree[Token]:
     """
     try:
         return _parser().parse(text, start=start)
-    except UnexpectedEOF as error:
-        raise TextError(f"the text ends too early: expected {_listed(error.expected)}", len(text), len(text)) from None
     except UnexpectedInput as error:
         raise _unexpected(error, text) from None
 
@@ -56,7 +54,8 @@ def parse(text: str, start: Start = "either") -> Tree[Token]:
 def _unexpected(error: UnexpectedInput, text: str) -> TextError:
     if isinstance(error, UnexpectedToken):
         if error.token.type == "$END":
-            return TextError(f"the text ends too early: expected {_listed(error.expected)}", len(text), len(text))
+            problem = f"the text ends too early: expected {_listed(error.expected)}"
+            return TextError(problem, len(text), len(text))
         start = error.token.start_pos or 0
         message = f"'{error.token}' cannot stand here: expected {_listed(error.expected)}"
         return TextError(message, start, start + len(error.token))
@@ -83,3 +82,8 @@ def place(syntax: Syntax) -> tuple[int, int]:
     """Where a tree stands in its text: offset of its first character and of the one after its last."""
     found = list(tokens(syntax))
     return (found[0].start_pos or 0, found[-1].end_pos or 0) if found else (0, 0)
+
+
+def phrase(syntax: Syntax) -> str:
+    """The word or words of a tree as one word of the trade, quotes taken off."""
+    return " ".join(tokens(syntax)).strip("\"'")

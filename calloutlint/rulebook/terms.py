@@ -5,7 +5,7 @@ and `fails` (certainly false); where neither passes, it is unknown. So no third 
 and what runs is ordinary short-circuit Python.
 """
 
-from collections.abc import Callable, Mapping
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass, field
 from decimal import Decimal
 from typing import Any
@@ -15,6 +15,7 @@ from calloutlint.rulebook.kinds import COUNT, FLAG, Kind
 from calloutlint.units import Unit
 
 EXAMINED = "examined"
+OPPOSITE = {"<": ">=", "<=": ">", ">": "<=", ">=": "<", "==": "!=", "!=": "==", "in": "not in"}
 
 
 def divide(dividend: Decimal | int, divisor: Decimal | int) -> Decimal | None:
@@ -53,19 +54,34 @@ class Term:
 
     def value(self, writer: Writer) -> str:
         """Python for the value, None where it is unknown."""
-        return f"(True if {self.holds(writer)} else False if {self.fails(writer)} else None)"
+        return self._value(writer)
 
     def holds(self, writer: Writer) -> str:
         """Python that is true where this is certainly true."""
-        return f"({self.value(writer)} is True)" if self.optional else self.value(writer)
+        return self._holds(writer)
 
     def fails(self, writer: Writer) -> str:
         """Python that is true where this is certainly false."""
-        return f"({self.value(writer)} is False)" if self.optional else f"(not {self.value(writer)})"
+        return self._fails(writer)
+
+    def _value(self, writer: Writer) -> str:
+        return f"(True if {self._holds(writer)} else False if {self._fails(writer)} else None)"
+
+    def _holds(self, writer: Writer) -> str:
+        return f"({self._value(writer)} is True)" if self.optional else self._value(writer)
+
+    def _fails(self, writer: Writer) -> str:
+        return f"({self._value(writer)} is False)" if self.optional else f"(not {self._value(writer)})"
 
 
-def given(writer: Writer, terms: list[Term], build: Callable[[list[str]], str], otherwise: str) -> str:
-    """`build` over the values of `terms`, or `otherwise` where one of them is unknown."""
+def reading(function: Callable[[Writer], str]) -> Callable[[View], Any]:
+    """What one of a term's three forms returns for the examined view."""
+    writer = Writer()
+    return writer.function(function(writer))
+
+
+def _operands(writer: Writer, terms: Sequence[Term]) -> tuple[str, list[str]]:
+    """A test that no value is unknown, empty where none can be, and the names of the values after it."""
     checks, names = [], []
     for term in terms:
         code = term.value(writer)
@@ -74,10 +90,7 @@ def given(writer: Writer, terms: list[Term], build: Callable[[list[str]], str], 
             checks.append(f"({name} := {code}) is not None")
             code = name
         names.append(code)
-    if not checks:
-        return build(names)
-    test = " and ".join(checks)
-    return f"({test} and {build(names)})" if otherwise == "False" else f"({build(names)} if {test} else None)"
+    return " and ".join(checks), names
 
 
 @dataclass(slots=True)
@@ -88,7 +101,7 @@ class Constant(Term):
     kind: Kind
     optional: bool = False
 
-    def value(self, writer: Writer) -> str:
+    def _value(self, writer: Writer) -> str:
         return writer.constant(self.constant)
 
 
@@ -96,11 +109,11 @@ class Constant(Term):
 class Measure(Term):
     """A length with its unit, in the unit of the examined view; unknown where the drawing states none."""
 
-    by_unit: Mapping[Unit | None, Decimal]
+    by_unit: Mapping[Unit, Decimal]
     kind: Kind
     optional: bool = True
 
-    def value(self, writer: Writer) -> str:
+    def _value(self, writer: Writer) -> str:
         return f"{writer.constant(self.by_unit)}.get({EXAMINED}.unit)"
 
 
@@ -112,7 +125,7 @@ class Variable(Term):
     kind: Kind
     optional: bool = False
 
-    def value(self, writer: Writer) -> str:
+    def _value(self, writer: Writer) -> str:
         return self.name
 
 
@@ -125,8 +138,9 @@ class Fact(Term):
     kind: Kind
     optional: bool
 
-    def value(self, writer: Writer) -> str:
-        return given(writer, [self.owner], lambda names: f"{names[0]}.{self.name}", "None")
+    def _value(self, writer: Writer) -> str:
+        test, (owner,) = _operands(writer, [self.owner])
+        return f"({owner}.{self.name} if {test} else None)" if test else f"{owner}.{self.name}"
 
 
 @dataclass(slots=True)
@@ -137,39 +151,40 @@ class Arithmetic(Term):
     left: Term
     right: Term
     kind: Kind
-    optional: bool
+    optional: bool = field(init=False)
 
-    def value(self, writer: Writer) -> str:
-        def build(names: list[str]) -> str:
-            left, right = names
-            return f"divide({left}, {right})" if self.operator == "/" else f"({left} {self.operator} {right})"
+    def __post_init__(self) -> None:
+        self.optional = self.left.optional or self.right.optional or self.operator == "/"
 
-        return given(writer, [self.left, self.right], build, "None")
+    def _value(self, writer: Writer) -> str:
+        test, (left, right) = _operands(writer, [self.left, self.right])
+        code = f"divide({left}, {right})" if self.operator == "/" else f"({left} {self.operator} {right})"
+        return f"({code} if {test} else None)" if test else code
 
 
 @dataclass(slots=True)
 class Comparison(Term):
-    """Two values compared; `operator` and `inverse` are Python's."""
+    """Two values compared, or a value looked for in a list; `operator` is Python's."""
 
     operator: str
-    inverse: str
     left: Term
     right: Term
     kind: Kind = FLAG
+    optional: bool = field(init=False)
 
-    @property
-    def optional(self) -> bool:  # type: ignore[override]
-        return self.left.optional or self.right.optional
+    def __post_init__(self) -> None:
+        self.optional = self.left.optional or self.right.optional
 
-    def holds(self, writer: Writer) -> str:
+    def _holds(self, writer: Writer) -> str:
         return self._written(writer, self.operator)
 
-    def fails(self, writer: Writer) -> str:
-        return self._written(writer, self.inverse)
+    def _fails(self, writer: Writer) -> str:
+        return self._written(writer, OPPOSITE[self.operator])
 
     def _written(self, writer: Writer, operator: str) -> str:
-        build = lambda names: f"{names[0]} {operator} {names[1]}"  # noqa: E731 - one use, one line
-        return f"({given(writer, [self.left, self.right], build, 'False')})"
+        test, (left, right) = _operands(writer, [self.left, self.right])
+        code = f"{left} {operator} {right}"
+        return f"({test} and {code})" if test else f"({code})"
 
 
 @dataclass(slots=True)
@@ -178,15 +193,15 @@ class Negation(Term):
 
     inner: Term
     kind: Kind = FLAG
+    optional: bool = field(init=False)
 
-    @property
-    def optional(self) -> bool:  # type: ignore[override]
-        return self.inner.optional
+    def __post_init__(self) -> None:
+        self.optional = self.inner.optional
 
-    def holds(self, writer: Writer) -> str:
+    def _holds(self, writer: Writer) -> str:
         return self.inner.fails(writer)
 
-    def fails(self, writer: Writer) -> str:
+    def _fails(self, writer: Writer) -> str:
         return self.inner.holds(writer)
 
 
@@ -195,17 +210,17 @@ class Junction(Term):
     """Several conditions joined by `and`, or by `or`."""
 
     word: str
-    inner: list[Term]
+    inner: Sequence[Term]
     kind: Kind = FLAG
+    optional: bool = field(init=False)
 
-    @property
-    def optional(self) -> bool:  # type: ignore[override]
-        return any(term.optional for term in self.inner)
+    def __post_init__(self) -> None:
+        self.optional = any(term.optional for term in self.inner)
 
-    def holds(self, writer: Writer) -> str:
+    def _holds(self, writer: Writer) -> str:
         return "(" + f" {self.word} ".join(term.holds(writer) for term in self.inner) + ")"
 
-    def fails(self, writer: Writer) -> str:
+    def _fails(self, writer: Writer) -> str:
         opposite = "or" if self.word == "and" else "and"
         return "(" + f" {opposite} ".join(term.fails(writer) for term in self.inner) + ")"
 
@@ -219,12 +234,15 @@ class Quantified(Term):
     items: Term
     condition: Term
     kind: Kind = FLAG
-    optional: bool = True
+    optional: bool = field(init=False)
 
-    def holds(self, writer: Writer) -> str:
+    def __post_init__(self) -> None:
+        self.optional = self.items.optional or self.condition.optional
+
+    def _holds(self, writer: Writer) -> str:
         return self._written(writer, "all" if self.every else "any", self.condition.holds(writer))
 
-    def fails(self, writer: Writer) -> str:
+    def _fails(self, writer: Writer) -> str:
         return self._written(writer, "any" if self.every else "all", self.condition.fails(writer))
 
     def _written(self, writer: Writer, function: str, condition: str) -> str:
@@ -239,13 +257,14 @@ class CountOf(Term):
 
     items: Term
     kind: Kind = COUNT
+    optional: bool = field(init=False)
 
-    @property
-    def optional(self) -> bool:  # type: ignore[override]
-        return self.items.optional
+    def __post_init__(self) -> None:
+        self.optional = self.items.optional
 
-    def value(self, writer: Writer) -> str:
-        return given(writer, [self.items], lambda names: f"len({names[0]})", "None")
+    def _value(self, writer: Writer) -> str:
+        test, (items,) = _operands(writer, [self.items])
+        return f"(len({items}) if {test} else None)" if test else f"len({items})"
 
 
 @dataclass(slots=True)
@@ -258,7 +277,7 @@ class CountWhere(Term):
     kind: Kind = COUNT
     optional: bool = True
 
-    def value(self, writer: Writer) -> str:
+    def _value(self, writer: Writer) -> str:
         items, name = writer.fresh(), self.variable.name
         holds, fails = self.condition.holds(writer), self.condition.fails(writer)
         known = f"all({holds} or {fails} for {name} in {items})"
@@ -274,11 +293,8 @@ class Known(Term):
     kind: Kind = FLAG
     optional: bool = False
 
-    def value(self, writer: Writer) -> str:
+    def _value(self, writer: Writer) -> str:
         return f"({self.inner.value(writer)} is not None)"
 
-    def holds(self, writer: Writer) -> str:
-        return self.value(writer)
-
-    def fails(self, writer: Writer) -> str:
+    def _fails(self, writer: Writer) -> str:
         return f"({self.inner.value(writer)} is None)"

@@ -1,0 +1,130 @@
+"""Builds a rule from its sheet: checks every text, and tells every mistake at once."""
+
+from collections.abc import Callable, Iterator, Mapping
+from dataclasses import dataclass, field
+from typing import TypeVar
+
+from calloutlint.errors import RuleSheetError
+from calloutlint.facts.view import View
+from calloutlint.rulebook.correction import Correction, correction
+from calloutlint.rulebook.finding import GRADES
+from calloutlint.rulebook.holds import holding
+from calloutlint.rulebook.kinds import FLAG, Thing, single
+from calloutlint.rulebook.message import Message, message, slot
+from calloutlint.rulebook.resolve import condition, expression
+from calloutlint.rulebook.rule import Rule, Wording
+from calloutlint.rulebook.scope import Scope
+from calloutlint.rulebook.sheet import Filed, LimitAmount, Sheet
+from calloutlint.rulebook.terms import Constant, Measure, Term
+from calloutlint.rulebook.text_error import TextError, nearest
+
+T = TypeVar("T")
+
+ALWAYS: Term = Constant(constant=True, kind=FLAG)
+
+
+def build_rule(filed: Filed, subjects: Mapping[str, type[View]]) -> Rule:
+    """The rule of a sheet, every text of it checked against the facts of the subject that it examines.
+
+    Raises:
+        RuleSheetError: something in it is wrong; the message tells each mistake with its key and place.
+    """
+    sheet = filed.sheet
+    view = subjects.get(sheet.examine)
+    if view is None:
+        problem = f"'{sheet.examine}' is no subject{nearest(sheet.examine, subjects)}"
+        raise RuleSheetError(f"{filed.file}: key 'examine': {problem}")
+    reader = _Reader(filed.file, Scope(view))
+    reader.scope = Scope(view, dict(_limits(sheet.limits, reader)))
+    rule = Rule(
+        sheet=sheet,
+        view=view,
+        when=reader.read("when", sheet.when, condition, ALWAYS) if sheet.when else None,
+        demand=reader.read("demand", sheet.demand, condition, ALWAYS),
+        wordings=(*_variants(sheet, reader), _own_wording(sheet, reader)),
+        stands_on=reader.read("stands_on", sheet.stands_on, _place, None) if sheet.stands_on else None,
+        holdings=tuple(holding(text) for text in sheet.holds),
+    )
+    if reader.problems:
+        raise RuleSheetError("\n".join(reader.problems))
+    return rule
+
+
+@dataclass
+class _Reader:
+    """Reads the texts of one sheet and keeps what is wrong with them."""
+
+    file: str
+    scope: Scope
+    problems: list[str] = field(default_factory=list)
+
+    def read(self, key: str, text: str, form: Callable[[str, Scope], T], otherwise: T) -> T:
+        """What `form` makes of a text; `otherwise`, and one problem more, where it is wrong."""
+        try:
+            return form(text, self.scope)
+        except TextError as error:
+            self.problems.append(f"{self.file}: key '{key}': {error.shown_in(text)}")
+            return otherwise
+
+    def message(self, key: str, text: str | None, figures: list[str]) -> Message | None:
+        if text is None:
+            return None
+        slots = [self.read("figures", name, slot, None) for name in figures]
+        said = self.read(key, text, message, Message(()))
+        return Message(said.pieces, tuple(slot for slot in slots if slot))
+
+    def correction(self, key: str, text: str | None) -> Correction | None:
+        return None if text is None else self.read(key, text, correction, None)
+
+
+def _variants(sheet: Sheet, reader: _Reader) -> Iterator[Wording]:
+    for number, stated in enumerate(sheet.variant, start=1):
+        key = f"variant.{number}"
+        yield Wording(
+            when=reader.read(f"{key}.when", stated.when, condition, ALWAYS),
+            grade=GRADES[stated.grade] if stated.grade else None,
+            say=reader.message(f"{key}.say", stated.say, sheet.figures),
+            assumed=reader.message(f"{key}.assumed", stated.assumed, []),
+            correction=reader.correction(f"{key}.redline", stated.redline),
+        )
+
+
+def _own_wording(sheet: Sheet, reader: _Reader) -> Wording:
+    return Wording(
+        when=ALWAYS,
+        grade=GRADES[sheet.grade],
+        say=reader.message("say", sheet.say, sheet.figures),
+        assumed=reader.message("assumed", sheet.assumed, []),
+        correction=reader.correction("redline", sheet.redline),
+    )
+
+
+def _place(text: str, scope: Scope) -> Term | None:
+    term = expression(text, scope)
+    if not isinstance(single(term.kind), Thing):
+        raise TextError(f"a finding cannot stand on {term.kind.name}", 0, len(text))
+    return term
+
+
+def _limits(stated: Mapping[str, LimitAmount], reader: _Reader) -> Iterator[tuple[str, Term]]:
+    for name, amount in stated.items():
+        if reader.scope.lookup(name) is not None:
+            reader.problems.append(
+                f"{reader.file}: key 'limits.{name}': '{name}' already means something in a rule"
+            )
+            continue
+        term = reader.read(f"limits.{name}", str(amount), limit, None)
+        if term is not None:
+            yield name, term
+
+
+def limit(text: str, scope: Scope) -> Term | None:
+    """A limit that a sheet states.
+
+    Raises:
+        TextError: it is not a plain number, or a length or an angle with its unit.
+    """
+    term = expression(text, scope)
+    if not isinstance(term, Constant | Measure):
+        raise TextError("a limit is a number, or a length or an angle with its unit", 0, len(text))
+    return term
