@@ -43,8 +43,10 @@ def understand(parser: Parser, arguments: Sequence[str] | None) -> argparse.Name
     unknown = [word for word in rest[:dashes] if word.startswith("-") and word != "-"]
     if unknown or (rest and not hasattr(options, "paths")):
         raise CalloutlintError(_unknown(command, (unknown or rest)[0]))
-    if rest:
-        options.paths += [Path(word) for index, word in enumerate(rest) if index != dashes]
+    if hasattr(options, "paths"):
+        options.paths = [*options.paths, *(Path(word) for index, word in enumerate(rest) if index != dashes)]
+        if not options.paths:
+            raise CalloutlintError(f"'{command.prog}' needs a PATH: a callout sheet, or a folder of sheets.")
     return options
 
 
@@ -77,11 +79,10 @@ _ARGUMENT = re.compile(r"argument (\S+): (.+)", re.DOTALL)
 def _sentence(parser: argparse.ArgumentParser, message: str) -> str:
     """What argparse says, in the words of this program."""
     if match := _CHOICE.fullmatch(message):
-        known = [name.strip("' ") for name in match[3].split(",")]
-        given = match[2].strip("'\"")
-        return f"There is no command '{given}'.{_nearest(given, known)} The commands are {', '.join(known)}."
+        given, known = match[2].strip("'\""), _commands(parser)
+        return f"'{parser.prog}' knows no '{given}'.{_nearest(given, known)} It knows {', '.join(known)}."
     if match := _MISSING.fullmatch(message):
-        return f"'{parser.prog}' needs {match[1]}. {_see(parser)}"
+        return f"'{parser.prog}' needs {_one_of(_commands(parser)) or match[1]}. {_see(parser)}"
     if match := _ARGUMENT.fullmatch(message):
         told = match[2] if match[2].endswith(".") else f"{match[2]}."
         return (
@@ -92,10 +93,19 @@ def _sentence(parser: argparse.ArgumentParser, message: str) -> str:
     return f"{message[:1].upper()}{message[1:]}. {_see(parser)}"
 
 
+def _commands(parser: argparse.ArgumentParser) -> list[str]:
+    choices = (action.choices for action in parser._actions if isinstance(action, argparse._SubParsersAction))
+    return [name for names in choices for name in names]
+
+
+def _one_of(names: Sequence[str]) -> str:
+    return f"one of {', '.join(names)}" if names else ""
+
+
 def paths_argument(parser: Parser) -> None:
     """The drawings to work on."""
     parser.add_argument(
-        "paths", type=Path, nargs="+", metavar="PATH", help="a callout sheet, or a folder of sheets"
+        "paths", type=Path, nargs="*", metavar="PATH", help="a callout sheet, or a folder of sheets"
     )
     parser.set_defaults(parser=parser)
 

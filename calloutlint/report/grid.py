@@ -7,6 +7,7 @@ from rich.cells import cell_len
 
 from calloutlint.report.canvas import Canvas
 from calloutlint.report.styles import Glyphs
+from calloutlint.report.wrap import breaks
 
 _LIGHT, _HEAVY = 1, 2
 
@@ -83,7 +84,7 @@ def _split(cell: Cell, width: int) -> list[Cell]:
     """A compartment too wide for any line, cut into several; letters stay on the first."""
     if cell.width <= width + 2:
         return [cell]
-    texts = [cell.text[start : start + width] for start in range(0, len(cell.text), width)]
+    texts = [cell.text[start:end] for start, end in breaks(cell.text, width)]
     return [
         replace(cell, text=text, letters="" if number else cell.letters) for number, text in enumerate(texts)
     ]

@@ -2,18 +2,16 @@
 
 import unicodedata
 
+from calloutlint.callouts.spelling import SPELLINGS
 from calloutlint.callouts.write import Style
 
-# The ASCII forms of canonical text, and of the signs that messages and titles use besides.
-_ASCII = {
-    "⏤": "STR", "⏥": "FLAT", "○": "CIR", "⌭": "CYL", "⌒": "LPROF", "⌓": "SPROF", "∠": "ANG", "⟂": "PERP",
-    "∥": "PAR", "⌖": "POS", "◎": "CONC", "⌯": "SYM", "↗": "CRUN", "⌰": "TRUN",
-    "⌀": "DIA ", "□": "SQ ", "↧": "DEPTH", "⌴": "CBORE", "⌵": "CSK", "▷": "TRANSLATION", "△": "DYNAMIC",
-    "±": "+/-", "°": " DEG", "×": "x", "−": "-", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-",
-    "→": "->", "↔": "<->", "←": "<-", "≤": "<=", "≥": ">=", "≠": "!=", "√": "sqrt", "²": "^2", "³": "^3",
-    "‘": "'", "’": "'", "“": '"', "”": '"', "„": '"', "⟨": "<", "⟩": ">", "µ": "u", "μ": "u",
-    "½": "1/2", "¼": "1/4", "¾": "3/4", "\N{NO-BREAK SPACE}": " ",
+# Signs that messages and titles use beside the symbols of callouts, and symbols that need a space after them.
+_SIGNS = {
+    "⌀": "DIA ", "□": "SQ ", "°": " DEG", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-", "×": "x", "←": "<-",
+    "≤": "<=", "≥": ">=", "≠": "!=", "√": "sqrt", "²": "^2", "³": "^3", "µ": "u", "μ": "u",
+    "‘": "'", "’": "'", "“": '"', "”": '"', "„": '"', "⟨": "<", "⟩": ">", "\N{NO-BREAK SPACE}": " ",
 }  # fmt: skip
+_ASCII = {row.symbol: row.ascii for row in SPELLINGS if not row.symbol.isascii()} | _SIGNS
 
 _UNSEEN = {"Cc", "Cf", "Cs", "Co", "Cn", "Zl", "Zp"}
 
@@ -35,8 +33,6 @@ def _visible(character: str) -> str:
 def _ascii(character: str) -> str:
     if character in _ASCII:
         return _ASCII[character]
-    if "Ⓐ" <= character <= "Ⓩ":
-        return f"({chr(ord(character) - ord('Ⓐ') + ord('A'))})"
     shown = _visible(character)
     if shown.isascii():
         return shown
