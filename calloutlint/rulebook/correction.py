@@ -53,7 +53,7 @@ class Change:
             return None
         part = tuple(item.part for item in target) if isinstance(target, tuple) else target.part
         value = new if new is None or isinstance(new, str | Decimal) else Decimal(new)
-        return Edit(self.verb, part, self.word, value)
+        return Edit(self.verb, self.word, part, value)
 
 
 @dataclass(frozen=True, slots=True)

@@ -37,8 +37,8 @@ class Edit:
     """
 
     verb: str
+    word: str | None
     target: object
-    word: str | None = None
     value: Decimal | str | None = None
 
 

@@ -11,7 +11,7 @@ from calloutlint.rulebook.figures import figure, written
 from calloutlint.rulebook.kinds import ANGLE, FLAG, LENGTH, QUANTITIES, Kind, Listing, Thing, members, single
 from calloutlint.rulebook.resolve import expression
 from calloutlint.rulebook.scope import Scope, follow
-from calloutlint.rulebook.terms import Term, reading
+from calloutlint.rulebook.terms import EachFact, Term, reading
 from calloutlint.rulebook.text_error import TextError
 
 _PIECE = re.compile(r"\{\{|\}\}|\{([^{}]*)\}|[{}]")
@@ -110,11 +110,15 @@ def slot(text: str, scope: Scope, offset: int = 0) -> Slot:
 
 
 def _shown(term: Term) -> Term:
-    """What is written for a term: for a thing, its value, else its text as written, else its name."""
-    facts = members(term.kind)
+    """What is written: for a thing, and for each of a list of things, its value, else its text or name."""
+    facts = members(single(term.kind))
     shown = (facts[name] for name in _SHOWN if name in facts and _writable(facts[name].kind))
     chosen = next(shown, None)
-    return follow(term, chosen) if chosen else term
+    if chosen is None:
+        return term
+    if isinstance(term.kind, Listing):
+        return EachFact(term, chosen.name, Listing(term.kind.name, chosen.kind))
+    return follow(term, chosen)
 
 
 def _writable(kind: Kind) -> bool:

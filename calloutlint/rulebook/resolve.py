@@ -136,11 +136,11 @@ class Resolver:
     def _product(self, tree: Tree[Token]) -> Term:
         return self._chain(tree, _scaled)
 
-    def _chain(self, tree: Tree[Token], kind_of: "Callable[[str, Kind, Kind, Syntax], Kind]") -> Term:
+    def _chain(self, tree: Tree[Token], kind_of: Callable[[str, Term, Term, Syntax], Kind]) -> Term:
         left = self.quantity(tree.children[0])
         for sign, operand in zip(tree.children[1::2], tree.children[2::2], strict=True):
             right = self.quantity(operand)
-            left = _arithmetic(str(sign), left, right, kind_of(str(sign), left.kind, right.kind, operand))
+            left = _arithmetic(str(sign), left, right, kind_of(str(sign), left, right, operand))
         return left
 
     def _listing(self, tree: Tree[Token]) -> Term:
@@ -256,14 +256,17 @@ def _nil(term: Term, other: Term) -> bool:
     return isinstance(term, Constant) and term.constant == 0 and other.kind in QUANTITIES
 
 
-def _added(sign: str, left: Kind, right: Kind, at: Syntax) -> Kind:
-    if not comparable(left, right):
+def _added(sign: str, left: Term, right: Term, at: Syntax) -> Kind:
+    if _nil(left, right):
+        return right.kind
+    if not (comparable(left.kind, right.kind) or _nil(right, left)):
         words = "added to" if sign == "+" else "taken from"
-        raise TextError(f"{right.name} cannot be {words} {left.name}", *place(at))
-    return NUMBER if NUMBER in {left, right} else left
+        raise TextError(f"{right.kind.name} cannot be {words} {left.kind.name}", *place(at))
+    return NUMBER if right.kind is NUMBER else left.kind
 
 
-def _scaled(sign: str, left: Kind, right: Kind, at: Syntax) -> Kind:
+def _scaled(sign: str, multiplied: Term, by: Term, at: Syntax) -> Kind:
+    left, right = multiplied.kind, by.kind
     if sign == "*" and {left, right} == {COUNT}:
         return COUNT
     if sign == "*" and {left, right} & PLAIN_NUMBERS:

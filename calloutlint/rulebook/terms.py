@@ -144,6 +144,22 @@ class Fact(Term):
 
 
 @dataclass(slots=True)
+class EachFact(Term):
+    """A fact of every view in a list, as a list; unknown where one of them is."""
+
+    items: Term
+    name: str
+    kind: Kind
+    optional: bool = True
+
+    def _value(self, writer: Writer) -> str:
+        items, found = writer.fresh(), writer.fresh()
+        each = f"({found} := tuple(each.{self.name} for each in {items}))"
+        known = f"({items} := {self.items.value(writer)}) is not None and None not in {each}"
+        return f"({found} if {known} else None)"
+
+
+@dataclass(slots=True)
 class Arithmetic(Term):
     """Two quantities added, subtracted, multiplied or divided; a division by zero is unknown."""
 

@@ -49,7 +49,7 @@ def constant(kind: Kind, at: Syntax) -> Constant:
 
 
 def words_of(kind: Kind) -> list[str]:
-    """Every word that can be said of a thing: its yes-or-no facts, the words that its facts and lists may hold."""
+    """Every word that can be said of a thing: its yes-or-no facts, and the words of its facts and lists."""
     found: list[str] = []
     for member in members(kind).values():
         found += [member.name] if member.kind is FLAG else vocabulary(single(member.kind))
@@ -57,12 +57,10 @@ def words_of(kind: Kind) -> list[str]:
 
 
 def _only_fact(owner: Term, at: Syntax, names: list[str]) -> Fact:
-    said = phrase(at)
+    said, thing = phrase(at), owner.kind.name
     if not names:
-        raise TextError(
-            f"'{said}' says nothing of {owner.kind.name}{nearest(said, words_of(owner.kind))}", *place(at)
-        )
+        hint = nearest(said, words_of(owner.kind))
+        raise TextError(f"'{said}' says nothing of {thing}{hint}", *place(at))
     if len(names) > 1:
-        problem = f"'{said}' could be said of several facts of {owner.kind.name}: name {' or '.join(names)}"
-        raise TextError(problem, *place(at))
+        raise TextError(f"'{said}' could be said of several facts of {thing}: name one", *place(at))
     return follow(owner, members(owner.kind)[names[0]])
