@@ -18,7 +18,7 @@ _HEAD = re.compile(r"(?P<name>.*?)\s*=\s*(?P<holes>.*?)\s+with\s+(?P<rest>.+)", 
 _CLAUSE = re.compile(r"\s*[,;]\s*(?=(?:floating|fixed|projection|thickness)\b)", re.IGNORECASE)
 _HELD = re.compile(r"(?P<hold>floating|fixed)(?:\s+(?:through|into|in|to|by)?\s*(?P<holes>.+))?", re.IGNORECASE)
 _LENGTH = re.compile(
-    r"(?P<what>projection|thickness)\s*[=:]?\s*(?P<amount>\d+\s+\d+/\d+|\d+/\d+|\d*[.,]\d+|\d+)\s*"
+    r"(?P<what>projection|thickness)\s*[=:]?\s*(?P<amount>(?:\d+\s+)?\d+/[1-9]\d*|\d*[.,]\d+|\d+)\s*"
     r"(?P<unit>mm|in(?:ch(?:es)?)?\.?|[\"″])?",
     re.IGNORECASE,
 )

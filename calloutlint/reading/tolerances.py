@@ -3,7 +3,6 @@
 import re
 from collections.abc import Iterable
 from dataclasses import dataclass, field
-from decimal import Decimal
 
 from calloutlint.callouts.value import parse_value
 from calloutlint.model.drawing import GeneralTolerances, PlacesTolerance, Process
@@ -13,14 +12,14 @@ from calloutlint.units import Unit
 MOST_PLACES = 6
 
 _SPELLINGS = (
-    (re.compile(r"%%p|\+\s*/\s*-|\+-", re.IGNORECASE), "±"),
-    (re.compile(r"%%d|(?<=\d)\s*(?:degrees?|degs?)\b\.?|º|˚", re.IGNORECASE), "°"),
+    (re.compile(r"%%p|\\U\+00B1|<MOD-PM>|\+\s*/\s*-|\+-", re.IGNORECASE), "±"),
+    (re.compile(r"%%d|\\U\+00B0|<MOD-DEG>|(?<=\d)\s*(?:degrees?|degs?)\b\.?|º|˚", re.IGNORECASE), "°"),
     (re.compile(r"[′’]"), "'"),
     (re.compile(r"[″”]"), '"'),
     (re.compile(r"[‐‑–−]"), "-"),
 )
 _COUNTS = {"one": 1, "two": 2, "three": 3, "four": 4}
-_NUMBER = r"(?:\d+\s+\d+/\d+|\d+/\d+|\d*\.\d+|\d+\.?)"
+_NUMBER = r"(?:(?:\d+\s+)?\d+/[1-9]\d*|\d*\.\d+|\d+\.?(?!/))"
 _UNIT = r"(?:\s*(?P<unit>mm|in(?:ch(?:es)?)?\b\.?|\"))?"
 _AMOUNT = rf"[\s=:]*±\s*(?P<amount>{_NUMBER}){_UNIT}"
 _ANGLE = r"[\s=:]*±\s*(?:(?P<degrees>\d*\.?\d+)\s*(?:°|(?!['\d])))?\s*(?:(?P<minutes>\d+)\s*')?"
@@ -111,7 +110,7 @@ class _Found:
         if self.angle or not (degrees or minutes):
             return match[0]
         text = (f"{degrees}°" if degrees else "") + (f"{minutes}'" if minutes else "")
-        self.angle = Value(text, Decimal(degrees or 0) + Decimal(minutes or 0) / 60, Unit.DEGREE)
+        self.angle = parse_value(text, Unit.DEGREE)
         return ";"
 
     def for_fractions(self, match: re.Match[str]) -> str:

@@ -1,0 +1,80 @@
+"""A drawing written out as a callout sheet in canonical text, whatever it was read from."""
+
+from collections.abc import Iterable, Iterator
+
+from calloutlint.callouts.write import Style, write_callout
+from calloutlint.model.callout import Callout
+from calloutlint.model.drawing import Drawing
+from calloutlint.model.fastener import Hold, HoleRef, Joint
+from calloutlint.model.values import Value
+from calloutlint.reading.keys import READ
+from calloutlint.units import Unit
+
+_KEY_WIDTH = 12
+_PLAIN = str.maketrans({"±": "+/-", "°": "%%d", "⌀": "DIA ", "×": "x", "–": "-"})
+
+_SYMBOLIC = frozenset({"tolerances", "fastener", "joint"})
+
+
+def transcribe(drawing: Drawing, style: Style = Style.UNICODE) -> str:
+    """The sheet of a drawing. Read back, it gives an equal drawing, and the lines that were not understood."""
+    rows = [f"{key + ':':{_KEY_WIDTH}}{value}" for key, value in _title_block(drawing, style)]
+    rows.append("")
+    rows += _callouts(drawing.callouts, style)
+    strays = [line.text for line in drawing.lines if line.key is None]
+    return "\n".join([*rows, "", *strays] if strays else rows) + "\n"
+
+
+def joint_text(joint: Joint) -> str:
+    """A joint as a sheet or a package states it."""
+    clauses = [f"{joint.name} = {_holes(joint.holes)} with {joint.fastener.text}"]
+    if joint.hold:
+        way = "through" if joint.hold is Hold.FLOATING else "in"
+        clauses.append(f"{joint.hold} {way} {_holes(joint.mates)}" if joint.mates else str(joint.hold))
+    for what, length in (("projection", joint.projection), ("thickness", joint.thickness)):
+        if length:
+            clauses.append(f"{what} {_length(length)}")
+    return ", ".join(clauses)
+
+
+def _title_block(drawing: Drawing, style: Style) -> Iterator[tuple[str, str]]:
+    for key, value in _stated(drawing):
+        if value:
+            yield key, value.translate(_PLAIN) if style is Style.ASCII and key in _SYMBOLIC else value
+    for line in drawing.lines:
+        if line.key and (line.key not in READ or (not line.known and line.key != "tolerances")):
+            yield line.key, line.value
+
+
+def _stated(drawing: Drawing) -> Iterator[tuple[str, str | None]]:
+    yield "drawing", drawing.number
+    yield "revision", drawing.revision
+    yield "sheet", drawing.sheet
+    yield "title", drawing.title
+    yield "standard", drawing.standard and drawing.standard.written
+    yield "units", drawing.unit
+    yield "tolerances", drawing.general and drawing.general.written
+    yield "process", drawing.process and drawing.process.written
+    yield from (("fastener", fastener.text) for fastener in drawing.fasteners)
+    yield from (("joint", joint_text(joint)) for joint in drawing.joints)
+    yield from (("note", note) for note in drawing.notes)
+
+
+def _callouts(callouts: Iterable[Callout], style: Style) -> Iterator[str]:
+    tags = [f"{c.balloon} {c.zone}) " if c.zone else f"{c.balloon}) " for c in callouts]
+    width = max(map(len, tags), default=0)
+    for tag, callout in zip(tags, callouts, strict=True):
+        lines = write_callout(callout, style) or [""]
+        yield (tag.ljust(width) + lines[0]).rstrip()
+        yield from (" " * width + line for line in lines[1:])
+
+
+def _holes(holes: Iterable[HoleRef]) -> str:
+    """Holes of the sheet's own drawing first: a drawing that is named holds for the balloons after it."""
+    ordered = sorted(holes, key=lambda hole: hole.drawing is not None)
+    return " + ".join(f"{hole.drawing}:{hole.balloon}" if hole.drawing else hole.balloon for hole in ordered)
+
+
+def _length(length: Value) -> str:
+    own = {Unit.MM: " mm", Unit.INCH: " in"}.get(length.unit) if length.unit else None
+    return length.text + (own or "")

@@ -1,0 +1,222 @@
+"""The title block: standards, units, general tolerances, process, and keys known and unknown."""
+
+from decimal import Decimal
+
+import pytest
+
+from calloutlint.model.drawing import SheetLine, System
+from calloutlint.reading.keys import is_known, normal_key
+from calloutlint.reading.standards import read_standard, read_unit
+from calloutlint.reading.title_block import TitleBlock, read_title_block
+from calloutlint.reading.tolerances import read_general_tolerances, read_process
+from calloutlint.units import Unit
+
+ASME, ISO = System.ASME, System.ISO
+
+
+def block_of(*lines: str) -> TitleBlock:
+    pairs = []
+    for number, line in enumerate(lines, 1):
+        written, _, value = line.partition(":")
+        key = normal_key(written)
+        pairs.append(SheetLine(number, line, key, value.strip(), is_known(key)))
+    return read_title_block(pairs)
+
+
+@pytest.mark.parametrize(
+    ("written", "system", "edition"),
+    [
+        ("ASME Y14.5-2018", ASME, 2018),
+        ("ASME Y14.5-2009", ASME, 2009),
+        ("ASME Y14.5M-1994", ASME, 1994),
+        ("ANSI Y14.5M-1982", ASME, 1982),
+        ("ASME Y14.5", ASME, None),
+        ("ASME Y14.5M", ASME, None),
+        ("ASME Y 14.5 - 2009", ASME, 2009),
+        ("ASME Y14.5 2018", ASME, 2018),
+        ("ASME Y14.5–2018", ASME, 2018),
+        ("asmey14.5-2018", ASME, 2018),
+        ("Y14.5-2018 (R2024)", ASME, 2018),
+        ("ASME Y14.5M-94", ASME, 1994),
+        ("DIMENSIONS AND TOLERANCES PER ASME Y14.5-2018", ASME, 2018),
+        ("ISO 8015", ISO, None),
+        ("ISO 1101", ISO, None),
+        ("ISO GPS", ISO, None),
+        ("ISO-GPS", ISO, None),
+        ("ISO 1101:2017", ISO, 2017),
+        ("ISO 14405", ISO, None),
+        ("ISO 14405-1:2016", ISO, 2016),
+        ("ISO8015", ISO, None),
+        ("DIN EN ISO 8015", ISO, None),
+        ("ISO", ISO, None),
+        ("ASME Y14.5-2015", None, None),
+        ("ASME Y14.41-2019", None, None),
+        ("ASME Y14.5.1M-1994", None, None),
+        ("ISO 10110", None, None),
+        ("ISO 9001", None, None),
+        ("ASME Y14.5-2018 and ISO 1101", None, None),
+        ("company standard 12", None, None),
+    ],
+)
+def test_standard(written: str, system: System | None, edition: int | None) -> None:
+    standard = read_standard(written)
+    assert (standard.written, standard.system, standard.edition) == (written, system, edition)
+
+
+@pytest.mark.parametrize(
+    ("written", "unit"),
+    [
+        ("inch", Unit.INCH),
+        ("INCHES", Unit.INCH),
+        ("in", Unit.INCH),
+        ("in.", Unit.INCH),
+        ("mm", Unit.MM),
+        ("MILLIMETRES", Unit.MM),
+        ("millimeters", Unit.MM),
+        ("metric", Unit.MM),
+        ("ALL DIMENSIONS IN MM", Unit.MM),
+        ("inch [mm]", Unit.INCH),
+        ("mm [inch]", Unit.MM),
+        ("cm", None),
+        ("minutes", None),
+    ],
+)
+def test_units(written: str, unit: Unit | None) -> None:
+    assert read_unit(written) is unit
+
+
+@pytest.mark.parametrize(
+    ("written", "places"),
+    [
+        (".XX ±.01, .XXX ±.005", {2: ".01", 3: ".005"}),
+        (".XX%%p.01 .XXX%%p.005", {2: ".01", 3: ".005"}),
+        (".XX +/- .01; .XXX +/- .005", {2: ".01", 3: ".005"}),
+        (".xx = ±.01", {2: ".01"}),
+        (".00 ±.01, .000 ±.005", {2: ".01", 3: ".005"}),
+        ("X ±0.5, X.X ±0.2, X.XX ±0.05", {0: "0.5", 1: "0.2", 2: "0.05"}),
+        ("X ±0,5; X,X ±0,2", {0: "0.5", 1: "0.2"}),
+        ("2 PLACE DECIMALS ±.01, THREE PLACE ±.005", {2: ".01", 3: ".005"}),
+        ("FRACTIONS ±1/32, .XX ±.01", {0: "1/32", 2: ".01"}),
+        ("UNLESS OTHERWISE SPECIFIED .XX ±.01", {2: ".01"}),
+        ("±0.1", dict.fromkeys(range(7), "0.1")),
+    ],
+)
+def test_tolerances_by_places(written: str, places: dict[int, str]) -> None:
+    general = read_general_tolerances(written, Unit.INCH)
+    assert {tolerance.places: tolerance.amount.text for tolerance in general.places} == places
+    assert general.unread == ()
+
+
+@pytest.mark.parametrize(
+    ("written", "text", "degrees"),
+    [
+        ("angles ±1°", "1°", "1"),
+        ("ANGLES %%p1%%d", "1°", "1"),
+        ("ANGLES ±0°30'", "0°30'", "0.5"),
+        ("angular ±30'", "30'", "0.5"),
+        ("ANGLES +/- .5 DEG", ".5°", "0.5"),
+        ("angles ±0.5", "0.5°", "0.5"),
+    ],
+)
+def test_tolerance_of_angles(written: str, text: str, degrees: str) -> None:
+    angle = read_general_tolerances(written, Unit.MM).angle
+    assert angle is not None
+    assert (angle.text, angle.amount, angle.unit) == (text, Decimal(degrees), Unit.DEGREE)
+
+
+@pytest.mark.parametrize(
+    ("written", "linear", "geometrical"),
+    [
+        ("ISO 2768-m", "m", None),
+        ("ISO 2768-mK", "m", "K"),
+        ("ISO 2768-mK-E", "m", "K"),
+        ("ISO2768-1 m", "m", None),
+        ("ISO 2768 - m K", "m", "K"),
+        ("DIN ISO 2768-1-f", "f", None),
+        ("ISO 2768-1:1989-c", "c", None),
+        ("ISO 2768-V", "v", None),
+        ("ISO 2768-1 medium", "m", None),
+        ("ISO 2768-f, ISO 2768-2 H", "f", "H"),
+        ("ISO 8015, ISO 2768-mL", "m", "L"),
+    ],
+)
+def test_tolerance_classes_of_iso_2768(written: str, linear: str, geometrical: str | None) -> None:
+    general = read_general_tolerances(written, Unit.MM)
+    assert (general.iso_2768, general.iso_2768_2, general.unread) == (linear, geometrical, ())
+
+
+def test_a_unit_beside_an_amount_outranks_the_sheet() -> None:
+    (tolerance,) = read_general_tolerances(".XX ±0.25 mm", Unit.INCH).places
+    assert tolerance.amount.unit is Unit.MM
+
+
+@pytest.mark.parametrize(
+    ("written", "unread"),
+    [
+        ("ISO 2768-x", ("ISO 2768-x",)),
+        ("ISO 2768", ("ISO 2768",)),
+        ("see note 3", ("see note 3",)),
+        (".XX ±.01, castings by foundry", ("castings by foundry",)),
+        (".XX +.01/-.02", (".XX +.01/-.02",)),
+        (".XX ±1/0", (".XX ±1/0",)),
+        ("ISO 2768-m, ISO 2768-c", ("ISO 2768-c",)),
+    ],
+)
+def test_tolerances_not_understood_are_kept(written: str, unread: tuple[str, ...]) -> None:
+    assert read_general_tolerances(written, Unit.INCH).unread == unread
+
+
+def test_process_spread() -> None:
+    process = read_process("location 0.05, size 0,02 mm", Unit.INCH)
+    assert process is not None
+    assert process.location is not None
+    assert process.size is not None
+    assert (process.location.text, process.location.unit) == ("0.05", Unit.INCH)
+    assert (process.size.text, process.size.unit) == ("0.02", Unit.MM)
+    assert read_process("about a thou", Unit.INCH) is None
+
+
+def test_keys_stand_in_any_case_and_the_unit_holds_wherever_it_stands() -> None:
+    block = block_of("TOLERANCES: .XX ±.01", "Rev: C", "DRAWING: SG-2207", "Units: INCH")
+    assert block.texts == {"revision": "C", "drawing": "SG-2207"}
+    assert block.general is not None
+    assert block.general.places[0].amount.unit is Unit.INCH
+    assert all(line.known for line in block.lines)
+
+
+def test_repeatable_keys_collect() -> None:
+    block = block_of("note: A", "fastener: M6 hex head screw", "note: B", "fastener: M8 hex head screw")
+    assert block.notes == ["A", "B"]
+    assert [fastener.text for fastener in block.fasteners] == ["M6 hex head screw", "M8 hex head screw"]
+
+
+@pytest.mark.parametrize(
+    "key", ["material", "FINISH", "Scale", "weight", "drawn", "Checked by", "date", "part no."]
+)
+def test_usual_keys_are_known_and_unchecked(key: str) -> None:
+    (line,) = block_of(f"{key}: any").lines
+    assert line.known
+    assert line.reason is None
+
+
+@pytest.mark.parametrize(
+    ("line", "reason"),
+    [
+        ("colour: blue", "'colour' is no title-block key that is known"),
+        ("revison: B", "'revison' is no title-block key that is known"),
+        ("process: good", "'good' is no spread; expected such as location 0.05, size 0.02"),
+        (
+            "tolerances: as usual",
+            "not understood: 'as usual'; expected such as .XX ±.01, X.X ±0.2, angles ±1° or ISO 2768-m",
+        ),
+    ],
+)
+def test_a_line_not_understood_says_why(line: str, reason: str) -> None:
+    (read,) = block_of(line).lines
+    assert (read.known, read.reason) == (False, reason)
+
+
+def test_a_key_stated_twice_keeps_the_first() -> None:
+    block = block_of("drawing: A-1", "drawing: A-2")
+    assert block.texts["drawing"] == "A-1"
+    assert block.lines[1].reason == "'drawing' is stated a second time; the first is used"
