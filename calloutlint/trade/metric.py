@@ -77,7 +77,7 @@ def limits(form: ThreadForm, class_: str) -> ThreadLimits | None:
     before tolerances are applied. Sources: ISO 724, ISO 965-1.
     """
     match = _CLASS.fullmatch(class_)
-    if match is None:
+    if match is None or metric_tolerances.deviation(form.pitch, "h") is None:
         return None
     pitch_class, crest_class = match["pitch"], match["crest"] or match["pitch"]
     letters = {pitch_class[1], crest_class[1]}

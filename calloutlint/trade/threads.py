@@ -32,14 +32,10 @@ def form_of(thread: Thread) -> ThreadForm | None:
     """
     if thread.diameter is None:
         return None
-    pitch = pitch_of(thread)
-    if pitch is None:
-        return None
     if thread.system is ThreadSystem.METRIC:
-        return metric.thread(thread.diameter.amount, pitch, thread.series)
-    return unified.thread(
-        thread.diameter.amount, 1 / pitch if thread.tpi is None else thread.tpi.amount, thread.series
-    )
+        return metric.thread(thread.diameter.amount, pitch_of(thread), thread.series)
+    tpi = tpi_of(thread)
+    return None if tpi is None else unified.thread(thread.diameter.amount, tpi, thread.series)
 
 
 def limits_of(thread: Thread, class_: str | None = None) -> ThreadLimits | None:
@@ -55,14 +51,19 @@ def limits_of(thread: Thread, class_: str | None = None) -> ThreadLimits | None:
 
 def pitch_of(thread: Thread) -> Decimal | None:
     """Pitch in the thread's unit: as stated, else fixed by its series (`1/4 UNC`) or coarse (`M8`)."""
-    if thread.diameter is None:
-        return None
-    if thread.system is ThreadSystem.METRIC:
+    if thread.system is ThreadSystem.METRIC and thread.diameter is not None:
         return thread.pitch.amount if thread.pitch else metric.coarse_pitch(thread.diameter.amount)
-    if thread.system is not ThreadSystem.UNIFIED:
-        return None
-    tpi = thread.tpi.amount if thread.tpi else unified_series.only_tpi(thread.diameter.amount, thread.series)
+    tpi = tpi_of(thread)
     return None if tpi is None else 1 / tpi
+
+
+def tpi_of(thread: Thread) -> Decimal | None:
+    """Threads per inch of a Unified thread: as stated, else fixed by its series; None where it is open."""
+    if thread.system is not ThreadSystem.UNIFIED or thread.diameter is None:
+        return None
+    if thread.tpi is None:
+        return unified_series.only_tpi(thread.diameter.amount, thread.series)
+    return thread.tpi.amount if thread.tpi.amount > 0 else None
 
 
 def screws_into(screw: Thread, hole: Thread) -> bool | None:

@@ -100,9 +100,8 @@ def minor_tolerance(form: ThreadForm, class_: str) -> Decimal:
         least = Decimal("0.25") * pitch - Decimal("0.4") * pitch**2
         if form.diameter >= _QUARTER:
             return least
-    small = (
-        Decimal("0.05") * _pitch_two_thirds(form) + Decimal("0.03") * pitch / form.diameter - Decimal("0.002")
-    )
+    by_engagement = Decimal("0.03") * pitch / form.diameter
+    small = Decimal("0.05") * _pitch_two_thirds(form) + by_engagement - Decimal("0.002")
     return max(least, min(small, Decimal("0.394") * pitch))
 
 
