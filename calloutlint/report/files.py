@@ -21,7 +21,7 @@ def check_report_path(path: Path) -> None:
     """
     if path.suffix.lower() not in _WRITERS:
         known = ", ".join(_WRITERS)
-        given = f"'{path.suffix}'" if path.suffix else "no suffix"
+        given = f"'{path.suffix}'" if path.suffix else "none"
         raise CalloutlintError(
             f"No report can be written to '{path}': the suffix says which kind is wanted, and it has {given}. "
             f"What can be written now: {known}."
