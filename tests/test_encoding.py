@@ -9,6 +9,7 @@ from calloutlint.errors import SheetError
 from calloutlint.reading.encoding import LONGEST_LINE, Text, decode, encode, read_text_file, split_lines
 
 SHEET = "units: mm\r\n\r\n1) ⌀6.6 +0.2 0 THRU\r\n"
+UTF16 = "read as UTF-16 with a byte order mark"
 WESTERN = "units: mm\n1) Ø6.6 ±0.2 THRU 90°\n"
 
 
@@ -17,7 +18,7 @@ WESTERN = "units: mm\n1) Ø6.6 ±0.2 THRU 90°\n"
     [
         (SHEET.encode(), "utf-8", b"", None),
         (SHEET.encode("utf-8-sig"), "utf-8", b"\xef\xbb\xbf", "read as UTF-8 with a byte order mark"),
-        (SHEET.encode("utf-16"), "utf-16-le", b"\xff\xfe", "read as UTF-16 with a byte order mark"),
+        (SHEET.encode("utf-16"), "utf-16-le", b"\xff\xfe", UTF16),
         (
             b"\xfe\xff" + SHEET.encode("utf-16-be"),
             "utf-16-be",

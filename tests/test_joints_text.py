@@ -78,7 +78,7 @@ def test_lengths(text: str, amount: str, unit: Unit | None) -> None:
         ("x = 4 with M6, thickness 1/0", "'thickness 1/0' does not read"),
         (
             "x = 4 with M6, projection 1, projection 2",
-            "'projection 2' does not read; expected a length, such as projection",
+            "'projection 2' does not read; expected a length, such as",
         ),
         ("x = 4 with M6, fixed in B:2, floating", "'floating': how the joint is held is said twice"),
     ],

@@ -64,7 +64,7 @@ def _sheets(folder: Path, definition: Definition) -> list[Path]:
     found: dict[Path, None] = {}
     try:
         for number, pattern in enumerate(definition.drawings):
-            matches = [path for path in sorted(folder.glob(pattern)) if not path.is_dir()]
+            matches = [path for path in sorted(folder.glob(pattern)) if _is_file(path)]
             if not matches:
                 raise SheetError(f"{definition.file}: drawings[{number}]: no file matches {pattern!r}")
             found.update(dict.fromkeys(matches))
@@ -80,4 +80,8 @@ def _sheets(folder: Path, definition: Definition) -> list[Path]:
 
 
 def _is_sheet(path: Path) -> bool:
-    return path.suffix.lower() in READERS and not path.name.startswith(".") and not path.is_dir()
+    return path.suffix.lower() in READERS and _is_file(path)
+
+
+def _is_file(path: Path) -> bool:
+    return not path.name.startswith(".") and not path.is_dir()

@@ -29,10 +29,7 @@ _ISO = re.compile(
     re.IGNORECASE | re.VERBOSE,
 )
 _UNITS = (
-    (
-        Unit.INCH,
-        re.compile(r"\binch(?:es)?\b|\bin\b(?!\s+(?:mm|milli|inch|metric))|^\s*[\"″]\s*$", re.IGNORECASE),
-    ),
+    (Unit.INCH, re.compile(r"\binch(?:es)?\b|\bin\b(?!\s+(?:mm|milli|inch|metric))", re.IGNORECASE)),
     (Unit.MM, re.compile(r"\b(?:mm|millimet(?:re|er)s?|metric)\b", re.IGNORECASE)),
 )
 
