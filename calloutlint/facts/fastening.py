@@ -37,6 +37,16 @@ def floating_spare(inner_boundaries: Iterable[Decimal], fastener: Decimal) -> De
     return min(inner_boundaries) - fastener
 
 
+def floating_pair_spare(inner: Decimal, other_inner: Decimal, fastener: Decimal) -> Decimal:
+    """What two floating parts, and no others, have left over together: (IB1 + IB2)/2 - F.
+
+    Two parts share a fastener: one that is short by itself still goes together with one that has as much to
+    spare. Source: plane geometry; ASME Y14.5, Appendix B asks the formula of each part individually instead,
+    which holds for any number of parts.
+    """
+    return (inner + other_inner) / 2 - fastener
+
+
 def tilt_factor(projection: Decimal, depth: Decimal) -> Decimal:
     """How much the fixing hole's tolerance weighs without a projected zone: 1 + 2P/D, to 28 digits.
 
@@ -53,8 +63,9 @@ def fixing_demand(
 ) -> Decimal:
     """Clearance that the fixing hole's tolerance T2 uses up: T2 projected, T2(1 + 2P/D) without projected zone.
 
-    Give P and D only for a hole without a projected zone. Multiplied before it is divided, so that a result
-    that a decimal can hold is exact. Source and errors as for `tilt_factor`.
+    Give P and D only for a hole without a projected zone; where either is unknown, T2 is the least it can be.
+    Multiplied before it is divided, so that a result that a decimal can hold is exact. Source and errors as
+    for `tilt_factor`.
     """
     if projection is None or depth is None:
         return tolerance
