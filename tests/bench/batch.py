@@ -84,14 +84,22 @@ def callouts(seed: int = 1) -> Iterator[str]:
 
 
 def sheets(count: int, seed: int = 1) -> list[str]:
-    """`count` sheets of 40 callouts each; the first three of a sheet establish its datums A, B and C."""
+    """The text of `count` sheets of 40 callouts each."""
+    return [
+        "\n".join([_TITLE.format(number=number), *(f"{tag}) {text}" for tag, text in enumerate(texts, 1)), ""])
+        for number, texts in _numbered(count, seed)
+    ]
+
+
+def callout_lines(count: int, seed: int = 1) -> list[list[str]]:
+    """The lines of every callout of the same sheets, without their balloons."""
+    return [text.split("\n") for _, texts in _numbered(count, seed) for text in texts]
+
+
+def _numbered(count: int, seed: int) -> Iterator[tuple[int, list[str]]]:
+    """Sheet numbers from 1, each with its callouts; the first three establish the datums A, B and C."""
     supply = callouts(seed)
-    return [_sheet(number, supply) for number in range(1, count + 1)]
-
-
-def _sheet(number: int, supply: Iterator[str]) -> str:
-    size = f"{1 + number / 10000:.4f}"
-    datums = [text.format(size=size, digit=number % 9 + 1) for text in _DATUMS]
-    texts = datums + [next(supply) for _ in range(CALLOUTS_PER_SHEET - len(datums))]
-    tagged = (f"{balloon}) {text}" for balloon, text in enumerate(texts, 1))
-    return "\n".join([_TITLE.format(number=number), *tagged, ""])
+    for number in range(1, count + 1):
+        size = f"{1 + number / 10000:.4f}"
+        datums = [text.format(size=size, digit=number % 9 + 1) for text in _DATUMS]
+        yield number, datums + [next(supply) for _ in range(CALLOUTS_PER_SHEET - len(datums))]

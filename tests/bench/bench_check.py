@@ -1,0 +1,103 @@
+"""Times the program on 20,000 distinct callouts, and its start: `python -m tests.bench.bench_check`.
+
+Each stage runs in a process of its own after a short run on other callouts, so that none finds the memory
+of another warm. The figures of one run compare with one another, not with those of another machine.
+"""
+
+import subprocess
+import sys
+import tempfile
+from collections.abc import Callable, Sequence
+from concurrent.futures import ProcessPoolExecutor
+from multiprocessing import get_context
+from pathlib import Path
+from statistics import median
+from time import perf_counter
+
+from calloutlint.callouts.normal import normalise
+from calloutlint.callouts.parse import grammar, parse_callout
+from calloutlint.model.drawing import Package
+from calloutlint.reading.sheet import parse_sheet
+from calloutlint.rulebook.rulebook import load_rulebook
+from calloutlint.units import Unit
+from tests.bench.batch import CALLOUTS_PER_SHEET, callout_lines, sheets
+
+SHEETS = 500
+STARTS = 15
+
+
+def bare_parse(count: int, seed: int) -> float:
+    """Seconds for the parser alone, on lines that are normalised already."""
+    lines = [line for lines in callout_lines(count, seed) for line in lines]
+    texts = [(normalise(line).text, "lower" if line.startswith("|") else "line") for line in lines]
+    parse = grammar().parse
+    return seconds(lambda: [parse(text, start=start) for text, start in texts])
+
+
+def parse_and_build(count: int, seed: int) -> float:
+    """Seconds from the lines of the callouts to their parts."""
+    callouts = callout_lines(count, seed)
+    return seconds(lambda: [parse_callout(lines, Unit.INCH) for lines in callouts])
+
+
+def whole_check(count: int, seed: int) -> float:
+    """Seconds from the text of the sheets to the findings."""
+    texts, rulebook = sheets(count, seed), load_rulebook()
+    return seconds(
+        lambda: [
+            rulebook.check(Package("bench", (parse_sheet(text, f"{number}.txt"),)))
+            for number, text in enumerate(texts)
+        ]
+    )
+
+
+def seconds(work: Callable[[], object]) -> float:
+    """Seconds that the work takes."""
+    start = perf_counter()
+    work()
+    return perf_counter() - start
+
+
+def warm(stage: Callable[[int, int], float]) -> float:
+    """Seconds for a stage on the whole batch, after a short run on another one."""
+    stage(5, 2)
+    return stage(SHEETS, 1)
+
+
+def show_stages() -> None:
+    """Print what each stage takes for a callout, and how it compares with the first."""
+    base = None
+    for stage in (bare_parse, parse_and_build, whole_check):
+        with ProcessPoolExecutor(1, mp_context=get_context("spawn")) as process:
+            taken = process.submit(warm, stage).result()
+        base = base or taken
+        each = taken / (SHEETS * CALLOUTS_PER_SHEET)
+        print(f"{stage.__name__.replace('_', ' '):<18}{each * 1e6:8.1f} µs a callout{taken / base:7.2f} times")
+
+
+def start(arguments: Sequence[str]) -> float:
+    """Seconds that this interpreter takes with these arguments, start and end included."""
+    return seconds(lambda: subprocess.run([sys.executable, *arguments], stdout=subprocess.DEVNULL, check=False))
+
+
+def show_starts() -> None:
+    """Print the median start of `check` on one sheet, beside that of its two largest libraries alone."""
+    with tempfile.TemporaryDirectory() as folder:
+        sheet = Path(folder) / "bracket.txt"
+        sheet.write_text(sheets(1)[0], encoding="utf-8")
+        commands = {
+            "lark and pydantic": ["-c", "import lark, pydantic"],
+            "check one sheet": ["-m", "calloutlint", "check", str(sheet)],
+        }
+        rounds = [{name: start(command) for name, command in commands.items()} for _ in range(STARTS)]
+    base = None
+    for name in commands:
+        taken = median(times[name] for times in rounds[1:])
+        base = base or taken
+        print(f"{name:<18}{taken * 1e3:8.1f} ms a start  {taken / base:7.2f} times")
+
+
+if __name__ == "__main__":
+    print(f"{SHEETS * CALLOUTS_PER_SHEET} distinct callouts on {SHEETS} sheets")
+    show_stages()
+    show_starts()
