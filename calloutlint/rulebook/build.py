@@ -6,16 +6,20 @@ from typing import TypeVar
 
 from calloutlint.errors import RuleSheetError
 from calloutlint.facts.view import View
-from calloutlint.rulebook.correction import Correction, correction
+from calloutlint.rulebook.changes import correction
+from calloutlint.rulebook.code import Code
+from calloutlint.rulebook.correction import Correction
 from calloutlint.rulebook.finding import GRADES
 from calloutlint.rulebook.holds import holding
+from calloutlint.rulebook.index import required_words
 from calloutlint.rulebook.kinds import FLAG, Thing, single
-from calloutlint.rulebook.message import Message, message, slot
+from calloutlint.rulebook.message import Message
 from calloutlint.rulebook.resolve import condition, expression
 from calloutlint.rulebook.rule import Rule, Wording
 from calloutlint.rulebook.scope import Scope
 from calloutlint.rulebook.sheet import Filed, LimitAmount, Sheet
-from calloutlint.rulebook.terms import Constant, Measure, Term
+from calloutlint.rulebook.template import message, slot
+from calloutlint.rulebook.terms import Constant, Junction, Measure, Negation, Term, code_of
 from calloutlint.rulebook.text_error import TextError, nearest
 
 T = TypeVar("T")
@@ -36,14 +40,15 @@ def build_rule(filed: Filed, subjects: Mapping[str, type[View]]) -> Rule:
         raise RuleSheetError(f"{filed.file}: key 'examine': {problem}")
     reader = _Reader(filed.file, Scope(view))
     reader.scope = Scope(view, dict(_limits(sheet.limits, reader)))
+    when = reader.condition("when", sheet.when) if sheet.when else ALWAYS
+    demand = reader.condition("demand", sheet.demand)
     rule = Rule(
-        sheet=sheet,
-        view=view,
-        when=reader.read("when", sheet.when, condition, ALWAYS) if sheet.when else None,
-        demand=reader.read("demand", sheet.demand, condition, ALWAYS),
-        wordings=(*_variants(sheet, reader), _own_wording(sheet, reader)),
-        stands_on=reader.read("stands_on", sheet.stands_on, _place, None) if sheet.stands_on else None,
+        stated=sheet.model_dump(mode="json"),
         holdings=tuple(holding(text) for text in sheet.holds),
+        required_words=required_words(when),
+        broken=code_of(Junction("and", [when, Negation(demand)]).holds),
+        wordings=(*_variants(sheet, reader), _own_wording(sheet, reader)),
+        place=reader.read("stands_on", sheet.stands_on, _place, None) if sheet.stands_on else None,
     )
     if reader.problems:
         raise RuleSheetError("\n".join(reader.problems))
@@ -66,6 +71,9 @@ class _Reader:
             self.problems.append(f"{self.file}: key '{key}': {error.shown_in(text)}")
             return otherwise
 
+    def condition(self, key: str, text: str) -> Term:
+        return self.read(key, text, condition, ALWAYS)
+
     def message(self, key: str, text: str | None, figures: list[str]) -> Message | None:
         if text is None:
             return None
@@ -81,7 +89,7 @@ def _variants(sheet: Sheet, reader: _Reader) -> Iterator[Wording]:
     for number, stated in enumerate(sheet.variant, start=1):
         key = f"variant.{number}"
         yield Wording(
-            when=reader.read(f"{key}.when", stated.when, condition, ALWAYS),
+            when=code_of(reader.condition(f"{key}.when", stated.when).holds),
             grade=GRADES[stated.grade] if stated.grade else None,
             say=reader.message(f"{key}.say", stated.say, sheet.figures),
             assumed=reader.message(f"{key}.assumed", stated.assumed, []),
@@ -91,19 +99,19 @@ def _variants(sheet: Sheet, reader: _Reader) -> Iterator[Wording]:
 
 def _own_wording(sheet: Sheet, reader: _Reader) -> Wording:
     return Wording(
-        when=ALWAYS,
+        when=code_of(ALWAYS.holds),
         grade=GRADES[sheet.grade],
         say=reader.message("say", sheet.say, sheet.figures),
-        assumed=reader.message("assumed", sheet.assumed, []),
+        assumed=reader.message("assumed", sheet.assumed or None, []),
         correction=reader.correction("redline", sheet.redline),
     )
 
 
-def _place(text: str, scope: Scope) -> Term | None:
+def _place(text: str, scope: Scope) -> Code | None:
     term = expression(text, scope)
     if not isinstance(single(term.kind), Thing):
         raise TextError(f"a finding cannot stand on {term.kind.name}", 0, len(text))
-    return term
+    return code_of(term.value)
 
 
 def _limits(stated: Mapping[str, LimitAmount], reader: _Reader) -> Iterator[tuple[str, Term]]:

@@ -13,6 +13,7 @@ from calloutlint.rulebook.finding import Finding
 from calloutlint.rulebook.rule import Rule
 
 IN_FRAMES = {"frame", "datum"}
+NOWHERE = Span(-1, -1, -1)
 
 
 @dataclass(frozen=True, slots=True)
@@ -29,43 +30,46 @@ class Agenda:
 
 
 class Engine:
-    """Rules sorted for speed: by subject, by standard, by what `when` requires of one fact."""
+    """Rules sorted for speed: by subject, by standard, by the word that they require of one fact."""
 
     def __init__(self, rules: Sequence[Rule]) -> None:
         self._by_subject: dict[str, list[Rule]] = {}
         for rule in rules:
-            self._by_subject.setdefault(rule.view.subject, []).append(rule)
-        self._agendas: dict[tuple[str, Standard | None], Agenda] = {}
-        self._yields = {rule.id: frozenset(rule.sheet.yields_to) for rule in rules if rule.sheet.yields_to}
+            self._by_subject.setdefault(rule.subject, []).append(rule)
+        self._agendas: dict[Standard | None, dict[str, Agenda]] = {}
+        self._yields = {rule.id: frozenset(rule.yields_to) for rule in rules if rule.yields_to}
 
     def findings(self, views: Iterable[View]) -> list[Finding]:
         """What the rules find in the views, in their order, without what yields to another finding."""
         found = [(view, finding) for view in views for finding in self._about(view)]
-        return _unrepeated(self._yielded(found))
+        return _unrepeated(self._unyielding(found))
 
     def _about(self, view: View) -> Iterator[Finding]:
         if getattr(view.part, "doubtful", False) or getattr(view, "doubtful", False):
             return
-        for rule in self._agenda(view).rules(view):
-            if rule.fires(view):
+        drawing = getattr(view, "drawing_model", None)
+        agenda = self._agendas_under(drawing.standard if drawing else None).get(view.subject)
+        for rule in agenda.rules(view) if agenda else ():
+            if rule.broken.read(view):
                 finding = rule.judge(view)
                 if finding is not None:
                     yield finding
 
-    def _agenda(self, view: View) -> Agenda:
-        drawing = getattr(view, "drawing_model", None)
-        key = (view.subject, drawing.standard if drawing else None)
-        agenda = self._agendas.get(key)
-        if agenda is None:
-            rules = [rule for rule in self._by_subject.get(view.subject, []) if rule.applies_under(key[1])]
-            agenda = self._agendas[key] = agenda_of(rules)
-        return agenda
+    def _agendas_under(self, standard: Standard | None) -> dict[str, Agenda]:
+        agendas = self._agendas.get(standard)
+        if agendas is None:
+            agendas = {
+                subject: agenda_of([rule for rule in rules if rule.applies_under(standard)])
+                for subject, rules in self._by_subject.items()
+            }
+            self._agendas[standard] = agendas
+        return agendas
 
-    def _yielded(self, found: list[tuple[View, Finding]]) -> list[Finding]:
+    def _unyielding(self, found: list[tuple[View, Finding]]) -> list[Finding]:
         """The findings without those whose rule yields to another that found something in the same place."""
         kept = []
         for view, finding in found:
-            stronger = self._yields.get(finding.rule, frozenset())
+            stronger = self._yields.get(finding.rule)
             rivals = [(v, f) for v, f in found if f.rule in stronger] if stronger else []
             if not any(_same_place(v, f, view, finding) for v, f in rivals):
                 kept.append(finding)
@@ -80,10 +84,13 @@ def agenda_of(rules: Sequence[Rule]) -> Agenda:
     fact = facts.most_common(1)[0][0]
     words = {word for rule in rules for word in rule.required_words.get(fact, ())}
     always = tuple(rule for rule in rules if fact not in rule.required_words)
-    by_word = {
-        w: tuple(r for r in rules if fact not in r.required_words or w in r.required_words[fact]) for w in words
-    }
-    return Agenda(fact, always, by_word)
+    return Agenda(fact, always, {word: tuple(_possible(rules, fact, word)) for word in words})
+
+
+def _possible(rules: Sequence[Rule], fact: str, word: StrEnum) -> Iterator[Rule]:
+    for rule in rules:
+        if fact not in rule.required_words or word in rule.required_words[fact]:
+            yield rule
 
 
 def _same_place(view: View, finding: Finding, other_view: View, other: Finding) -> bool:
@@ -103,14 +110,9 @@ def _overlap(one: Span | None, other: Span | None) -> bool:
 
 def _unrepeated(findings: list[Finding]) -> list[Finding]:
     """Findings without those that say the same of the same part again."""
-    seen = set()
-    kept = []
-    for finding in findings:
-        key = (finding.rule, id(finding.drawing), id(finding.callout), id(finding.part), finding.message)
-        if key not in seen:
-            seen.add(key)
-            kept.append(finding)
-    return kept
+    first = {(f.rule, id(f.drawing), id(f.callout), id(f.part), f.message): f for f in reversed(findings)}
+    kept = {id(finding) for finding in first.values()}
+    return [finding for finding in findings if id(finding) in kept]
 
 
 def ordered(findings: list[Finding], package: Package) -> list[Finding]:
@@ -118,12 +120,11 @@ def ordered(findings: list[Finding], package: Package) -> list[Finding]:
     places = {id(drawing): number for number, drawing in enumerate(package.drawings)}
 
     def key(finding: Finding) -> tuple[object, ...]:
-        callout, span = finding.callout, finding.span or Span(-1, -1, -1)
-        line = callout.source[0].number if callout and callout.source else -1
+        callout, span = finding.callout, finding.span or NOWHERE
         return (
             places.get(id(finding.drawing), -1),
             balloon_key(callout.balloon) if callout else [],
-            line,
+            callout.source[0].number if callout and callout.source else -1,
             span.line,
             span.start,
             -finding.grade,

@@ -3,8 +3,9 @@
 from collections.abc import Mapping
 from enum import StrEnum
 
+from calloutlint.rulebook.code import EXAMINED
 from calloutlint.rulebook.kinds import Words
-from calloutlint.rulebook.terms import EXAMINED, Comparison, Constant, Fact, Junction, Term, Variable
+from calloutlint.rulebook.terms import Comparison, Constant, Fact, Junction, Term, Variable
 
 NOTHING: tuple[str, frozenset[StrEnum]] = ("", frozenset())
 

@@ -43,7 +43,7 @@ def prove(rulebook: Rulebook, ids: Sequence[str] = ()) -> list[Proof]:
 def prove_rule(rule: Rule, known: dict[str, Rule]) -> Proof:
     """Runs the cases of one rule; `known` are the rules that it may yield to, by id."""
     failures = list(_shortcomings(rule, known))
-    beside = [known[id_] for id_ in rule.sheet.yields_to if id_ in known]
+    beside = [known[id_] for id_ in rule.yields_to if id_ in known]
     for number, case in enumerate(rule.sheet.case, start=1):
         name = f"case {number}" + (f" ({case.note})" if case.note else "")
         failures += [f"{name}: {failure}" for failure in _run(rule, beside, case)]
@@ -56,7 +56,7 @@ def _shortcomings(rule: Rule, known: dict[str, Rule]) -> Iterator[str]:
     if found < CASES_FOUND or len(cases) - found < CASES_CLEAN:
         need = f"{CASES_FOUND} that are found and {CASES_CLEAN} that are clean"
         yield f"a sheet needs at least {need}; this one has {found} and {len(cases) - found}"
-    for id_ in rule.sheet.yields_to:
+    for id_ in rule.yields_to:
         if id_ not in known:
             yield f"it yields to {id_}, which is no rule"
 
@@ -106,7 +106,7 @@ def _drawing_name(drawing: Drawing) -> str:
 def _unsaid(rule: Rule, package: Package) -> Iterator[str]:
     """Findings that are lost because every message of the sheet meets an unknown value."""
     for view in walk(subjects(package)):
-        if view.subject == rule.view.subject and rule.fires(view) and rule.judge(view) is None:
+        if view.subject == rule.subject and rule.broken.read(view) and rule.judge(view) is None:
             yield "it fires, but its message meets a value that is unknown, so it stays silent"
 
 

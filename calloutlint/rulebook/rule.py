@@ -1,87 +1,103 @@
 """A rule ready to run: what it asks of a view, and what it says where the answer is no."""
 
-from collections.abc import Callable, Iterable, Mapping
+from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 from enum import StrEnum
 from functools import cached_property
-from typing import Any, TypeVar
+from typing import TYPE_CHECKING, Any, TypeVar
 
 from calloutlint.facts.view import View
 from calloutlint.model.drawing import Standard
+from calloutlint.rulebook.code import Code
 from calloutlint.rulebook.correction import Correction
-from calloutlint.rulebook.finding import Finding, Grade
+from calloutlint.rulebook.finding import GRADES, Finding, Grade
 from calloutlint.rulebook.holds import Holding, applies
-from calloutlint.rulebook.index import required_words
 from calloutlint.rulebook.message import Message
-from calloutlint.rulebook.sheet import Sheet
-from calloutlint.rulebook.terms import Term, Writer, reading
+
+if TYPE_CHECKING:
+    from calloutlint.rulebook.sheet import Sheet
 
 T = TypeVar("T")
 
 
-@dataclass(frozen=True)
+@dataclass(frozen=True, slots=True)
 class Wording:
     """What is said where `when` holds; None for what the next wording that holds says."""
 
-    when: Term
+    when: Code
     grade: Grade | None = None
     say: Message | None = None
     assumed: Message | None = None
     correction: Correction | None = None
 
-    @cached_property
-    def holds(self) -> Callable[[View], Any]:
-        """Whether it is certain that `when` holds."""
-        return reading(self.when.holds)
-
 
 @dataclass(frozen=True)
 class Rule:
-    """One rule; `wordings` end with the sheet's own, which always holds and says everything."""
+    """One rule, with its texts as code.
 
-    sheet: Sheet
-    view: type[View]
-    when: Term | None
-    demand: Term
-    wordings: tuple[Wording, ...]
-    stands_on: Term | None
+    `stated` is what its sheet states, as plain data. `broken` is true of a view where, for certain, `when`
+    holds and `demand` does not; it can be so only where each fact in `required_words` holds one of its words.
+    `wordings` end with the sheet's own, which always holds and says everything. `place` gives the view that a
+    finding stands on, None for the examined one.
+    """
+
+    stated: Mapping[str, Any]
     holdings: tuple[Holding, ...]
+    required_words: Mapping[str, frozenset[StrEnum]]
+    broken: Code
+    wordings: tuple[Wording, ...]
+    place: Code | None = None
 
-    @property
+    @cached_property
     def id(self) -> str:
         """Its id, `FIT-06`."""
-        return self.sheet.id
+        return str(self.stated["id"])
+
+    @cached_property
+    def subject(self) -> str:
+        """What it examines."""
+        return str(self.stated["examine"])
+
+    @property
+    def title(self) -> str:
+        """What is wrong where it finds something."""
+        return str(self.stated["title"])
+
+    @property
+    def grade(self) -> Grade:
+        """The grade of its findings, where no variant says otherwise."""
+        return GRADES[self.stated["grade"]]
+
+    @property
+    def yields_to(self) -> tuple[str, ...]:
+        """Rules whose finding in the same place takes the place of this one's."""
+        return tuple(self.stated["yields_to"])
+
+    @cached_property
+    def sheet(self) -> "Sheet":
+        """Its sheet as read."""
+        from calloutlint.rulebook.sheet import Sheet  # only listings and proofs pay for pydantic
+
+        return Sheet.model_validate(self.stated)
 
     def applies_under(self, standard: Standard | None) -> bool:
         """Whether it holds under the standard that a drawing states."""
         return applies(self.holdings, standard)
 
-    @cached_property
-    def required_words(self) -> Mapping[str, frozenset[StrEnum]]:
-        """Facts of the examined view that must hold one of a few words for it to fire, and those words."""
-        return required_words(self.when)
-
-    @cached_property
-    def fires(self) -> Callable[[View], Any]:
-        """Whether, for certain, `when` holds of a view and `demand` does not."""
-        writer = Writer()
-        fails = self.demand.fails(writer)
-        return writer.function(f"{self.when.holds(writer)} and {fails}" if self.when else fails)
-
     def judge(self, view: View) -> Finding | None:
-        """The finding about a view that the rule fires on; None where its message meets an unknown value."""
-        wordings = [wording for wording in self.wordings if wording.holds(view)]
+        """The finding about a view that breaks the rule; None where its message meets an unknown value."""
+        wordings = [wording for wording in self.wordings if wording.when.read(view)]
         said = _first(wording.say.say(view) for wording in wordings if wording.say)
         if said is None:
             return None
         assumed = _first(wording.assumed for wording in wordings)
         assumption = assumed.say(view) if assumed else None
         correction = _first(wording.correction for wording in wordings)
-        place = self._place(view)
+        place = self._place_of(view)
         return Finding(
             rule=self.id,
             grade=_first(wording.grade for wording in wordings) or Grade.OBSERVATION,
-            title=self.sheet.title,
+            title=self.title,
             message=said.text,
             figures=said.figures,
             assumed=assumption.text or None if assumption else None,
@@ -92,13 +108,9 @@ class Rule:
             edits=correction.edits(view) if correction else (),
         )
 
-    @cached_property
-    def _read_place(self) -> Callable[[View], Any]:
-        return reading(self.stands_on.value) if self.stands_on else lambda examined: examined
-
-    def _place(self, view: View) -> View:
-        """The view that the finding stands on: the examined one where the sheet names no other."""
-        place = self._read_place(view)
+    def _place_of(self, view: View) -> View:
+        """The view that the finding stands on: the examined one where the sheet names none, or it is unknown."""
+        place = self.place.read(view) if self.place else view
         if isinstance(place, tuple):
             place = place[0] if place else None
         return view if place is None else place

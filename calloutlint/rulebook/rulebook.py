@@ -28,7 +28,7 @@ class Rulebook:
     @cached_property
     def digest(self) -> str:
         """SHA-256 over what the rules say, the cases left out; it does not depend on where the files are."""
-        contents = [rule.sheet.model_dump(mode="json", exclude={"case"}) for rule in self.rules]
+        contents = [{key: rule.stated[key] for key in rule.stated if key != "case"} for rule in self.rules]
         return hashlib.sha256(json.dumps(contents, sort_keys=True).encode()).hexdigest()
 
     @cached_property

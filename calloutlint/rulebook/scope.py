@@ -6,6 +6,7 @@ from dataclasses import dataclass, field
 from lark import Token
 
 from calloutlint.facts.view import View
+from calloutlint.rulebook.code import EXAMINED
 from calloutlint.rulebook.kinds import (
     FLAG,
     Kind,
@@ -16,7 +17,7 @@ from calloutlint.rulebook.kinds import (
     vocabulary,
     with_article,
 )
-from calloutlint.rulebook.terms import EXAMINED, Constant, Fact, Term, Variable
+from calloutlint.rulebook.terms import Constant, Fact, Term, Variable
 from calloutlint.rulebook.text_error import TextError, nearest
 
 NEVER = "never"

@@ -74,7 +74,7 @@ class Sheet(Form):
     demand: Text
     say: Text
     figures: list[Text] = Field(default_factory=list)
-    assumed: str | None = None
+    assumed: str = ""
     redline: str = ""
     stands_on: str = ""
     yields_to: list[RuleId] = Field(default_factory=list)

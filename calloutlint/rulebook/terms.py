@@ -10,24 +10,18 @@ from dataclasses import dataclass, field
 from decimal import Decimal
 from typing import Any
 
-from calloutlint.facts.view import View
+from calloutlint.rulebook.code import EXAMINED, Code
 from calloutlint.rulebook.kinds import COUNT, FLAG, Kind
 from calloutlint.units import Unit
 
-EXAMINED = "examined"
 OPPOSITE = {"<": ">=", "<=": ">", ">": "<=", ">=": "<", "==": "!=", "!=": "==", "in": "not in"}
-
-
-def divide(dividend: Decimal | int, divisor: Decimal | int) -> Decimal | None:
-    """The quotient, unknown for a division by zero."""
-    return Decimal(dividend) / Decimal(divisor) if divisor else None
 
 
 @dataclass(slots=True)
 class Writer:
     """Names for constants and for values met on the way, while a condition is written as Python."""
 
-    constants: dict[str, Any] = field(default_factory=lambda: {"divide": divide})
+    constants: dict[str, Any] = field(default_factory=dict)
     named: int = 0
 
     def constant(self, value: Any) -> str:
@@ -40,10 +34,6 @@ class Writer:
         """A name not used before."""
         self.named += 1
         return f"v{self.named}"
-
-    def function(self, expression: str) -> Callable[[View], Any]:
-        """The function of the examined view that returns `expression`."""
-        return eval(f"lambda {EXAMINED}: {expression}", self.constants)  # type: ignore[no-any-return]
 
 
 class Term:
@@ -74,10 +64,10 @@ class Term:
         return f"({self._value(writer)} is False)" if self.optional else f"(not {self._value(writer)})"
 
 
-def reading(function: Callable[[Writer], str]) -> Callable[[View], Any]:
-    """What one of a term's three forms returns for the examined view."""
+def code_of(form: Callable[[Writer], str]) -> Code:
+    """One of a term's three forms, ready to run."""
     writer = Writer()
-    return writer.function(function(writer))
+    return Code(form(writer), writer.constants)
 
 
 def _operands(writer: Writer, terms: Sequence[Term]) -> tuple[str, list[str]]:
