@@ -103,7 +103,10 @@ def test_a_loop_of_folders_is_no_trap(folder: Path) -> None:
         ('drawings = "x.txt"', "drawings: 'x.txt' stands here; a list of texts was expected"),
         ("drawings = [1]", "drawings[0]: 1 stands here; a text was expected"),
         ('drawings = ["zz*.txt"]', "drawings[0]: no file matches 'zz*.txt'"),
-        ('drawings = ["/etc/*"]', "drawings: a pattern cannot be used: Non-relative patterns are unsupported"),
+        (
+            'drawings = ["/etc/*"]',
+            "drawings[0]: '/etc/*' is no pattern; expected one inside the folder, such as sg-*.txt",
+        ),
         ('gate = "urgent"', "gate: 'urgent' is no grade; expected critical, major, minor, observation"),
         ("gate = [1]", "gate: [1] is no grade; expected critical, major, minor, observation"),
         ('joints = ["x = TR-1:4"]', "joints[0]: 'x = TR-1:4' is no joint; expected " + FORM),
@@ -121,3 +124,18 @@ def test_the_demo_is_a_package_of_mating_drawings() -> None:
     assert sum(len(drawing.callouts) for drawing in demo.drawings) == 40
     assert len(demo.joints) == 4
     assert all(line.known for drawing in demo.drawings for line in drawing.lines)
+
+
+def test_paths_that_cannot_be_looked_at_say_so(tmp_path: Path) -> None:
+    (tmp_path / "a.txt").symlink_to(tmp_path / "a.txt")
+    assert "a.txt: the file cannot be read" in refusal(tmp_path / "a.txt")
+    assert "the file cannot be read" in refusal(tmp_path / ("x" * 300))
+
+
+def test_an_empty_definition_and_one_with_a_byte_order_mark_are_read(folder: Path) -> None:
+    (folder / "package.toml").write_bytes(b"")
+    assert len(read_package([folder]).drawings) == 2
+    (folder / "package.toml").write_bytes("\ufeffname = 'Rechen'\r\n".encode())
+    assert read_package([folder]).name == "Rechen"
+    (folder / "package.toml").write_bytes("name = 'Überlauf'".encode("cp1252"))
+    assert refusal(folder).endswith("package.toml: this is no TOML: the text is not UTF-8")

@@ -8,7 +8,7 @@ from typing import Any
 
 from calloutlint.errors import SheetError
 from calloutlint.model.fastener import HoleRef, Joint
-from calloutlint.reading.encoding import read_text_file
+from calloutlint.reading.files import is_file, read_bytes
 from calloutlint.reading.joints import JointTextError, parse_joint
 
 DEFINITION = "package.toml"
@@ -34,10 +34,12 @@ def read_definition(folder: Path) -> Definition:
     Raises `SheetError` naming the file and the key for unknown keys, wrong types and joints that do not read.
     """
     file = folder / DEFINITION
-    if not file.exists():
+    if not is_file(file):
         return Definition(file)
     try:
-        table = tomllib.loads(read_text_file(file).text.replace("\r\n", "\n"))
+        table = tomllib.loads(read_bytes(file).decode("utf-8-sig").replace("\r\n", "\n"))
+    except UnicodeDecodeError:
+        raise SheetError(f"{file}: this is no TOML: the text is not UTF-8") from None
     except tomllib.TOMLDecodeError as error:
         raise SheetError(f"{file}: this is no TOML: {error}") from None
     unknown = [key for key in table if key not in _CHECKS]

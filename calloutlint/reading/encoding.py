@@ -5,9 +5,9 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from calloutlint.errors import SheetError
+from calloutlint.reading.files import read_bytes
 
 LONGEST_LINE = 20_000
-LARGEST_FILE = 256 * 1024 * 1024
 
 _MARKS = (
     (b"\xef\xbb\xbf", "utf-8"),
@@ -55,7 +55,7 @@ class Text:
 
 def read_text_file(path: Path) -> Text:
     """The text of a file; `SheetError` where it cannot be opened, is too large or is no text."""
-    return decode(_read_bytes(path), str(path))
+    return decode(read_bytes(path), str(path))
 
 
 def decode(data: bytes, file: str = "sheet") -> Text:
@@ -93,23 +93,6 @@ def encode(text: Text, file: str = "sheet") -> bytes:
 def split_lines(text: str) -> list[str]:
     """The lines of a text without their ends; only CR LF, LF and CR end a line, as editors count them."""
     return _LINE_END.split(text)
-
-
-def _read_bytes(path: Path) -> bytes:
-    if path.is_dir():
-        raise SheetError(f"{path}: this is a folder; a file was expected")
-    try:
-        with path.open("rb") as stream:
-            data = stream.read(LARGEST_FILE + 1)
-    except FileNotFoundError:
-        raise SheetError(f"{path}: there is no such file") from None
-    except PermissionError:
-        raise SheetError(f"{path}: the file may not be read; permission is denied") from None
-    except OSError as error:
-        raise SheetError(f"{path}: the file cannot be read: {error.strerror or error}") from None
-    if len(data) > LARGEST_FILE:
-        raise SheetError(f"{path}: the file is larger than {LARGEST_FILE // 2**20} MB; split it into sheets")
-    return data
 
 
 def _guess(body: bytes, file: str) -> str:

@@ -7,10 +7,12 @@ from calloutlint import _resources
 from calloutlint.errors import SheetError
 from calloutlint.model.drawing import Drawing, Package
 from calloutlint.reading.definition import DEFINITION, GATES, Definition, read_definition
+from calloutlint.reading.files import is_folder
 from calloutlint.reading.sheet import read_sheet
 
 READERS: dict[str, Callable[[Path], Drawing]] = {".txt": read_sheet}
 """Suffixes that are taken from a folder, and what reads them; a file named outright is read as a sheet."""
+_PATTERN = "expected one inside the folder, such as sg-*.txt"
 
 
 def read_package(paths: Sequence[Path]) -> Package:
@@ -18,14 +20,15 @@ def read_package(paths: Sequence[Path]) -> Package:
 
     Raises `SheetError` with one line for each file that cannot be read, or for a broken package.toml.
     """
-    folders = {path: read_definition(path) for path in map(_folder_of, paths) if path.is_dir()}
+    paths = [path.parent if path.name == DEFINITION else path for path in paths]
+    folders = {path: read_definition(path) for path in paths if is_folder(path)}
     files: dict[Path, Path] = {}
-    for path in map(_folder_of, paths):
+    for path in paths:
         for file in _sheets(path, folders[path]) if path in folders else [path]:
-            files.setdefault(file.resolve() if file.exists() else file, file)
+            files.setdefault(_resolved(file), file)
     definitions = list(folders.values())
     return Package(
-        name=", ".join(_name(path, folders.get(path)) for path in map(_folder_of, paths)),
+        name=", ".join(_name(path, folders.get(path)) for path in paths),
         drawings=_read_all(files.values()),
         joints=tuple(joint for definition in definitions for joint in definition.joints),
         gate=max((d.gate for d in definitions if d.gate), key=GATES.index, default=None),
@@ -39,12 +42,15 @@ def demo_package() -> Package:
     return read_package([Path(str(_resources.folder("demo")))])
 
 
-def _folder_of(path: Path) -> Path:
-    return path.parent if path.name == DEFINITION else path
-
-
 def _name(path: Path, definition: Definition | None) -> str:
-    return (definition and definition.name) or path.resolve().name or str(path)
+    return (definition and definition.name) or _resolved(path).name or str(path)
+
+
+def _resolved(path: Path) -> Path:
+    try:
+        return path.resolve()
+    except (OSError, RuntimeError):  # a loop of links
+        return path.absolute()
 
 
 def _read_all(files: Iterable[Path]) -> tuple[Drawing, ...]:
@@ -60,28 +66,36 @@ def _read_all(files: Iterable[Path]) -> tuple[Drawing, ...]:
 
 
 def _sheets(folder: Path, definition: Definition) -> list[Path]:
-    """The sheet files of a folder: those that its globs name, else those with a known suffix, by name."""
-    found: dict[Path, None] = {}
+    """The sheet files of a folder: those that its definition names, else those with a known suffix, by name."""
     try:
-        for number, pattern in enumerate(definition.drawings):
-            matches = [path for path in sorted(folder.glob(pattern)) if _is_file(path)]
-            if not matches:
-                raise SheetError(f"{definition.file}: drawings[{number}]: no file matches {pattern!r}")
-            found.update(dict.fromkeys(matches))
-        if not definition.drawings:
-            found = dict.fromkeys(path for path in sorted(folder.iterdir()) if _is_sheet(path))
-    except (NotImplementedError, ValueError) as error:
-        raise SheetError(f"{definition.file}: drawings: a pattern cannot be used: {error}") from None
+        found = _named(folder, definition) if definition.drawings else _with_suffix(folder)
     except OSError as error:
         raise SheetError(f"{folder}: the folder cannot be read: {error.strerror or error}") from None
     if not found:
         raise SheetError(f"{folder}: no callout sheets in this folder; files named *.txt were expected")
+    return found
+
+
+def _named(folder: Path, definition: Definition) -> list[Path]:
+    found: dict[Path, None] = {}
+    for number, pattern in enumerate(definition.drawings):
+        try:
+            matches = sorted(path for path in folder.glob(pattern) if _is_visible_file(path))
+        except (NotImplementedError, ValueError, IndexError):
+            raise SheetError(
+                f"{definition.file}: drawings[{number}]: {pattern!r} is no pattern; {_PATTERN}"
+            ) from None
+        if not matches:
+            raise SheetError(f"{definition.file}: drawings[{number}]: no file matches {pattern!r}")
+        found.update(dict.fromkeys(matches))
     return list(found)
 
 
-def _is_sheet(path: Path) -> bool:
-    return path.suffix.lower() in READERS and _is_file(path)
+def _with_suffix(folder: Path) -> list[Path]:
+    return sorted(
+        path for path in folder.iterdir() if path.suffix.lower() in READERS and _is_visible_file(path)
+    )
 
 
-def _is_file(path: Path) -> bool:
-    return not path.name.startswith(".") and not path.is_dir()
+def _is_visible_file(path: Path) -> bool:
+    return not path.name.startswith(".") and not is_folder(path)
