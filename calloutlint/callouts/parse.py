@@ -1,0 +1,87 @@
+"""Reads the text of a callout. Whatever it says, parts come back, never an error."""
+
+import re
+from collections.abc import Sequence
+from functools import cache, lru_cache
+
+from lark import Lark, Token, Tree, UnexpectedInput
+
+from calloutlint.callouts.build import build
+from calloutlint.callouts.expected import expected_words
+from calloutlint.callouts.grammar import load_grammar
+from calloutlint.callouts.line import Line
+from calloutlint.callouts.spelling import Normal, normalise
+from calloutlint.model.callout import Part, Unread
+from calloutlint.model.source import Span
+from calloutlint.units import Unit
+
+FRAGMENTS = ("terminals", "size", "thread", "frame", "datum")
+LONGEST_LINE = 2000
+_WORD = re.compile(r"[^\s|\[\]\uFFFD]+|[|\[\]]")
+_LOWER = re.compile(
+    r"\s*(?:\||S?⌀?\s*-?(?:\d+\.?\d*|\.\d+)\s*(?:\||(?:/[\d.×Xx]+|[ⓂⓁⓈⓅⓉⒻ]|\s+\.?\d*\.?\d+)*\s*(?:\||(?:\s[A-Z]{1,2}(?:-[A-Z])?\s*[ⓂⓁ]?)+\s*$)))"
+).match
+_OPENS_FRAME = re.compile(r"\s*[|\[]?\s*[⏤⏥○⌭⌒⌓∠⟂∥⌖◎⌯↗⌰]").match
+
+
+@cache
+def grammar() -> Lark:
+    """The parser of one normalised line."""
+    return load_grammar(FRAGMENTS, ("line", "lower"), maybe_placeholders=False)
+
+
+def parse_callout(lines: Sequence[str], unit: Unit | None, *, decimal_comma: bool = False) -> tuple[Part, ...]:
+    """The parts of the callout that `lines` state; lengths are in `unit`, spans count from the first line.
+
+    Text that cannot be read comes back as `Unread` parts.
+    """
+    return _parse(tuple(lines), unit, decimal_comma)
+
+
+@lru_cache(maxsize=8192)
+def _parse(lines: tuple[str, ...], unit: Unit | None, decimal_comma: bool) -> tuple[Part, ...]:
+    parsed: list[Line] = []
+    framed = False
+    for index, text in enumerate(lines):
+        if len(text) > LONGEST_LINE:
+            return (_too_long(text, index),)
+        normal = normalise(text, decimal_comma=decimal_comma)
+        line = _parse_line(index, normal, unit, framed)
+        framed = any(isinstance(item, Tree) and item.data in {"frame", "lower"} for item in line.items)
+        parsed.append(line)
+    return build(parsed)
+
+
+def _too_long(text: str, index: int) -> Unread:
+    expected = (f"a line of at most {LONGEST_LINE} characters, not {len(text)}",)
+    return Unread(text[:60] + "…", expected, span=Span(index, 0, len(text)))
+
+
+def _parse_line(index: int, normal: Normal, unit: Unit | None, framed: bool) -> Line:
+    """The parse of one line; on an error the whole word is set aside and the line parsed again."""
+    text = normal.text
+    lower = framed and _LOWER(text) is not None and _OPENS_FRAME(text) is None
+    start = "lower" if lower else "line"
+    expected: list[tuple[int, tuple[str, ...]]] = []
+    while True:
+        try:
+            tree = grammar().parse(text, start=start)
+        except UnexpectedInput as error:
+            begin, end = _word_at(text, error)
+            expected.append(
+                (begin, expected_words(error.accepts or error.expected if hasattr(error, "accepts") else ()))
+            )
+            text = text[:begin] + "\ufffd" * (end - begin) + text[end:]
+            continue
+        items = (tree,) if lower else tuple(tree.children)
+        return Line(index, normal, items, unit, tuple(expected))
+
+
+def _word_at(text: str, error: UnexpectedInput) -> tuple[int, int]:
+    """The first word at or after the error that is not set aside yet, else the last before it."""
+    at = error.pos_in_stream
+    token = getattr(error, "token", None)
+    if at is None or (isinstance(token, Token) and token.type == "$END"):
+        at = len(text)
+    words = [match.span() for match in _WORD.finditer(text)]
+    return next((span for span in words if span[1] > at), words[-1] if words else (0, len(text)))

@@ -1,0 +1,121 @@
+"""From the pieces of a size to the size."""
+
+import re
+
+from lark import Token, Tree
+
+from calloutlint.callouts.drafts import SizeDraft
+from calloutlint.callouts.line import Line
+from calloutlint.model.size import Count, Deviations, FitCode, Limits, PlusMinus, SizeForm
+from calloutlint.model.values import Value
+
+FORMS = {
+    "⌀": SizeForm.DIAMETER,
+    "S⌀": SizeForm.SPHERICAL_DIAMETER,
+    "R": SizeForm.RADIUS,
+    "CR": SizeForm.CONTROLLED_RADIUS,
+    "SR": SizeForm.SPHERICAL_RADIUS,
+    "□": SizeForm.SQUARE,
+}
+_NUMBER = r"(?:(?:\d+[ -])?\d+/\d+(?!\d)|\d+\.?\d*|\.\d+)\s*(?:\"|mm|MM|[iI][nN]\.?)?(?:°(?:\s*\d+\.?\d*\s*')?(?:\s*\d+\.?\d*\s*\")?|')?"
+_LIMIT = r"(?:\d+\.?\d*|\.\d+)\s*(?:\"|mm|MM|[iI][nN]\.?|°)?"
+_PAIR = re.compile(rf"\s*([+-]?\s*{_NUMBER})\s*[/,]?\s*([+-]?\s*{_NUMBER})\s*").fullmatch
+_LIMITS = re.compile(rf"\s*({_LIMIT})(?:-|\s+-\s+|\s*/\s*|\s+)⌀?({_LIMIT}|{_NUMBER})\s*").fullmatch
+_COUNTED = re.compile(r"(\d+)").search
+_NUMBER_WORDS = "ONE TWO THREE FOUR FIVE SIX SEVEN EIGHT NINE TEN ELEVEN TWELVE".split()
+
+
+def size_form(token: str) -> SizeForm:
+    """The form that a symbol before or after a number stands for."""
+    return FORMS[token.strip("‹›")]
+
+
+def read_size(tree: Tree[Token], line: Line) -> SizeDraft:
+    """The size that a `size` node states."""
+    pieces = [child for child in tree.children if isinstance(child, Token)]
+    draft = SizeDraft(SizeForm.LINEAR, None, line.span(pieces[0], pieces[-1]))
+    for piece in pieces:
+        if piece.type == "NUMBER":
+            draft.nominal = line.value(piece)
+            if "°" in piece:
+                draft.form = SizeForm.ANGLE
+            elif _improper(piece):
+                draft.nominal, draft.tolerance = None, _limits(piece, line)
+        elif piece.type in {"FORM", "AFTER_FORM"}:
+            draft.form = size_form(piece)
+        else:
+            add_tolerance(draft, piece, line)
+    return draft
+
+
+def add_tolerance(draft: SizeDraft, piece: Token, line: Line) -> None:
+    """Gives a size the tolerance that one piece of text states."""
+    text = str(piece)
+    if piece.type == "PLUS_MINUS":
+        draft.tolerance = PlusMinus(line.value(text[1:]))
+    elif piece.type == "DEVIATIONS":
+        draft.tolerance = _deviations(text, line)
+    elif piece.type == "DEVIATION":
+        _one_deviation(draft, line.value(text))
+    elif piece.type == "LIMITS":
+        draft.tolerance = _limits(text, line)
+        if "°" in text:
+            draft.form = SizeForm.ANGLE
+    elif piece.type == "FIT":
+        letters = text.rstrip("0123456789")
+        draft.fit = FitCode(letters, text[len(letters) :])
+    elif piece.type == "FIT_LIMITS":
+        inside = text[1:-1].strip()
+        signed = inside[0] in "+-" or re.search(r"[\s/][+-]", inside)
+        draft.tolerance = _deviations(inside, line) if signed else _limits(inside, line)
+
+
+def _one_deviation(draft: SizeDraft, value: Value) -> None:
+    if draft.deviation is None:
+        draft.deviation = value
+    else:
+        draft.tolerance, draft.deviation = Deviations(draft.deviation, value), None
+
+
+def _deviations(text: str, line: Line) -> Deviations:
+    match = _PAIR(text)
+    if match is None:
+        raise ValueError(f"'{text}' is not a pair of deviations.")
+    return Deviations(line.value(match[1]), line.value(match[2]))
+
+
+def _limits(text: str, line: Line) -> Limits:
+    match = _LIMITS(text)
+    if match is None:
+        raise ValueError(f"'{text}' is not a pair of limits.")
+    return Limits(line.value(match[1]), line.value(match[2]))
+
+
+def _improper(text: str) -> bool:
+    """Whether a fraction is none: `10/8` states limits."""
+    over, slash, under = text.partition("/")
+    return bool(slash) and over.isdigit() and under.isdigit() and int(over) >= int(under)
+
+
+def read_count(token: Token, line: Line) -> Count:
+    """The count that a COUNT token states, in its canonical spelling."""
+    text = str(token).upper()
+    first = text.split()[0]
+    counted = _COUNTED(text)
+    number = int(counted[1]) if counted else None
+    if number is None and first in _NUMBER_WORDS:
+        number = _NUMBER_WORDS.index(first) + 1
+    return Count(number, _canonical_count(text, number), line.span(token))
+
+
+def _canonical_count(text: str, number: int | None) -> str:
+    if number is None:
+        return "TYP"
+    if "‹TYP›" in text:
+        return f"{number} TYP"
+    noun = text.strip("()").split()[-1]
+    if "‹PL›" in text:
+        return f"{number} PL"
+    if noun[-1] in "X×":
+        return f"{number}X"
+    return f"{number} {noun}"

@@ -1,0 +1,158 @@
+"""Brings a line to one spelling, and knows where each column of it came from.
+
+Characters are exchanged one for one, never folded in case or compatibility: `Ⓜ`, `½` and the letters of a
+fit code mean something. Spaces stay where they are: they decide meaning too.
+"""
+
+import re
+from bisect import bisect_right
+from collections.abc import Iterable
+from dataclasses import dataclass
+
+from calloutlint.callouts.table import CHARACTERISTICS, SPELLINGS
+
+__all__ = ["SPELLINGS", "Normal", "normalise", "opens_feature"]
+
+Trie = dict[str, "Trie"]
+
+
+@dataclass(frozen=True, slots=True)
+class Normal:
+    """A normalised line; `shifts` holds where it gets out of step with `source`: (its column, the source's)."""
+
+    source: str
+    text: str
+    shifts: tuple[tuple[int, int], ...] = ()
+
+    def start(self, column: int) -> int:
+        """The source column that the normalised `column` came from."""
+        if not self.shifts:
+            return column
+        at = bisect_right(self.shifts, (column, len(self.source))) - 1
+        if at < 0:
+            return column
+        here, there = self.shifts[at]
+        return there + column - here
+
+    def end(self, column: int) -> int:
+        """The source column after what the normalised column before `column` came from."""
+        if not self.shifts:
+            return column
+        at = bisect_right(self.shifts, (column - 1, len(self.source))) - 1
+        following = self.shifts[at + 1] if at + 1 < len(self.shifts) else None
+        if following is not None and following[0] == column:
+            return following[1]
+        return self.start(column - 1) + 1 if column else 0
+
+
+def normalise(line: str, *, decimal_comma: bool = False) -> Normal:
+    """The line in the one spelling that the grammar reads."""
+    exchanged = line.translate(_EXCHANGED)
+    if decimal_comma:
+        exchanged = _COMMA.sub(".", exchanged)
+    shifts: list[tuple[int, int]] = []
+    drift = 0
+
+    def replaced(match: re.Match[str]) -> str:
+        nonlocal drift
+        written = match[0]
+        normal = _NORMAL[_SPACES.sub(" ", written).upper()]
+        if normal[0].isdigit() and match.start() and exchanged[match.start() - 1].isdigit():
+            normal = " " + normal
+        if len(normal) != len(written):
+            shifts.append((match.start() + drift, match.start()))
+            drift += len(normal) - len(written)
+            shifts.append((match.end() + drift, match.end()))
+        return normal
+
+    text = _SPELLED.sub(replaced, exchanged)
+    return Normal(line, text, tuple(shifts))
+
+
+def opens_feature(line: str) -> bool:
+    """Whether a line opens a size, a thread or a hole, so that an untagged sheet starts a callout there."""
+    text = normalise(line).text
+    head = _FEATURE_ENDS.split(text, maxsplit=1)[0]
+    return _OPENS(head) is not None and _JOINS(head) is None
+
+
+_FEATURE_ENDS = re.compile(r"[⏤⏥○⌭⌒⌓∠⟂∥⌖◎⌯↗⌰▲]|(?<!\S)-[A-Z]-")
+_OPENS = re.compile(
+    r"\s*(?:[^\W\d_][\w'./&-]*\s+|\d+\s?[Xx×](?!\w)\s*)*(?:S?⌀|□|‹[CS]?R›|[\[(]?\.?\d|#\s?\d|MJ?\d|Tr\s?\d|G\s?\d)"
+).match
+_JOINS = re.compile(
+    r"\s*(?:[|⌴⌵↧+]|-\s?\.?\d|‹(?:SF|DRILL|REAM|TAP)›|(?i:[\w ]*\b(?:notes?|for|see|per)\s))"
+).match
+
+
+def _spelled() -> dict[str, str]:
+    """What needs more than an exchange of one character: spelling in upper case, what stands for it."""
+    pairs = ((spelling.upper(), row.normal) for row in SPELLINGS for spelling in row.every)
+    return {spelling: normal for spelling, normal in pairs if spelling != normal and spelling not in _AS_IS}
+
+
+def _exchanged() -> dict[int, str]:
+    return {
+        ord(spelling): row.normal
+        for row in SPELLINGS
+        for spelling in row.every
+        if len(spelling) == 1 and len(row.normal) == 1 and not spelling.isascii() and spelling != "—"
+    }
+
+
+_AS_IS = {"X", "-", "DEPTH FEATURE"}
+_EXCHANGED = _exchanged() | {0xA0: " ", 0x2007: " ", 0x2009: " ", 0x202F: " ", 0x3000: " "}
+_NORMAL = {spelling: normal for spelling, normal in _spelled().items() if ord(spelling[0]) not in _EXCHANGED}
+_SPACES = re.compile(r"\s+")
+_COMMA = re.compile(r"(?<=\d),(?=\d)|(?<![\w,]),(?=\d)")
+
+_FRAME_WORDS = {s.upper() for row in CHARACTERISTICS for s in row.every if s[0].isalpha() or s in {"—", "//"}}
+_FRAME_FOLLOWS = r"(?=\s*[\]|]|[\s:=]*(?:[S]?[⌀]|%%[cC]|S?DIA\b|dia\b|-?\.?\d)%s)"
+_LONG_FOLLOWS = r"|\s+[A-Z](?![A-Za-z0-9.])"
+_NUMBER_FOLLOWS = r"(?=\s*[\d.(\[])"
+_RADIUS_FOLLOWS = rf"(?:(?<!\d\sR)(?<!\dR){_NUMBER_FOLLOWS}|(?=\s*\d*\.\d|\s*[(\[]))"
+
+
+def _ending(spelling: str) -> str:
+    """What must stand after a spelling for it to be read as such."""
+    whole = spelling[-1].isalpha() and spelling[0].isalpha()
+    ending = "(?![A-Za-z])" if whole else r"(?!\d)" if spelling[-1] == "." else ""
+    if spelling in _FRAME_WORDS:
+        return ending + _FRAME_FOLLOWS % (_LONG_FOLLOWS if len(spelling) > 7 else "")
+    if spelling == "R":
+        return ending + _RADIUS_FOLLOWS
+    return ending + (_NUMBER_FOLLOWS if spelling in {"CR", "SR"} else "")
+
+
+def _pattern(spellings: Iterable[str]) -> str:
+    """One pattern for all spellings in any case, common beginnings written once."""
+    trie: Trie = {}
+    for spelling in spellings:
+        node = trie
+        for character in spelling:
+            node = node.setdefault(character, {})
+        node[""] = {_ending(spelling): {}}
+    return "|".join(_letter(first) + _beginning(first) + _branches(rest) for first, rest in trie.items())
+
+
+def _beginning(first: str) -> str:
+    """A word, or a letter in parentheses as in `HOLE(S)`, does not begin inside another word."""
+    return "(?<![A-Za-z]{2})" if first.isalpha() else r"(?<![A-Za-z]{2}\()" if first == "(" else ""
+
+
+def _branches(node: Trie) -> str:
+    longer = [_letter(character) + _branches(rest) for character, rest in node.items() if character]
+    if "" in node:
+        longer.append(next(iter(node[""])))
+    return longer[0] if len(longer) == 1 else f"(?:{'|'.join(longer)})"
+
+
+def _letter(character: str) -> str:
+    if character == " ":
+        return r"\s+"
+    if character.isalpha() and character.lower() != character and len(character.lower()) == 1:
+        return f"[{character}{character.lower()}]"
+    return re.escape(character)
+
+
+_SPELLED = re.compile(_pattern(_NORMAL))
