@@ -13,7 +13,7 @@ from functools import lru_cache
 from itertools import product
 
 from calloutlint.facts.datums.kinds import DatumGeometry, DatumKind
-from calloutlint.facts.datums.motion import Constraints, Freedom
+from calloutlint.facts.datums.motion import Constraints, Freedom, Z
 from calloutlint.facts.datums.placement import Placement, placements
 from calloutlint.facts.datums.relations import Link, Relation, agrees
 
@@ -57,11 +57,25 @@ def usual(references: tuple[Reference, ...], relations: tuple[Relation, ...]) ->
         choices = list(_extensions(placed, reference, relations))
         if not choices:
             return None
-        placed = next((c for c in choices if _after(before, reference, c).rank > before.rank), choices[0])
+        placed = _first_that_holds(choices, reference, before)
         after = _after(before, reference, placed)
         taken.append(Taken(_after(Constraints(), reference, placed).held, after.held[before.rank :]))
         before = after
     return tuple(taken)
+
+
+def _first_that_holds(choices: list[Arrangement], reference: Reference, before: Constraints) -> Arrangement:
+    """The first choice that takes anything away.
+
+    Of a common datum after others, the one that takes most; of a plane, one that stops a slide if any does.
+    """
+    news = [_after(before, reference, choice).held[before.rank :] for choice in choices]
+    most = max(map(len, news))
+    enough = most if before.rank and len(reference.members) > 1 else min(most, 1)
+    good = [(choice, new) for choice, new in zip(choices, news, strict=True) if len(new) >= enough]
+    if reference.members[0][1].kind is DatumKind.PLANE:
+        good.sort(key=lambda each: all(freedom.turns for freedom in each[1]))
+    return good[0][0]
 
 
 def _as_named(references: tuple[Reference, ...], relations: tuple[Relation, ...]) -> tuple[Taken, ...] | None:
@@ -160,7 +174,7 @@ def _extensions(
     new = [(letter, geometry) for letter, geometry in reference.members if letter not in placed]
     options = [list(_options(letter, geometry, relations)) for letter, geometry in new]
     if not placed and not turned:
-        options[0] = [p for p in options[0] if p.direction == options[0][0].direction and not any(p.point)]
+        options[0] = [place for place in options[0] if place.direction == Z and not any(place.point)]
     for choice in product(*options):
         wider = placed | {letter: place for (letter, _), place in zip(new, choice, strict=True)}
         if _agrees(wider, relations) and _together(reference, wider, relations):

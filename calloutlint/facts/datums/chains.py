@@ -77,7 +77,7 @@ def loop_use(ring: tuple[str, ...], scheme: DatumScheme) -> Use:
     """The frame line that closes a ring: of its callouts, the last one in the drawing."""
     uses = [
         use
-        for use in uses_of(scheme.drawing)
+        for use in uses_of(scheme)
         for letter in letters_of(use.callout)
         if letter in ring and any(_names(ref) & (set(ring) - {letter}) for ref in use.segment.datums)
     ]

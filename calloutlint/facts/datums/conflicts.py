@@ -11,8 +11,7 @@ from collections.abc import Callable, Hashable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 
 from calloutlint.facts.datums.frames import Use, may_be_tied, uses_of
-from calloutlint.model.callout import Callout
-from calloutlint.model.drawing import Drawing
+from calloutlint.facts.datums.scheme import DatumScheme
 from calloutlint.model.fastener import Joint
 from calloutlint.model.frame import Characteristic
 
@@ -29,41 +28,45 @@ class Conflict:
     joint: Joint | None = None
 
 
-def order_conflicts(drawing: Drawing, joints: Sequence[Joint] = ()) -> tuple[Conflict, ...]:
+def order_conflicts(scheme: DatumScheme, joints: Sequence[Joint] = ()) -> tuple[Conflict, ...]:
     """Frames with the same letters in another order.
 
     `joints` are those of the package, beside the drawing's own. A conflict inside one joint names
     it, and the callout is not reported again for the rest of the drawing.
     """
-    uses = list(uses_of(drawing))
-    found: dict[str, Conflict] = {}
-    for joint in (*drawing.joints, *joints):
-        balloons = balloons_on(joint, drawing)
-        for use, other in _deviating((u for u in uses if u.callout.balloon in balloons), _letters, _order):
-            found.setdefault(use.callout.balloon, Conflict(use, other, joint))
+    uses = list(uses_of(scheme))
+    found: dict[int, Conflict] = {}
+    own = [joint for sheet in scheme.sheets for joint in sheet.joints]
+    for joint in (*own, *joints):
+        members = _members(joint, scheme)
+        for use, other in _deviating((u for u in uses if id(u.callout) in members), _letters, _order):
+            found.setdefault(id(use.callout), Conflict(use, other, joint))
     for use, other in _deviating(uses, _letters, _order):
-        found.setdefault(use.callout.balloon, Conflict(use, other))
-    return tuple(found[c.balloon] for c in _distinct(drawing.callouts) if c.balloon in found)
+        found.setdefault(id(use.callout), Conflict(use, other))
+    return tuple(found[id(callout)] for callout in scheme.callouts if id(callout) in found)
 
 
-def boundary_conflicts(drawing: Drawing) -> tuple[Conflict, ...]:
+def boundary_conflicts(scheme: DatumScheme) -> tuple[Conflict, ...]:
     """Positions with the same datums in the same order, but other material boundaries, that nothing parts."""
-    positions = (u for u in uses_of(drawing) if u.segment.characteristic is Characteristic.POSITION)
+    positions = (u for u in uses_of(scheme) if u.segment.characteristic is Characteristic.POSITION)
     uses = filter(may_be_tied, positions)
     return tuple(Conflict(use, other) for use, other in _deviating(uses, _order, _boundaries))
 
 
-def balloons_on(joint: Joint, drawing: Drawing) -> frozenset[str]:
-    """Balloons of a joint that stand on a drawing."""
-    return frozenset(
-        hole.balloon
+def _members(joint: Joint, scheme: DatumScheme) -> set[int]:
+    """Identities of the callouts of a drawing that a joint names."""
+    return {
+        id(callout)
+        for sheet in scheme.sheets
         for hole in (*joint.holes, *joint.mates)
-        if hole.drawing == drawing.number or (hole.drawing is None and joint in drawing.joints)
-    )
+        if hole.drawing == sheet.number or (hole.drawing is None and joint in sheet.joints)
+        for callout in sheet.callouts
+        if callout.balloon == hole.balloon
+    }
 
 
 def _letters(use: Use) -> Hashable:
-    return frozenset(use.order)
+    return tuple(sorted(use.order))
 
 
 def _order(use: Use) -> Hashable:
@@ -90,9 +93,9 @@ def _deviating(
 
 
 def _against_prevailing(members: list[Use], variant: Callable[[Use], Hashable]) -> Iterator[tuple[Use, Use]]:
-    by_callout: dict[str, list[Use]] = {}
+    by_callout: dict[int, list[Use]] = {}
     for use in members:
-        by_callout.setdefault(use.callout.balloon, []).append(use)
+        by_callout.setdefault(id(use.callout), []).append(use)
     votes = Counter(key for uses in by_callout.values() for key in dict.fromkeys(map(variant, uses)))
     prevailing = max(votes, key=lambda key: votes[key])
     model = next(use for use in members if variant(use) == prevailing)
@@ -106,7 +109,3 @@ def _against_prevailing(members: list[Use], variant: Callable[[Use], Hashable]) 
             yield uses[0], model
     if early:
         yield model, early[-1]
-
-
-def _distinct(callouts: Iterable[Callout]) -> list[Callout]:
-    return list({callout.balloon: callout for callout in callouts}.values())

@@ -7,8 +7,8 @@ ISO 5458 (simultaneous requirement only where SIM is written).
 from collections.abc import Iterable, Iterator
 from dataclasses import dataclass
 
+from calloutlint.facts.datums.scheme import DatumScheme
 from calloutlint.model.callout import Callout, Meaning
-from calloutlint.model.drawing import Drawing, System
 from calloutlint.model.frame import Characteristic, DatumRef, Frame, Modifier, ModifierUse, Segment
 
 _LOCATING = {Characteristic.POSITION, Characteristic.SURFACE_PROFILE, Characteristic.LINE_PROFILE}
@@ -51,31 +51,31 @@ class FrameInForce:
     simultaneous: tuple[Use, ...]
 
 
-def uses_of(drawing: Drawing) -> Iterator[Use]:
+def uses_of(scheme: DatumScheme) -> Iterator[Use]:
     """Every frame line with datum references, in the order of the drawing; doubtful ones left out."""
-    for callout in drawing.callouts:
+    for callout in scheme.callouts:
         for frame in callout.frames:
             for number, segment in enumerate(frame.segments):
                 if segment.datums and not segment.doubtful:
                     yield Use(callout, frame, segment, lower=number > 0)
 
 
-def frames_in_force(drawing: Drawing) -> tuple[FrameInForce, ...]:
+def frames_in_force(scheme: DatumScheme) -> tuple[FrameInForce, ...]:
     """The datum reference frames of a drawing in the order they first appear."""
     groups: dict[object, list[Use]] = {}
-    for use in uses_of(drawing):
+    for use in uses_of(scheme):
         names = tuple(ref.freedoms for ref in use.segment.datums)
         groups.setdefault((use.order, use.boundaries, names), []).append(use)
     return tuple(
-        FrameInForce(uses[0].segment.datums, tuple(uses), _simultaneous(uses, drawing))
+        FrameInForce(uses[0].segment.datums, tuple(uses), _simultaneous(uses, scheme))
         for uses in groups.values()
     )
 
 
-def _simultaneous(uses: list[Use], drawing: Drawing) -> tuple[Use, ...]:
+def _simultaneous(uses: list[Use], scheme: DatumScheme) -> tuple[Use, ...]:
     """Position and profile of one frame go together unless parted; under ISO only where SIM says so."""
-    tied = tuple(use for use in uses if may_be_tied(use) and (not _is_iso(drawing) or _says_so(use)))
-    return tied if len({use.callout.balloon for use in tied}) > 1 else ()
+    tied = tuple(use for use in uses if may_be_tied(use) and (not scheme.iso or _says_so(use)))
+    return tied if len({id(use.callout) for use in tied}) > 1 else ()
 
 
 def may_be_tied(use: Use) -> bool:
@@ -88,10 +88,6 @@ def _says_so(use: Use) -> bool:
     zone = use.segment.zone
     written = zone is not None and zone.modifier(Modifier.SIMULTANEOUS) is not None
     return written or Meaning.SIMULTANEOUS_REQUIREMENT in use.callout.meanings
-
-
-def _is_iso(drawing: Drawing) -> bool:
-    return drawing.standard is not None and drawing.standard.system is System.ISO
 
 
 def _name(ref: DatumRef) -> str:

@@ -76,7 +76,7 @@ def _is_flat(ref: DatumRef, scheme: DatumScheme) -> bool:
 
 def _is_tied(use: Use, scheme: DatumScheme) -> bool:
     """Whether a simultaneous requirement makes a pattern of this feature and others."""
-    return any(_holds(frame, use.segment) for frame in frames_in_force(scheme.drawing))
+    return any(_holds(frame, use.segment) for frame in frames_in_force(scheme))
 
 
 def _holds(frame: FrameInForce, segment: Segment) -> bool:

@@ -117,8 +117,9 @@ def placements(geometry: DatumGeometry, *, oblique: bool = False) -> Iterator[Pl
     Directions follow the axes of the mutually perpendicular frame, one more in between where an angle is
     called out; positions run through the origin, beside it, and anywhere.
     """
-    directions = (Z, Y, X, *OBLIQUE) if oblique else (Z, Y, X)
     kind = geometry.kind
+    usual = (Y, Z, X) if kind is DatumKind.CENTRE_PLANE else (Z, Y, X)
+    directions = (*usual, *OBLIQUE) if oblique else usual
     if kind is DatumKind.POINT:
         yield from (Placement(geometry, Z, at) for at in (ORIGIN, *_ASIDE))
     elif kind is DatumKind.PATTERN:

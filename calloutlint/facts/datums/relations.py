@@ -37,6 +37,7 @@ class Relation:
     link: Link
 
 
+_COAXIAL = (Characteristic.CIRCULAR_RUNOUT, Characteristic.TOTAL_RUNOUT, Characteristic.CONCENTRICITY)
 _FLAT = {DatumKind.PLANE, DatumKind.CENTRE_PLANE}
 
 
@@ -48,16 +49,22 @@ def relations_of(
     if own is None:
         return
     for segment in callout.segments:
-        named = [[member.letter for member in ref.letters] for ref in segment.datums]
-        if segment.doubtful or any(letter in names for names in named):
-            continue
-        for order, names in enumerate(named):
+        for order, ref in enumerate(segment.datums if not segment.doubtful else ()):
+            names = [member.letter for member in ref.letters]
             for to in names:
                 other = geometries.get(to)
-                if other is not None:
-                    links = _links(segment, order, own, other)
+                if other is not None and to != letter:
+                    shared = letter in names
+                    links = _shared(segment, own, other) if shared else _links(segment, order, own, other)
                     yield from (Relation(letter, to, link) for link in links)
     yield from _around(letter, callout, own, geometries)
+
+
+def _shared(segment: Segment, own: DatumGeometry, other: DatumGeometry) -> Iterator[Link]:
+    """A feature of a common datum held to that datum: two bearing seats in runout to their common axis."""
+    coaxial = segment.characteristic in (*_COAXIAL, Characteristic.POSITION)
+    if coaxial and own.kind is other.kind is DatumKind.AXIS:
+        yield Link.COAXIAL
 
 
 def _links(segment: Segment, order: int, own: DatumGeometry, other: DatumGeometry) -> Iterator[Link]:
@@ -72,7 +79,7 @@ def _links(segment: Segment, order: int, own: DatumGeometry, other: DatumGeometr
             yield Link.RIGHT_ANGLE if flats == 1 else Link.SAME_DIRECTION
         case Characteristic.ANGULARITY if order == 0:
             yield Link.OBLIQUE
-        case Characteristic.CIRCULAR_RUNOUT | Characteristic.TOTAL_RUNOUT | Characteristic.CONCENTRICITY:
+        case characteristic if characteristic in _COAXIAL:
             yield Link.COAXIAL if own.kind is other.kind is DatumKind.AXIS else Link.SAME_DIRECTION
         case Characteristic.SYMMETRY if order == 0:
             yield Link.RIGHT_ANGLE if flats == 1 else Link.SAME_DIRECTION

@@ -1,6 +1,9 @@
-"""The datum scheme of a drawing: its datum features, what they are, how they stand to each other."""
+"""The datum scheme of a drawing: its datum features, what they are, how they stand to each other.
 
-from collections.abc import Mapping
+A drawing may have several sheets; they share one scheme.
+"""
+
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass, replace
 
 from calloutlint.facts.datums.arrangement import Reference
@@ -9,7 +12,7 @@ from calloutlint.facts.datums.motion import FREEDOMS, Freedom
 from calloutlint.facts.datums.relations import Relations, relations_of
 from calloutlint.facts.datums.targets import contacts_of
 from calloutlint.model.callout import Callout, DatumTarget
-from calloutlint.model.drawing import Drawing
+from calloutlint.model.drawing import Drawing, System
 from calloutlint.model.frame import DatumRef, Modifier, Segment
 
 
@@ -32,9 +35,19 @@ class Established:
 class DatumScheme:
     """All datum features of a drawing by letter, in the order they are established, and their relations."""
 
-    drawing: Drawing
+    sheets: tuple[Drawing, ...]
     features: Mapping[str, Established]
     relations: Relations
+
+    @property
+    def callouts(self) -> tuple[Callout, ...]:
+        """The callouts of all sheets in order."""
+        return tuple(callout for sheet in self.sheets for callout in sheet.callouts)
+
+    @property
+    def iso(self) -> bool:
+        """Whether the drawing is made to ISO GPS."""
+        return any(sheet.standard and sheet.standard.system is System.ISO for sheet in self.sheets)
 
     def kind(self, ref: DatumRef) -> DatumKind | None:
         """The kind of datum a reference stands for; None where unknown, or where a common datum mixes kinds."""
@@ -80,14 +93,15 @@ def _reduced(kinds: set[DatumKind], uses: set[Modifier]) -> bool:
     return bool(uses & _SECTIONS) or bool(parts - kinds)
 
 
-def scheme_of(drawing: Drawing) -> DatumScheme:
-    """The datum scheme of a drawing."""
+def scheme_of(*sheets: Drawing) -> DatumScheme:
+    """The datum scheme of a drawing, of all its sheets together."""
+    callouts = [callout for sheet in sheets for callout in sheet.callouts]
     letters = dict.fromkeys(
         letter
-        for callout in drawing.callouts
+        for callout in callouts
         for letter in (*letters_of(callout), *(target.letter for target in callout.datum_targets))
     )
-    features = {letter: _established(letter, drawing) for letter in letters}
+    features = {letter: _established(letter, callouts) for letter in letters}
     geometries = {letter: feature.geometry for letter, feature in features.items()}
     relations = (
         relation
@@ -95,18 +109,18 @@ def scheme_of(drawing: Drawing) -> DatumScheme:
         for callout in feature.callouts
         for relation in relations_of(feature.letter, callout, geometries)
     )
-    return DatumScheme(drawing, features, Relations.closed(relations))
+    return DatumScheme(sheets, features, Relations.closed(relations))
 
 
-def _established(letter: str, drawing: Drawing) -> Established:
-    callouts = tuple(callout for callout in drawing.callouts if letter in letters_of(callout))
+def _established(letter: str, callouts: Sequence[Callout]) -> Established:
+    carriers = tuple(callout for callout in callouts if letter in letters_of(callout))
     targets = tuple(
         (callout, target)
-        for callout in drawing.callouts
+        for callout in callouts
         for target in callout.datum_targets
         if target.letter == letter
     )
-    return Established(letter, callouts, targets, _geometry(callouts, targets))
+    return Established(letter, carriers, targets, _geometry(carriers, targets))
 
 
 def _geometry(
