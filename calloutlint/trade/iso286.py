@@ -103,9 +103,7 @@ def _hole(nominal_mm: Decimal, code: FitCode, width: Decimal) -> LimitDeviations
     return None if upper is None else LimitDeviations(upper=upper, lower=upper - width)
 
 
-def _upper_of_tight_hole(
-    nominal_mm: Decimal, letters: str, grade: str, width: Decimal
-) -> Decimal | None:
+def _upper_of_tight_hole(nominal_mm: Decimal, letters: str, grade: str, width: Decimal) -> Decimal | None:
     """Upper deviation ES of holes J to ZC: J is tabulated by grade.
 
     The others are the shaft's with the sign changed, plus Δ = IT(n) - IT(n-1) for K, M, N to IT8 and P to ZC
