@@ -109,7 +109,7 @@ class Rule:
         )
 
     def _place_of(self, view: View) -> View:
-        """The view that the finding stands on: the examined one where the sheet names none, or it is unknown."""
+        """The view that a finding stands on: the examined one where none is named or it is unknown."""
         place = self.place.read(view) if self.place else view
         if isinstance(place, tuple):
             place = place[0] if place else None

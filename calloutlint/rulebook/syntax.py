@@ -18,19 +18,18 @@ _EXPECTED = {
     "NUMBER": "a number",
     "MEASURE": "a length or an angle",
     "QUOTED": "a text in quotes",
-    "ORDER": "a comparison",
-    "EQUALITY": "a comparison",
-    "SIGN": "+ or -",
-    "SCALE": "* or /",
-    "LSQB": "[",
-    "RSQB": "]",
-    "LPAR": "(",
-    "RPAR": ")",
-    "COMMA": ",",
-    "COLON": ":",
+    "ORDER": "an operator",
+    "EQUALITY": "an operator",
+    "SCALE": "an operator",
+    "LSQB": "'['",
+    "RSQB": "']'",
+    "LPAR": "'('",
+    "RPAR": "')'",
+    "COMMA": "','",
+    "COLON": "':'",
     "$END": "the end",
 }
-_UNSAID = {"MEASURE", "QUANTIFIER", "COUNT_OF", "COUNT_EACH", "KNOWN", "UNKNOWN", "LPAR", "LSQB"}
+_UNSAID = {"MEASURE", "SIGN", "QUANTIFIER", "COUNT_OF", "COUNT_EACH", "KNOWN", "UNKNOWN", "LPAR", "LSQB"}
 
 
 @cache
@@ -64,8 +63,9 @@ def _unexpected(error: UnexpectedInput, text: str) -> TextError:
 
 
 def _listed(terminals: Iterable[str]) -> str:
-    names = sorted({_EXPECTED.get(name, name.lower()) for name in terminals if name not in _UNSAID})
-    return " or ".join(names) or "a condition"
+    names = {_EXPECTED.get(name, f"'{name.lower()}'") for name in terminals if name not in _UNSAID}
+    *others, last = sorted(names) or ["a condition"]
+    return f"{', '.join(others)} or {last}" if others else last
 
 
 def tokens(syntax: Syntax) -> Iterator[Token]:
