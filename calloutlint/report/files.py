@@ -53,7 +53,7 @@ def write_whole(path: Path, text: str) -> None:
             raise PermissionError(13, "the file is write-protected")
         _replace(target, text)
     except OSError as error:
-        raise CalloutlintError(f"'{path}' cannot be written: {_reason(error)}.") from error
+        raise CalloutlintError(f"'{path}' cannot be written: {_reason(error, target.parent)}.") from error
 
 
 def _replace(target: Path, text: str) -> None:
@@ -76,7 +76,9 @@ def _umask() -> int:
     return mask
 
 
-def _reason(error: OSError) -> str:
+def _reason(error: OSError, folder: Path) -> str:
+    if isinstance(error, PermissionError) and not os.access(folder, os.W_OK):
+        return f"the folder '{folder}' takes no new files"
     reason = error.strerror or str(error)
     return reason[:1].lower() + reason[1:]
 

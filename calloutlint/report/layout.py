@@ -128,7 +128,7 @@ def _verbatim(callout: Callout, line: int, style: Style) -> Row:
     """A source line as written; one that holds unread text between bars is still drawn in compartments."""
     text = callout.source[line].text
     unread = [part for part in callout.unread if part.span.line == line]
-    if "|" not in text or not any(part.in_frame for part in unread):
+    if "|" not in text:
         return TextRow((_quoted(text, line, 0, unread, style),))
     pieces, start = [], 0
     for cell in text.split("|"):

@@ -5,9 +5,9 @@ import unicodedata
 from calloutlint.callouts.spelling import SPELLINGS
 from calloutlint.callouts.write import Style
 
-# Signs that messages and titles use beside the symbols of callouts, and symbols that need a space after them.
+# Signs that messages use beside the symbols of callouts, and symbols that need a space beside them.
 _SIGNS = {
-    "⌀": "DIA ", "□": "SQ ", "°": " DEG", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-", "×": "x", "←": "<-",
+    "⌀": "DIA ", "□": "SQ ", "°": " DEG", "−": "-", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-", "×": "x", "←": "<-",
     "≤": "<=", "≥": ">=", "≠": "!=", "√": "sqrt", "²": "^2", "³": "^3", "µ": "u", "μ": "u",
     "‘": "'", "’": "'", "“": '"', "”": '"', "„": '"', "⟨": "<", "⟩": ">", "\N{NO-BREAK SPACE}": " ",
 }  # fmt: skip

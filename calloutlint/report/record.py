@@ -6,7 +6,7 @@ from pydantic import BaseModel, ConfigDict, Field
 
 from calloutlint import __version__
 from calloutlint.model.drawing import Drawing
-from calloutlint.model.source import Span
+from calloutlint.report.faulty import faulty_span
 from calloutlint.review import Judged, Review
 from calloutlint.rulebook.finding import Finding, Grade
 
@@ -168,9 +168,10 @@ def _place(finding: Finding) -> tuple[int | None, tuple[int, int] | None]:
         number = getattr(finding.part, "number", None)
         return (number if isinstance(number, int) else None), None
     source = finding.callout.source
-    if isinstance(finding.span, Span) and finding.span.line < len(source):
-        line = source[finding.span.line]
-        return line.number, (line.column + finding.span.start, line.column + finding.span.end)
+    span = faulty_span(finding)
+    if span is not None and span.line < len(source):
+        line = source[span.line]
+        return line.number, (line.column + span.start, line.column + span.end)
     return (source[0].number if source else None), None
 
 
