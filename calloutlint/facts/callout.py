@@ -205,5 +205,3 @@ def _size_views(callout: CalloutView) -> Iterator[SizeView]:
         extent = getattr(part, "extent", None)
         if isinstance(extent, Depth) and extent.size is not None:
             yield SizeView(extent.size, callout, Role.DEPTH)
-
-

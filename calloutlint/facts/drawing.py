@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
@@ -88,6 +89,11 @@ class LineView(View):
         return self.part.key
 
     @fact
+    def reason(self) -> str | None:
+        """What is wrong with it; unknown where no more can be said."""
+        return self.part.reason
+
+    @fact
     def known(self) -> bool:
         """Whether it was understood."""
         return self.part.known
@@ -132,6 +138,17 @@ class DrawingView(View):
     def revision(self) -> str:
         """The revision; empty where there is none."""
         return self.part.revision or ""
+
+    @fact
+    def sheet(self) -> str:
+        """The sheet as written, `sheet 1 of 2`; empty where none is stated."""
+        return f"sheet {self.part.sheet}" if self.part.sheet else ""
+
+    @fact
+    def has_other_sheets(self) -> bool:
+        """Whether it says that it is one of several sheets."""
+        found = re.search(r"(?:of|/)\s*(\d+)", self.part.sheet or "", re.IGNORECASE)
+        return found is not None and int(found[1]) > 1
 
     @fact
     def inch(self) -> bool | None:

@@ -19,6 +19,7 @@ from calloutlint.model.frame import (
     Zone,
     ZoneShape,
 )
+from calloutlint.model.size import SizeModifier
 
 if TYPE_CHECKING:
     from calloutlint.facts.callout import CalloutView
@@ -235,6 +236,14 @@ class FrameView(PartView):
         """Total size tolerance of the feature that it controls."""
         size = self._callout.size
         return size.total if size else None
+
+    @fact
+    def free_of_envelope(self) -> bool:
+        """Whether the size carries independency or the free state, which lift the envelope of perfect form."""
+        size = self._callout.size
+        return size is not None and bool(
+            {SizeModifier.INDEPENDENCY, SizeModifier.FREE_STATE} & set(size.modifiers)
+        )
 
     @fact
     def scope(self) -> ScopeKind | None:

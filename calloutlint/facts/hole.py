@@ -5,7 +5,7 @@ from __future__ import annotations
 from decimal import Decimal
 
 from calloutlint.facts.feature import leading_size
-from calloutlint.facts.onward import PartView
+from calloutlint.facts.onward import PartView, amount_in
 from calloutlint.facts.view import Length, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.fastener import Fastener
@@ -85,9 +85,18 @@ class HoleView(PartView):
     @fact
     def presumed_fasteners(self) -> tuple[str, ...]:
         """Fasteners of the parts list whose close to loose sizes take in this hole."""
-        if not self._open_to_assumption or self.nominal is None:
-            return ()
-        return tuple(f.text for f in self.drawing_model.fasteners if _admits(f, self.nominal, self.unit))
+        return tuple(fastener.text for fastener in self._presumed)
+
+    @property
+    def _presumed(self) -> list[Fastener]:
+        if not self.drawing_model.fasteners or not self._open_to_assumption or self.nominal is None:
+            return []
+        return [f for f in self.drawing_model.fasteners if _admits(f, self.nominal, self.unit)]
+
+    @property
+    def thinnest_presumed(self) -> Fastener:
+        """The thinnest of those fasteners: what it does not fit, none of them fits."""
+        return min(self._presumed, key=lambda fastener: _diameter_mm(fastener))
 
     @fact
     def guessed(self) -> bool:
@@ -123,6 +132,11 @@ def _admits(fastener: Fastener, nominal: Decimal, unit: Unit | None) -> bool:
     close = convert(sizes.close, diameter.unit, unit)
     loose = convert(sizes.loose, diameter.unit, unit)
     return close <= nominal <= loose
+
+
+def _diameter_mm(fastener: Fastener) -> Decimal:
+    diameter = fastener.thread.diameter if fastener.thread else None
+    return amount_in(diameter, Unit.MM) or Decimal(0)
 
 
 def _sizes_for(fastener: Fastener) -> ClearanceSizes | None:

@@ -9,11 +9,19 @@ from calloutlint.facts.onward import PartView
 from calloutlint.facts.view import fact
 from calloutlint.model.callout import DatumFeature, DatumTarget, TargetKind, Unread
 from calloutlint.model.frame import Modifier, ModifierUse, Scope, ScopeKind
-from calloutlint.model.size import Depth
+from calloutlint.model.size import Depth, Size
 
 if TYPE_CHECKING:
     from calloutlint.facts.callout import CalloutView
     from calloutlint.facts.frame import FrameView
+    from calloutlint.facts.size import SizeView
+
+LABELS = {
+    Modifier.CONTINUOUS_FEATURE: "⟨CF⟩",
+    Modifier.STATISTICAL: "⟨ST⟩",
+    Modifier.TRANSLATION: "▷",
+    Modifier.DYNAMIC: "△",
+}
 
 
 class SymbolView(PartView):
@@ -46,6 +54,18 @@ class SymbolView(PartView):
         return self._frame
 
     @fact
+    def size(self) -> SizeView | None:
+        """The size it follows; unknown in a frame."""
+        return self._callout.view_of(self.part) if isinstance(self.part, Size) else None
+
+    @fact
+    def label(self) -> str:
+        """The symbol as drawn, or what it is called where it is no letter."""
+        if self._kind is None:
+            return "the from-to symbol" if self.from_to else "naming degrees of freedom"
+        return LABELS.get(self._kind, _circled(self._kind.value))
+
+    @fact
     def on_datum(self) -> bool:
         """Whether it stands on a datum reference."""
         return self._on_datum
@@ -68,7 +88,7 @@ def symbols(callout: CalloutView) -> Iterator[SymbolView]:
             kind = Modifier(modifier.value)
             yield SymbolView(size.part, callout, kind, None)
     for frame in callout.frames:
-        if frame.whole.scope and frame.row == 1:
+        if frame.whole.scope and frame.whole.scope.kind is ScopeKind.FROM_TO and frame.row == 1:
             yield SymbolView(frame.whole.scope, callout, None, frame)
         for use in frame.part.zone.modifiers if frame.part.zone else ():
             yield SymbolView(use, callout, use.kind, frame)
@@ -82,6 +102,11 @@ def _datum_symbols(frame: FrameView, callout: CalloutView) -> Iterator[SymbolVie
             yield SymbolView(use, callout, use.kind, frame, on_datum=True)
         if ref.freedoms:
             yield SymbolView(ref, callout, None, frame, on_datum=True)
+
+
+def _circled(letters: str) -> str:
+    """A single letter in a circle; anything longer as it is."""
+    return chr(ord("Ⓐ") + ord(letters) - ord("A")) if len(letters) == 1 else letters
 
 
 class GapView(PartView):

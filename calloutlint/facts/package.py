@@ -2,12 +2,16 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from dataclasses import dataclass
 from functools import cached_property
 
 from calloutlint.facts.assembly import Assembly
 from calloutlint.facts.callout import CalloutView
 from calloutlint.facts.drawing import DrawingView
+from calloutlint.facts.fastener import FastenerView
+from calloutlint.facts.joint import JointView
+from calloutlint.facts.passage import PassageView
 from calloutlint.facts.view import View, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, Package
@@ -43,6 +47,28 @@ class PackageView(View):
     def drawings(self) -> tuple[DrawingView, ...]:
         """Its drawings, sheet by sheet."""
         return tuple(DrawingView(drawing, self) for drawing in self.part.drawings)
+
+    @property
+    def assembled(self) -> bool:
+        """Whether several drawings are at hand, so that one that a joint names ought to be among them."""
+        return len(self.part.drawings) > 1 or bool(self.part.joints)
+
+    @cached_property
+    def joints(self) -> tuple[JointView, ...]:
+        """The stated joints of the package."""
+        return tuple(JointView(joint, self) for joint in self.assembly.joints)
+
+    def presumed_passages(self) -> Iterator[PassageView]:
+        """Holes taken for clearance holes of a fastener in their drawing's parts list."""
+        for view in self._views.values():
+            if view.part.sizes and view.hole.presumed:
+                yield PassageView(view, view.hole.thinnest_presumed, None)
+
+    def listed_fasteners(self) -> Iterator[FastenerView]:
+        """Fasteners of the parts lists."""
+        for drawing in self.part.drawings:
+            for fastener in drawing.fasteners:
+                yield FastenerView(fastener, drawing.unit, drawing)
 
     @cached_property
     def assembly(self) -> Assembly:

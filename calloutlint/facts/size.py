@@ -26,6 +26,16 @@ class Role(StrEnum):
     STEP_ANGLE = "step angle"
 
 
+SIGNS = {
+    SizeForm.DIAMETER: "⌀",
+    SizeForm.SPHERICAL_DIAMETER: "S⌀",
+    SizeForm.RADIUS: "R",
+    SizeForm.CONTROLLED_RADIUS: "CR",
+    SizeForm.SPHERICAL_RADIUS: "SR",
+    SizeForm.SQUARE: "□",
+}
+
+
 def bounds(size: Size, unit: Unit | None) -> tuple[Decimal, Decimal] | None:
     """Smallest and largest size in `unit` from explicit limits or deviations; None where there are none.
 
@@ -147,6 +157,17 @@ class SizeView(PartView):
     def lower(self) -> Length | None:
         """Lower deviation as written, the second of the two; a limit called MIN counts as lower."""
         return self._written_ends[1] if self._written_ends else None
+
+    @fact
+    def named_limits(self) -> bool:
+        """Whether it is two limits with MAX and MIN written out."""
+        return isinstance(self.part.tolerance, Limits) and self.part.tolerance.named
+
+    @fact
+    def label(self) -> str:
+        """The size as the drawing writes it, without its tolerance: `⌀.281`, `R4`, `30°`."""
+        value = self.part.nominal
+        return SIGNS.get(self.part.form, "") + value.text if value else "the size"
 
     @property
     def _written_ends(self) -> tuple[Decimal, Decimal] | None:

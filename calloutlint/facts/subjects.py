@@ -4,9 +4,13 @@ from collections.abc import Iterator
 
 from calloutlint.facts.callout import CalloutView
 from calloutlint.facts.drawing import DrawingView, LineView
+from calloutlint.facts.fastener import FastenerView
+from calloutlint.facts.fixing import FixingView
 from calloutlint.facts.frame import DatumView, FrameView
+from calloutlint.facts.joint import JointView, MemberView
 from calloutlint.facts.marks import DefinitionView, GapView, SymbolView, TargetView, UnreadView
 from calloutlint.facts.package import PackageView
+from calloutlint.facts.passage import PassageView
 from calloutlint.facts.size import SizeView
 from calloutlint.facts.step import StepView
 from calloutlint.facts.thread import ThreadView
@@ -30,6 +34,11 @@ SUBJECTS: dict[str, type[View]] = {
         SymbolView,
         DefinitionView,
         TargetView,
+        JointView,
+        MemberView,
+        PassageView,
+        FixingView,
+        FastenerView,
     )
 }
 
@@ -47,6 +56,18 @@ def walk(package: PackageView) -> Iterator[View]:
         yield from drawing.lines
         for callout in drawing.callouts:
             yield from walk_callout(callout)
+    yield from walk_joints(package)
+
+
+def walk_joints(package: PackageView) -> Iterator[View]:
+    """Every stated joint with its holes, the holes taken for clearance holes, the parts lists."""
+    for joint in package.joints:
+        yield joint
+        yield from joint.members
+        yield from joint.passages
+        yield from joint.fixings
+    yield from package.presumed_passages()
+    yield from package.listed_fasteners()
 
 
 def walk_callout(callout: CalloutView) -> Iterator[View]:
