@@ -1,5 +1,7 @@
 """A grid of terminal cells to draw on, so that wide characters and overlaid lines keep their columns."""
 
+from itertools import groupby
+
 from rich.cells import cell_len
 from rich.text import Text
 
@@ -48,7 +50,7 @@ def _join(cells: list[tuple[str, str]], column: int, mark: str) -> None:
 
 def _line(row: list[tuple[str, str]], indent: int) -> Text:
     line = Text(" " * indent)
-    for characters, style in row:
-        line.append(characters, style or None)
+    for style, cells in groupby(row, key=lambda cell: cell[1]):
+        line.append("".join(characters for characters, _ in cells), style or None)
     line.rstrip()
     return line

@@ -2,13 +2,13 @@
 
 import unicodedata
 
-from calloutlint.callouts.spelling import SPELLINGS
+from calloutlint.callouts.table import SPELLINGS
 from calloutlint.callouts.write import Style
 
 # Signs that messages use beside the symbols of callouts, and symbols that need a space beside them.
 _SIGNS = {
-    "⌀": "DIA ", "□": "SQ ", "°": " DEG", "−": "-", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-", "×": "x", "←": "<-",
-    "≤": "<=", "≥": ">=", "≠": "!=", "√": "sqrt", "²": "^2", "³": "^3", "µ": "u", "μ": "u",
+    "⌀": "DIA ", "□": "SQ ", "°": " DEG", "−": "-", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-",
+    "×": "x", "←": "<-", "≤": "<=", "≥": ">=", "≠": "!=", "√": "sqrt", "²": "^2", "³": "^3", "µ": "u", "μ": "u",
     "‘": "'", "’": "'", "“": '"', "”": '"', "„": '"', "⟨": "<", "⟩": ">", "\N{NO-BREAK SPACE}": " ",
 }  # fmt: skip
 _ASCII = {row.symbol: row.ascii for row in SPELLINGS if not row.symbol.isascii()} | _SIGNS

@@ -6,7 +6,7 @@ from itertools import groupby
 from rich.cells import cell_len, set_cell_size
 from rich.text import Text
 
-from calloutlint.callouts.spelling import SPELLINGS, Spelling
+from calloutlint.callouts.table import SPELLINGS, Spelling
 from calloutlint.callouts.write import Style
 from calloutlint.report.screen import Screen
 from calloutlint.report.styles import ROLES

@@ -70,7 +70,7 @@ def _clean_words(clean: int, total: int) -> str:
     if not total:
         return "The sheet has no callouts."
     if clean == total:
-        return "The callout has no findings." if total == 1 else f"All {total} callouts have no findings."
+        return f"{counted(total, 'callout')}, none with findings."
     if not clean:
         return "No callout is without findings." if total > 1 else ""
     return f"{counted(clean, 'other callout')} {'has' if clean == 1 else 'have'} no findings."
@@ -136,7 +136,7 @@ def _show_finding(judged: Judged, letter: str, screen: Screen) -> None:
     )
     screen.paragraph(finding.title, ROLES.title, indent=3, head=head)
     if isinstance(finding.part, SheetLine):
-        screen.paragraph(f"Line {finding.part.number}: {finding.part.text.strip()}", indent=INDENT)
+        screen.paragraph(f"Line {finding.part.number}: {' '.join(finding.part.text.split())}", indent=INDENT)
     screen.paragraph(finding.message, ROLES.message, indent=INDENT)
     if finding.assumed:
         screen.paragraph(f"Assumed: {finding.assumed}", ROLES.message, indent=INDENT)
@@ -144,9 +144,9 @@ def _show_finding(judged: Judged, letter: str, screen: Screen) -> None:
 
 def _show_redline(redline: Redline, rows: Sequence[Row], screen: Screen) -> None:
     words = (
-        "Proposed, and proven: with this the sheet was checked again, the finding is gone and no new one came."
+        "Proposed (proven: the corrected sheet, checked again, is rid of this):"
         if redline.proven
-        else "Proposed, not proven: with this the sheet was checked again, and it is still not clean here."
+        else "Proposed (not proven: the corrected sheet, checked again, keeps this or gains another finding):"
     )
     screen.paragraph(words, ROLES.corrected if redline.proven else ROLES.quiet, indent=INDENT)
     corrected = lay_out(redline.callout, screen.glyphs.spelling)
