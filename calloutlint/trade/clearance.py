@@ -60,9 +60,9 @@ class ClearanceSizes:
 
     @property
     def span(self) -> tuple[Decimal, Decimal]:
-        """Nominals from close to loose, an inch hole written as its drill or rounded to three places."""
-        close, _, loose = self.holes
-        return min(close.drill, close.minimum), max(loose.drill, loose.minimum)
+        """Nominals from close to loose; an inch hole may be written as its drill rounded to three places."""
+        slack = ROUNDED if self.unit is Unit.INCH else Decimal(0)
+        return self.holes[0].drill - slack, self.holes[2].drill + slack
 
     def hole(self, fit: ClearanceFit) -> ClearanceHole:
         """The published hole of one fit."""

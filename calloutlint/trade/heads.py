@@ -32,7 +32,7 @@ class HeadSize:
     `largest`: the diameter it can reach, across the corners of a hexagon, the theoretical sharp edge of a
     countersunk head; `knurled` that of a knurled one where the standard has its own. `smallest`: the least
     diameter, across the flats of a hexagon. `bearing`: the least diameter of its bearing face where the
-    standard limits it, else `smallest`.
+    standard limits it, else `smallest`. `flats`: the largest width across the flats of a hexagon.
     """
 
     largest: Decimal
@@ -41,6 +41,7 @@ class HeadSize:
     unit: Unit
     source: str
     knurled: Decimal | None = None
+    flats: Decimal | None = None
 
 
 def head_size(head: Head, diameter: Decimal, unit: Unit) -> HeadSize | None:
@@ -99,7 +100,7 @@ def _diameter(size: str) -> Decimal:
 
 def _head(row: Mapping[str, str], unit: Unit, source: str) -> HeadSize:
     smallest = Decimal(row["smallest"])
-    bearing, knurled = row.get("bearing"), row.get("knurled")
+    bearing, knurled, flats = row.get("bearing"), row.get("knurled"), row.get("flats")
     return HeadSize(
         largest=Decimal(row["largest"]),
         smallest=smallest,
@@ -107,4 +108,5 @@ def _head(row: Mapping[str, str], unit: Unit, source: str) -> HeadSize:
         unit=unit,
         source=source,
         knurled=Decimal(knurled) if knurled else None,
+        flats=Decimal(flats) if flats else None,
     )
