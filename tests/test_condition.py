@@ -360,7 +360,7 @@ def test_any_formula_is_kleenes(formula: object, flags: tuple[bool | None, ...])
         ),
         (
             "rising_stem and (bolts > 3",
-            "the text ends too early: expected ')', 'and', 'or' or an operator\n"
+            "the text ends too early: expected ')'\n"
             "    rising_stem and (bolts > 3\n                              ^",
         ),
         (

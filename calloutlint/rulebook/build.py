@@ -1,10 +1,11 @@
 """Builds a rule from its sheet: checks every text, and tells every mistake at once."""
 
-from collections.abc import Callable, Iterator, Mapping
+from collections.abc import Callable, Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 from typing import TypeVar
 
 from calloutlint.errors import RuleSheetError
+from calloutlint.facts.subjects import SUBJECTS
 from calloutlint.facts.view import View
 from calloutlint.rulebook.changes import correction
 from calloutlint.rulebook.code import Code
@@ -25,6 +26,24 @@ from calloutlint.rulebook.text_error import TextError, nearest
 T = TypeVar("T")
 
 ALWAYS: Term = Constant(constant=True, kind=FLAG)
+
+
+def build_rules(sheets: Sequence[Filed], subjects: Mapping[str, type[View]] = SUBJECTS) -> tuple[Rule, ...]:
+    """The rules of some sheets, in their order.
+
+    Raises:
+        RuleSheetError: texts of sheets are wrong; the message tells all of them.
+    """
+    problems: list[str] = []
+    rules = []
+    for filed in sheets:
+        try:
+            rules.append(build_rule(filed, subjects))
+        except RuleSheetError as error:
+            problems.append(str(error))
+    if problems:
+        raise RuleSheetError("\n".join(problems))
+    return tuple(rules)
 
 
 def build_rule(filed: Filed, subjects: Mapping[str, type[View]]) -> Rule:

@@ -1,68 +1,29 @@
 """House rule sheets: rules of one's own, and sheets that retire or amend a shipped rule."""
 
-from collections.abc import Iterator, Mapping, Sequence
-from importlib.resources.abc import Traversable
-from pathlib import Path
+from collections.abc import Mapping, Sequence
 
-from calloutlint._resources import folder
-from calloutlint.errors import CalloutlintError, RuleSheetError
+from calloutlint.errors import RuleSheetError
+from calloutlint.rulebook.files import SheetText
 from calloutlint.rulebook.sheet import Amendment, Filed, LimitAmount, Sheet, read_sheet
 from calloutlint.rulebook.text_error import nearest
 
-Place = Path | Traversable
 
-
-def sheet_files(place: Place) -> list[Place]:
-    """Every .toml file of a folder and its folders, sorted by name.
+def read_sheets(texts: Sequence[SheetText], *, cases: bool) -> list[tuple[str, Sheet | Amendment]]:
+    """The sheets in some files, with their names; with their cases where these are wanted.
 
     Raises:
-        CalloutlintError: there is no such folder.
+        RuleSheetError: sheets are broken; every problem is told.
     """
-    if not place.is_dir():
-        raise CalloutlintError(f"{place}: there is no such folder of rule sheets")
-    return list(_found(place))
-
-
-def _found(place: Place) -> Iterator[Place]:
-    for entry in sorted(place.iterdir(), key=lambda entry: entry.name):
-        if entry.is_dir():
-            yield from _found(entry)
-        elif entry.name.endswith(".toml"):
-            yield entry
-
-
-def gather(house: Sequence[Path], *, cases: bool) -> list[Filed]:
-    """Every sheet that ships and every sheet of the house folders, amendments applied, sorted by id.
-
-    Raises:
-        RuleSheetError: sheets are broken, or an id is used twice, or an amendment is about no rule. Every
-            problem is told.
-        CalloutlintError: a house folder is missing.
-    """
-    files = [file for place in (folder("rules"), *house) for file in sheet_files(place)]
-    return combine(_read(files, cases=cases))
-
-
-def _read(files: Sequence[Place], *, cases: bool) -> list[tuple[str, Sheet | Amendment]]:
     problems: list[str] = []
     sheets = []
-    for file in files:
+    for file, text in texts:
         try:
-            sheets.append((str(file), read_sheet(_text(file), str(file), cases=cases)))
+            sheets.append((file, read_sheet(text, file, cases=cases)))
         except RuleSheetError as error:
             problems.append(str(error))
     if problems:
         raise RuleSheetError("\n".join(problems))
     return sheets
-
-
-def _text(file: Place) -> str:
-    try:
-        return file.read_text(encoding="utf-8")
-    except UnicodeDecodeError:
-        raise RuleSheetError(f"{file}: a rule sheet must be UTF-8 text") from None
-    except OSError as error:
-        raise RuleSheetError(f"{file}: cannot be read: {error.strerror}") from None
 
 
 def combine(sheets: Sequence[tuple[str, Sheet | Amendment]]) -> list[Filed]:

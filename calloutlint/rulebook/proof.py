@@ -72,9 +72,9 @@ def _run(rule: Rule, beside: list[Rule], case: Case) -> Iterator[str]:
     places = Counter(place(finding, package) for finding in findings)
     expected = Counter(case.finds)
     yield from (f"nothing found at {name}" for name in (expected - places).elements())
-    for name in (places - expected).elements():
-        message = next(f.message for f in findings if place(f, package) == name)
-        yield f"found at {name}, where nothing is expected: {message}"
+    for name in places - expected:
+        messages = " / ".join(f.message for f in findings if place(f, package) == name)
+        yield f"found {places[name]} at {name}, where {expected[name]} is expected: {messages}"
     if places == expected:
         yield from _details(case, findings)
 

@@ -2,21 +2,22 @@
 
 import hashlib
 import json
-from collections.abc import Mapping, Sequence
+import pickle
+from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 from pathlib import Path
 
-from calloutlint.errors import RuleSheetError
-from calloutlint.facts.subjects import SUBJECTS, subjects, walk
-from calloutlint.facts.view import View
+from calloutlint import _saved
+from calloutlint._resources import folder, read_text
+from calloutlint.facts.subjects import subjects, walk
 from calloutlint.model.drawing import Package
-from calloutlint.rulebook.build import build_rule
 from calloutlint.rulebook.engine import Engine, ordered
+from calloutlint.rulebook.files import SheetText, read_texts
 from calloutlint.rulebook.finding import Finding
-from calloutlint.rulebook.house import gather
 from calloutlint.rulebook.rule import Rule
-from calloutlint.rulebook.sheet import Filed
+
+CODE_FOLDERS = ("facts", "model", "rulebook")
 
 
 @dataclass(frozen=True)
@@ -44,6 +45,9 @@ class Rulebook:
 def load_rulebook(house: Sequence[Path] = (), *, cases: bool = False) -> Rulebook:
     """The rules that ship and those of the house folders.
 
+    Without cases the rules are kept from one run to the next, since to read and check every sheet again
+    would take longer than most drawings do.
+
     Args:
         house: folders of house rule sheets.
         cases: whether the cases of the sheets are wanted, to prove them or show them.
@@ -52,22 +56,28 @@ def load_rulebook(house: Sequence[Path] = (), *, cases: bool = False) -> Ruleboo
         RuleSheetError: sheets are broken; the message tells every problem with its file and key.
         CalloutlintError: a house folder is missing.
     """
-    return build_rulebook(gather(house, cases=cases))
+    texts = read_texts((folder("rules"), *house))
+    path = None if cases else _saved.saved_path(texts, list(_code_stamps()))
+    if path is not None and (rules := _saved.load(path, pickle.load)):
+        return Rulebook(rules)
+    rules = _built(texts, cases=cases)
+    if path is not None:
+        _saved.save(path, lambda file: pickle.dump(rules, file))
+    return Rulebook(rules)
 
 
-def build_rulebook(sheets: Sequence[Filed], known: Mapping[str, type[View]] = SUBJECTS) -> Rulebook:
-    """The rulebook of some sheets.
+def _built(texts: Sequence[SheetText], *, cases: bool) -> tuple[Rule, ...]:
+    # Only a first run pays for the libraries that read and check sheets.
+    from calloutlint.rulebook.build import build_rules
+    from calloutlint.rulebook.house import combine, read_sheets
 
-    Raises:
-        RuleSheetError: texts of sheets are wrong; the message tells all of them.
-    """
-    problems: list[str] = []
-    rules = []
-    for filed in sheets:
-        try:
-            rules.append(build_rule(filed, known))
-        except RuleSheetError as error:
-            problems.append(str(error))
-    if problems:
-        raise RuleSheetError("\n".join(problems))
-    return Rulebook(tuple(rules))
+    return build_rules(combine(read_sheets(texts, cases=cases)))
+
+
+def _code_stamps() -> Iterator[object]:
+    """What tells one state of the code that rules run on from another, while it is being worked on."""
+    yield read_text("grammar", "condition.lark")
+    for name in CODE_FOLDERS:
+        for file in sorted((Path(__file__).parent.parent / name).glob("*.py")):
+            status = file.stat()
+            yield name, file.name, status.st_mtime_ns, status.st_size
