@@ -32,6 +32,7 @@ FORM = {
 }
 ORIENTATION = {Characteristic.ANGULARITY, Characteristic.PERPENDICULARITY, Characteristic.PARALLELISM}
 PROFILE = {Characteristic.LINE_PROFILE, Characteristic.SURFACE_PROFILE}
+SURFACE_FORM = {Characteristic.CIRCULARITY, Characteristic.CYLINDRICITY}
 RUNOUT = {Characteristic.CIRCULAR_RUNOUT, Characteristic.TOTAL_RUNOUT}
 MATERIAL = (Modifier.MMC, Modifier.LMC, Modifier.RFS)
 
@@ -197,6 +198,11 @@ class FrameView(PartView):
     def runout(self) -> bool:
         """Whether it is a runout tolerance."""
         return self.part.characteristic in RUNOUT
+
+    @fact
+    def surface_only(self) -> bool:
+        """Whether it controls a surface whatever its size: circularity, cylindricity, profile, runout."""
+        return self.runout or self.profile or self.part.characteristic in SURFACE_FORM
 
     @fact
     def tolerance(self) -> ToleranceView:

@@ -17,7 +17,7 @@ from calloutlint.units import Unit
 
 
 def written(amount: Decimal, unit: Unit | None, like: Value | None = None) -> Value:
-    """An amount as its unit's rule writes it: inch to the places of `like` or more, mm without needless zeros."""
+    """An amount as its unit's rule writes it: inch to the places of `like` or more, mm as short as can be."""
     exact = amount.normalize()
     if unit is not Unit.INCH:
         return Value(f"{exact:f}", amount, unit)
