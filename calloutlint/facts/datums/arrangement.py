@@ -13,7 +13,7 @@ from functools import lru_cache
 from itertools import product
 
 from calloutlint.facts.datums.kinds import DatumGeometry, DatumKind
-from calloutlint.facts.datums.motion import Constraints, Freedom, Z
+from calloutlint.facts.datums.motion import Constraints, Freedom, Row, Z
 from calloutlint.facts.datums.placement import Placement, placements
 from calloutlint.facts.datums.relations import Link, Relation, agrees
 
@@ -106,12 +106,12 @@ def takes_nothing(references: tuple[Reference, ...], relations: tuple[Relation, 
     """Whether the last reference takes no freedom away in any arrangement. False where there is none."""
     *earlier, last = references
     found = False
-    for placed in arrangements(tuple(earlier), relations):
-        before = Constraints()
-        for reference in earlier:
-            before = _after(before, reference, placed)
+    for placed in arrangements(earlier, relations):
+        before = constraints(earlier, placed)
         for whole in _extensions(placed, last, relations):
             found = True
+            if before.rank == 6:
+                break
             if _after(before, last, whole).rank > before.rank:
                 return False
     return found
@@ -162,9 +162,14 @@ def _after(before: Constraints, reference: Reference, placed: Arrangement) -> Co
 
 def own(reference: Reference, placed: Arrangement) -> Constraints:
     """What the datum of a reference forbids by itself, whatever freedoms are named behind it."""
-    rows = (row for letter, _ in reference.members for row in placed[letter].constraints())
+    rows = (row for letter, _ in reference.members for row in _forbidden(placed[letter]))
     held = Constraints().and_also(rows)
     return held.orientation() if reference.orients_only else held
+
+
+@lru_cache(maxsize=1024)
+def _forbidden(place: Placement) -> tuple[Row, ...]:
+    return place.constraints()
 
 
 def _extensions(
