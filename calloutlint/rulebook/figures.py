@@ -25,7 +25,7 @@ def written(value: Any, kind: Kind, unit: Unit | None, *, signed: bool = False) 
 
 def figure(value: Any, kind: Kind, unit: Unit | None) -> str:
     """A value with its unit, as a record lists it."""
-    mark = UNIT_MARKS.get(unit, "") if unit and kind is LENGTH else ""
+    mark = UNIT_MARKS.get(unit, "") if unit and kind == LENGTH else ""
     return written(value, kind, unit) + mark
 
 
@@ -36,10 +36,10 @@ def joined(items: Iterable[str]) -> str:
 
 
 def _quantity(amount: Decimal, kind: Kind, unit: Unit | None, *, signed: bool) -> str:
-    inch = kind is LENGTH and unit is Unit.INCH
+    inch = kind == LENGTH and unit is Unit.INCH
     text = _inch(amount) if inch else _plain(amount)
     sign = "-" if amount < 0 and text.strip(".0") else "+" if signed and (amount or inch) else ""
-    return sign + text + ("°" if kind is ANGLE else "")
+    return sign + text + ("°" if kind == ANGLE else "")
 
 
 def _inch(amount: Decimal) -> str:
