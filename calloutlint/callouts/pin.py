@@ -16,7 +16,7 @@ _PIN = re.compile(
     rf"(?:\s*(?:±|\+/-)\s*(?P<equal>{_AMOUNT})"
     rf"|\s*\(?(?P<upper>[+-]\s*(?:{_AMOUNT})|0(?=\s*/))\s*/?\s*(?P<lower>[+-]\s*(?:{_AMOUNT})|0(?![\d.]))\)?)?"
 )
-_LENGTH = re.compile(rf"\s*x\s*(?P<length>{_NUMBER})", re.IGNORECASE)
+_LENGTH = re.compile(rf"(?<![A-Za-z])x\s*(?P<length>{_NUMBER})", re.IGNORECASE)
 
 
 def find_pin(text: str, standard: str | None) -> tuple[Size | None, Value | None]:
@@ -25,7 +25,7 @@ def find_pin(text: str, standard: str | None) -> tuple[Size | None, Value | None
     if match is None:
         return None, None
     unit = _unit(match, standard)
-    length = _LENGTH.match(text, match.end())
+    length = _LENGTH.search(text, match.end())
     return _size(match, unit), parse_value(length["length"], unit) if length else None
 
 

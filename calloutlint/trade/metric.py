@@ -63,7 +63,7 @@ def is_plausible_pitch(diameter: Decimal, number: Decimal) -> bool:
 
 def thread(diameter: Decimal, pitch: Decimal | None = None, series: str = "M") -> ThreadForm | None:
     """A metric thread; without a pitch the coarse one, and None where ISO 261 has no coarse pitch for it."""
-    stated = pitch or coarse_pitch(diameter)
+    stated = coarse_pitch(diameter) if pitch is None else pitch
     if stated is None:
         return None
     crest = UNJ_CREST if "J" in series else INTERNAL_CREST
