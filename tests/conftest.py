@@ -1,6 +1,7 @@
 """What all tests share: the folder of the project, repeatable properties, a guard for runs on the wheel."""
 
 import sys
+from collections.abc import Iterator
 from pathlib import Path
 
 import pytest
@@ -36,3 +37,11 @@ def pytest_report_header() -> str:
 def project() -> Path:
     """The folder that holds README.md, pyproject.toml and tests."""
     return PROJECT
+
+
+@pytest.fixture(scope="session", autouse=True)
+def _own_cache(tmp_path_factory: pytest.TempPathFactory) -> Iterator[None]:
+    """What the program keeps from run to run is built anew, and the user's own is left alone."""
+    with pytest.MonkeyPatch.context() as environment:
+        environment.setenv("XDG_CACHE_HOME", str(tmp_path_factory.mktemp("cache")))
+        yield
