@@ -143,10 +143,10 @@ class TestRefusals:
         ("arguments", "expected"),
         [
             ([], "'calloutlint' needs one of demo, check, redline, "),
-            (["chekc", "x"], "'calloutlint' knows no 'chekc'. Was 'check' meant? It knows demo, check, redline, "),
+            (["chekc", "x"], "'calloutlint' knows no 'chekc'. Was 'check' meant? It knows demo, check, "),
             (["check"], "'calloutlint check' needs a PATH: a callout sheet, or a folder of sheets."),
             (["check", "--plian", "x"], "There is no option '--plian'. Was '--plain' meant?"),
-            (["check", "x", "--gate", "grave"], "--gate: there is no grade 'grave'. The grades are critical, major, "),
+            (["check", "x", "--gate", "grave"], "--gate: there is no grade 'grave'. The grades are critical, "),
             (["check", "x", "--report"], "--report: expected one argument."),
             (["check", "x", "--report", "r.pdf"], "No report can be written to 'r.pdf': "),
             (["check", "x", "--report", "no/such/r.json"], "there is no folder 'no/such'"),

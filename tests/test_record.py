@@ -163,13 +163,15 @@ def test_a_failed_write_leaves_the_old_report(tmp_path: Path) -> None:
     assert list(tmp_path.iterdir()) == [path]
 
 
+SUFFIX = "No report can be written to '{0}': the suffix says which kind is wanted, and it has"
+POSSIBLE = "What can be written now: .json."
+
+
 @pytest.mark.parametrize(
     ("name", "expected"),
     [
-        ("r.html", "No report can be written to '{0}': the suffix says which kind is wanted, and it has '.html'. "
-                   "What can be written now: .json."),
-        ("report", "No report can be written to '{0}': the suffix says which kind is wanted, and it has none. "
-                   "What can be written now: .json."),
+        ("r.html", f"{SUFFIX} '.html'. {POSSIBLE}"),
+        ("report", f"{SUFFIX} none. {POSSIBLE}"),
         ("folder.json", "No report can be written to '{0}': there is a folder of that name."),
         ("no/r.json", "No report can be written to '{0}': there is no folder '{1}'."),
     ],

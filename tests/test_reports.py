@@ -47,7 +47,8 @@ def review_of(case: Path) -> Review:
 
 def _judged(entry: dict[str, Any], drawings: dict[str, Drawing]) -> Judged:
     drawing = drawings.get(entry.get("drawing", ""))
-    callout = drawing and next((c for c in drawing.callouts if c.balloon == entry.get("balloon")), None)
+    callouts = drawing.callouts if drawing else ()
+    callout = next((c for c in callouts if c.balloon == entry.get("balloon")), None)
     part: object = drawing and next((line for line in drawing.lines if line.number == entry.get("line")), None)
     span = None
     if callout and "marks" in entry:

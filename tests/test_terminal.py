@@ -38,7 +38,7 @@ def lines(text: str) -> str:
 
 
 def test_a_frame_is_drawn_in_compartments_with_its_fault_marked_in_place() -> None:
-    rows = [TextRow((Piece("4X ⌀.281"), Piece("THRU"))), frame("⌖", "⌀.014", "A", "B")]
+    rows: list[Row] = [TextRow((Piece("4X ⌀.281"), Piece("THRU"))), frame("⌖", "⌀.014", "A", "B")]
     assert drawn(rows, {Place(1, 1): [A], Place(1, 3): [B]}) == lines("""
     4X ⌀.281 THRU
     ┌───┬───────┬───┬───┐
@@ -48,7 +48,7 @@ def test_a_frame_is_drawn_in_compartments_with_its_fault_marked_in_place() -> No
 
 
 def test_the_same_frame_in_ascii() -> None:
-    rows = [TextRow((Piece("4X DIA .281"), Piece("THRU"))), frame("POS", "DIA .014", "A", "B")]
+    rows: list[Row] = [TextRow((Piece("4X DIA .281"), Piece("THRU"))), frame("POS", "DIA .014", "A", "B")]
     assert drawn(rows, {Place(1, 1): [A], Place(1, 3): [B]}, ASCII) == lines("""
     4X DIA .281 THRU
     +-----+----------+---+---+
@@ -97,7 +97,7 @@ def test_a_line_at_fault_as_a_whole_is_pointed_at_from_the_right() -> None:
 
 
 def test_datum_feature_symbols_hang_from_what_stands_above_them() -> None:
-    rows = [frame("⟂", ".002", "A"), DatumRow((Piece("B"), Piece("C")))]
+    rows: list[Row] = [frame("⟂", ".002", "A"), DatumRow((Piece("B"), Piece("C")))]
     assert drawn(rows, {Place(1, 1): [A]}) == lines("""
     ┌───┬──────┬───┐
     │ ⟂ │ .002 │ A │
@@ -110,7 +110,7 @@ def test_datum_feature_symbols_hang_from_what_stands_above_them() -> None:
 
 
 def test_marks_in_one_place_share_it_and_marks_that_overlap_stand_under_each_other() -> None:
-    rows = [TextRow((Piece("4 HOLES .281 +.01 -.002"),))]
+    rows: list[Row] = [TextRow((Piece("4 HOLES .281 +.01 -.002"),))]
     marked = {
         Place(0, 0): [A, B],
         Place(0, 0, (0, 7)): [Mark("c", "")],
@@ -146,7 +146,7 @@ def test_a_frame_too_long_for_the_screen_goes_on_below_with_torn_sides() -> None
 
 @pytest.mark.parametrize("width", [24, 40, 57])
 def test_nothing_drawn_is_wider_than_the_screen(width: int) -> None:
-    rows = [
+    rows: list[Row] = [
         TextRow((Piece("REMOVE ALL BURRS AND SHARP EDGES " * 3), Piece("x" * 90))),
         frame(
             "⌖",

@@ -18,7 +18,6 @@ from calloutlint.commands.arguments import (
     standard_option,
 )
 from calloutlint.errors import CalloutlintError
-from calloutlint.report.files import check_report_path, write_report
 
 if TYPE_CHECKING:
     from calloutlint.model.drawing import Package
@@ -65,12 +64,20 @@ def review_options(parser: Parser) -> None:
 
 def run(options: Namespace) -> int:
     """Check the drawings that the options name; the exit status."""
-    for path in options.report:
-        check_report_path(path)
+    check_reports(options)
     package, rulebook = read(options)
     if options.datums:
         return _show_datums(package, options)
     return show_and_report(reviewed(package, rulebook, options), options)
+
+
+def check_reports(options: Namespace) -> None:
+    """Make sure that the reports asked for can be written, before any work is done."""
+    if options.report:
+        from calloutlint.report.files import check_report_path
+
+        for path in options.report:
+            check_report_path(path)
 
 
 def read(options: Namespace) -> "tuple[Package, Rulebook]":
@@ -106,8 +113,11 @@ def show_and_report(outcome: "Review", options: Namespace) -> int:
 
     with reader_may_leave():
         show_review(outcome, Screen(sys.stdout, plain=options.plain))
-    for path in options.report:
-        write_report(path, outcome)
+    if options.report:
+        from calloutlint.report.files import write_report
+
+        for path in options.report:
+            write_report(path, outcome)
     return status(outcome)
 
 

@@ -3,8 +3,7 @@
 from argparse import Namespace
 
 from calloutlint.commands.arguments import Subparsers
-from calloutlint.commands.check import review_options, reviewed, rules_for, show_and_report
-from calloutlint.report.files import check_report_path
+from calloutlint.commands.check import check_reports, review_options, reviewed, rules_for, show_and_report
 
 
 def add(commands: Subparsers) -> None:
@@ -22,7 +21,6 @@ def run(options: Namespace) -> int:
     """Review the demo package; the exit status."""
     from calloutlint.reading.package import demo_package
 
-    for path in options.report:
-        check_report_path(path)
+    check_reports(options)
     package = demo_package()
     return show_and_report(reviewed(package, rules_for(package), options), options)

@@ -3,19 +3,15 @@
 from collections.abc import Iterator
 from dataclasses import fields, is_dataclass
 
-from calloutlint.model.frame import Segment
 from calloutlint.model.source import Span
 from calloutlint.rulebook.finding import Edit, Finding
 
 
 def faulty_parts(finding: Finding) -> list[object]:
-    """The part of a finding; of a frame line the parts inside it that the correction changes, if any are."""
-    if isinstance(finding.part, Segment):
-        inner = {id(part) for part in nested(finding.part)} - {id(finding.part)}
-        changed = [target for edit in finding.edits for target in _targets(edit) if id(target) in inner]
-        if changed:
-            return changed
-    return [finding.part]
+    """The parts inside the part of a finding that its correction changes, if any are; else that part itself."""
+    inner = {id(part) for part in nested(finding.part)} - {id(finding.part)}
+    changed = [part for edit in finding.edits for part in _changed(edit) if id(part) in inner]
+    return changed or [finding.part]
 
 
 def faulty_span(finding: Finding) -> Span | None:
@@ -39,5 +35,9 @@ def nested(part: object) -> Iterator[object]:
             yield from nested(getattr(part, entry.name))
 
 
-def _targets(edit: Edit) -> tuple[object, ...]:
-    return edit.target if isinstance(edit.target, tuple) else (edit.target,)
+def _changed(edit: Edit) -> Iterator[object]:
+    """What an edit changes: the part that its word names in the target, else the target."""
+    targets = edit.target if isinstance(edit.target, tuple) else (edit.target,)
+    for target in targets:
+        named = getattr(target, edit.word, None) if edit.word else None
+        yield named if is_dataclass(named) else target

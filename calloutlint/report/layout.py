@@ -58,17 +58,29 @@ class DatumRow:
 Row = TextRow | FrameRow | DatumRow
 
 
-def lay_out(callout: Callout, style: Style) -> list[Row]:
-    """The rows of a callout in reading order, lines that hold unread text as they stand in the source."""
+def lay_out(callout: Callout, style: Style, like: Callout | None = None) -> list[Row]:
+    """The rows of a callout in reading order, lines that hold unread text as they stand in the source.
+
+    Parts share a line where they do in the source, or in that of the callout `like` it with the same parts.
+    """
     torn = {part.span.line for part in callout.unread if part.span.line < len(callout.source)}
     rows: list[Row] = []
-    for part in callout.parts:
+    before = None
+    for part, home in zip(callout.parts, _homes(callout, like), strict=True):
         for line, row in _rows_of(part, style):
             if line not in torn:
-                _add(rows, row, line)
+                _add(rows, row, joins=home is not None and home == before)
             elif not any(_stands_on(row, line) for row in rows):
                 rows.append(_verbatim(callout, line, style))
+        before = home
     return rows
+
+
+def _homes(callout: Callout, like: Callout | None) -> list[int | None]:
+    """The line that each part stands on; None for frames, which have lines of their own."""
+    same = like is not None and [type(part) for part in like.parts] == [type(part) for part in callout.parts]
+    parts = like.parts if like is not None and same else callout.parts
+    return [None if isinstance(part, Frame) else part.span.line for part in parts]
 
 
 def _rows_of(part: Part, style: Style) -> Iterator[tuple[int, Row]]:
@@ -109,10 +121,10 @@ def _scope_words(scope: Scope, style: Style) -> str:
     return printable(f"{scope.start} {arrow} {scope.end}", style)
 
 
-def _add(rows: list[Row], row: Row, line: int) -> None:
-    """Append a row, or join it to the last one where both are text of one line, or both datum symbols."""
+def _add(rows: list[Row], row: Row, *, joins: bool) -> None:
+    """Append a row; text that joins what stands before it and datum symbols go on in the last row."""
     last = rows[-1] if rows else None
-    if isinstance(row, TextRow) and isinstance(last, TextRow) and _stands_on(last, line):
+    if joins and isinstance(row, TextRow) and isinstance(last, TextRow):
         rows[-1] = TextRow(last.pieces + row.pieces)
     elif isinstance(row, DatumRow) and isinstance(last, DatumRow):
         rows[-1] = DatumRow(last.pieces + row.pieces)

@@ -31,9 +31,9 @@ class Place:
 
 def places(rows: Sequence[Row], finding: Finding) -> list[Place]:
     """The places of a finding, the narrowest that are known; none where it is about the whole callout."""
-    if finding.part is None or finding.part is finding.callout:
-        return []
     faulty = faulty_parts(finding)
+    if faulty[0] is None or faulty[0] is finding.callout:
+        return []
     by_span = list(_by_span(rows, finding.span)) if finding.span else []
     if faulty[0] is finding.part and finding.span not in (None, NOWHERE, getattr(finding.part, "span", None)):
         return by_span

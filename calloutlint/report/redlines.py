@@ -27,12 +27,14 @@ def show_redlines(review: Review, screen: Screen) -> None:
     screen.rule(ROLES.quiet)
     proven = sum(bool(judged.redline and judged.redline.proven) for judged in correctable)
     standing = sum(judged.waived is None for judged in review.findings)
-    screen.paragraph(
-        f"{counted(standing, 'finding')}, {counted(len(correctable), 'correction')}, {proven} of them proven. "
-        "--incorporate writes the proven ones into the sheets.".capitalize(),
-        ROLES.heading,
-        indent=1,
-    )
+    told = [
+        counted(standing, "finding"),
+        counted(len(correctable), "correction"),
+        f"{proven or 'none'} of them proven.",
+    ]
+    screen.paragraph(", ".join(told), ROLES.heading, indent=1)
+    if proven:
+        screen.paragraph("'redline --incorporate' writes the proven ones into the sheets.", indent=1)
 
 
 def show_incorporated(corrections: Sequence[Correction], screen: Screen) -> None:
@@ -41,9 +43,8 @@ def show_incorporated(corrections: Sequence[Correction], screen: Screen) -> None
         show_heading(drawing, screen)
         for correction in group:
             show_balloon(correction.new, screen)
-            old, new = (
-                lay_out(callout, screen.glyphs.spelling) for callout in (correction.old, correction.new)
-            )
+            old = lay_out(correction.old, screen.glyphs.spelling)
+            new = lay_out(correction.new, screen.glyphs.spelling, like=correction.old)
             changed, marked = changed_rows(new, old, Mark("", ROLES.corrected))
             screen.lines(draw(changed, marked, screen.glyphs, screen.width - INDENT), INDENT)
             screen.line()

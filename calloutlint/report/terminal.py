@@ -1,7 +1,9 @@
 """A review on the terminal: every callout with findings drawn, its faults marked in place and explained."""
 
 from collections.abc import Iterable, Sequence
+from contextlib import suppress
 from itertools import groupby
+from pathlib import Path
 
 from rich.text import Text
 
@@ -63,7 +65,14 @@ def _show_heading(name: str, facts: Sequence[str], screen: Screen) -> None:
 def _facts(drawing: Drawing) -> list[str]:
     standard = drawing.standard.written if drawing.standard else "no standard stated"
     unit = drawing.unit.value if drawing.unit else "no units stated"
-    return [standard, unit, counted(len(drawing.callouts), "callout"), f"from {drawing.file}"]
+    return [standard, unit, counted(len(drawing.callouts), "callout"), f"from {_near(drawing.file)}"]
+
+
+def _near(file: str) -> str:
+    """A file's path from the working folder where it stands inside it."""
+    with suppress(ValueError, OSError):
+        return str(Path(file).relative_to(Path.cwd()))
+    return file
 
 
 def _clean_words(clean: int, total: int) -> str:
@@ -124,7 +133,7 @@ def _show_findings(
     for number, judged in enumerate(findings):
         _show_finding(judged, letters.get(number, screen.glyphs.dot), screen)
         if judged.redline:
-            _show_redline(judged.redline, rows, screen)
+            _show_redline(judged.redline, judged.finding.callout, rows, screen)
         screen.line()
 
 
@@ -142,13 +151,13 @@ def _show_finding(judged: Judged, letter: str, screen: Screen) -> None:
         screen.paragraph(f"Assumed: {finding.assumed}", ROLES.message, indent=INDENT)
 
 
-def _show_redline(redline: Redline, rows: Sequence[Row], screen: Screen) -> None:
+def _show_redline(redline: Redline, old: Callout | None, rows: Sequence[Row], screen: Screen) -> None:
     words = (
         "Proposed (proven: the corrected sheet, checked again, is rid of this):"
         if redline.proven
         else "Proposed (not proven: the corrected sheet, checked again, keeps this or gains another finding):"
     )
     screen.paragraph(words, ROLES.corrected if redline.proven else ROLES.quiet, indent=INDENT)
-    corrected = lay_out(redline.callout, screen.glyphs.spelling)
+    corrected = lay_out(redline.callout, screen.glyphs.spelling, like=old)
     changed, marked = changed_rows(corrected, rows, Mark("", ROLES.corrected))
     screen.lines(draw(changed, marked, screen.glyphs, screen.width - INDENT), INDENT)
