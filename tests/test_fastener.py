@@ -176,6 +176,19 @@ def test_pins_and_plain_bolts(text: str, pin: str, length: str) -> None:
 
 
 @pytest.mark.parametrize(
+    ("text", "expected"),
+    [
+        ("⌀6 DOWEL", "⌀6 inch"),
+        ("⌀6 m6 DOWEL", "⌀6 m6 mm"),
+        ("⌀6 mm DOWEL", "⌀6 mm"),
+        ("1/4 DOWEL", "⌀1/4 inch"),
+    ],
+)
+def test_a_pin_is_in_the_drawings_unit_unless_it_shows_another(text: str, expected: str) -> None:
+    assert pin_of(parse_fastener(text, Unit.INCH)) == expected
+
+
+@pytest.mark.parametrize(
     "text",
     [
         "", " ", "garbage", "M", "#13-20", "3/0 bolt", "FOR 3/8 TUBE", "ITEM #4", "1/4 PLATE", "10 SCREW",

@@ -3,6 +3,7 @@
 import re
 from dataclasses import dataclass
 from decimal import Decimal
+from functools import lru_cache
 
 from calloutlint.callouts import fastener_words as words
 from calloutlint.callouts.pin import find_pin
@@ -54,12 +55,13 @@ class _Found:
     length: Value | None = None
 
 
-def parse_fastener(text: str) -> Fastener:
+@lru_cache(maxsize=1024)
+def parse_fastener(text: str, unit: Unit | None = None) -> Fastener:
     """The fastener that a designation names; never raises.
 
     A designation that is not understood has neither `thread` nor `pin`. A thread's diameter is the basic
-    major diameter in inches or mm; a pitch that is not written stays None. A pin's size has a unit only
-    where its spelling shows one.
+    major diameter in inches or mm; a pitch that is not written stays None. `unit` is the drawing's: a pin is
+    in it unless its own spelling shows another.
     """
     folded = " ".join(text.split())
     standard, rest = words.standard_in(_spelled(folded))
@@ -69,7 +71,7 @@ def parse_fastener(text: str) -> Fastener:
     if not words.names_pin(rest, standard):
         found = _find_thread(rest)
     if found.thread is None and ("⌀" in rest or words.names_pin(rest, standard)):
-        pin, length = find_pin(rest, standard)
+        pin, length = find_pin(rest, standard, unit)
         found = _Found(None, length)
     return Fastener(
         text=folded,

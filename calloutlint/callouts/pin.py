@@ -19,12 +19,15 @@ _PIN = re.compile(
 _LENGTH = re.compile(rf"(?<![A-Za-z])x\s*(?P<length>{_NUMBER})", re.IGNORECASE)
 
 
-def find_pin(text: str, standard: str | None) -> tuple[Size | None, Value | None]:
-    """Diameter and length of a pin in a designation, spellings already folded; None for what is not there."""
+def find_pin(text: str, standard: str | None, default: Unit | None) -> tuple[Size | None, Value | None]:
+    """Diameter and length of a pin in a designation, spellings already folded; None for what is not there.
+
+    They are in the unit that the spelling shows, else in `default`.
+    """
     match = next((m for m in _PIN.finditer(text) if m["sign"]), None) or _PIN.search(text)
     if match is None:
         return None, None
-    unit = _unit(match, standard)
+    unit = _unit(match, standard) or default
     length = _LENGTH.search(text, match.end())
     return _size(match, unit), parse_value(length["length"], unit) if length else None
 

@@ -1,10 +1,11 @@
 """Published clearance holes: ASME B18.2.8 for inch and metric fasteners, ISO 273 for metric ones."""
 
-from collections.abc import Iterator, Mapping
+from bisect import bisect_left, bisect_right
+from collections.abc import Mapping
 from dataclasses import dataclass
 from decimal import Decimal
 from enum import StrEnum
-from functools import cache
+from functools import cache, lru_cache
 
 from calloutlint.trade.drills import drill_diameter
 from calloutlint.trade.inches import ROUNDED, named_size, nominal_size
@@ -18,6 +19,9 @@ class ClearanceFit(StrEnum):
     CLOSE = "close"
     NORMAL = "normal"
     LOOSE = "loose"
+
+
+_NORMAL_FIRST = (ClearanceFit.NORMAL, ClearanceFit.CLOSE, ClearanceFit.LOOSE)
 
 
 @dataclass(frozen=True, slots=True)
@@ -97,13 +101,14 @@ def assumed_range(diameter: Decimal, unit: Unit) -> tuple[Decimal, Decimal] | No
     return sizes.span if sizes else None
 
 
+@lru_cache(maxsize=1024)
 def fasteners_for(nominal: Decimal, unit: Unit) -> tuple[ClearanceMatch, ...]:
     """Fasteners for which a hole nominal is a published size: normal fits first, then close, then loose.
 
     Fasteners of the drawing's own unit; those of the other unit only where there is none.
     """
     own, other = (Unit.INCH, Unit.MM) if unit is Unit.INCH else (Unit.MM, Unit.INCH)
-    return tuple(_matches(nominal, unit, own)) or tuple(_matches(nominal, unit, other))
+    return _matches(nominal, unit, own) or _matches(nominal, unit, other)
 
 
 def is_published(nominal: Decimal, unit: Unit) -> bool:
@@ -111,14 +116,15 @@ def is_published(nominal: Decimal, unit: Unit) -> bool:
     return bool(fasteners_for(nominal, unit))
 
 
-def _matches(nominal: Decimal, unit: Unit, table: Unit) -> Iterator[ClearanceMatch]:
-    wanted = convert(nominal, unit, table)
-    slack = _slack(unit, table)
-    everything = (_inch_table() if table is Unit.INCH else _metric_table()).values()
-    for fit in (ClearanceFit.NORMAL, ClearanceFit.CLOSE, ClearanceFit.LOOSE):
-        for sizes in everything:
-            if abs(sizes.hole(fit).drill - wanted) <= slack:
-                yield ClearanceMatch(sizes, fit)
+def _matches(nominal: Decimal, unit: Unit, table: Unit) -> tuple[ClearanceMatch, ...]:
+    wanted, slack, entries = convert(nominal, unit, table), _slack(unit, table), _by_drill(table)
+    first = bisect_left(entries, wanted - slack, key=_drill)
+    after = bisect_right(entries, wanted + slack, key=_drill)
+    return tuple(sorted(entries[first:after], key=lambda match: _NORMAL_FIRST.index(match.fit)))
+
+
+def _drill(match: ClearanceMatch) -> Decimal:
+    return match.sizes.hole(match.fit).drill
 
 
 def _slack(unit: Unit, table: Unit) -> Decimal:
@@ -126,6 +132,12 @@ def _slack(unit: Unit, table: Unit) -> Decimal:
     if table is Unit.INCH:
         return ROUNDED
     return ROUNDED * MM_PER_INCH if unit is Unit.INCH else Decimal(0)
+
+
+@cache
+def _by_drill(unit: Unit) -> tuple[ClearanceMatch, ...]:
+    sizes = (_inch_table() if unit is Unit.INCH else _metric_table()).values()
+    return tuple(sorted((ClearanceMatch(each, fit) for each in sizes for fit in ClearanceFit), key=_drill))
 
 
 @cache

@@ -72,9 +72,22 @@ def is_stock(diameter: Decimal, unit: Unit) -> bool:
 
 def next_larger_stock(diameter: Decimal, unit: Unit) -> Drill | None:
     """The smallest stock drill of a unit that is not smaller than `diameter`; None above the largest."""
-    drills = stock_drills(unit)
-    place = bisect_left(drills, diameter, key=lambda drill: drill.diameter)
+    drills, place = stock_drills(unit), _place(diameter, unit)
     return drills[place] if place < len(drills) else None
+
+
+def next_fitting_drill(least: Decimal, unit: Unit) -> Drill | None:
+    """The smallest stock drill whose hole, drilled as small as usual, is not smaller than `least`.
+
+    None beyond stock or outside the table of drilled tolerances.
+    """
+    for drill in stock_drills(unit)[_place(least, unit) :]:
+        tolerance = drilled_tolerance(drill.diameter, unit)
+        if tolerance is None:
+            return None
+        if drill.diameter - tolerance.minus >= least:
+            return drill
+    return None
 
 
 def drilled_tolerance(diameter: Decimal, unit: Unit) -> DrilledTolerance | None:
@@ -91,6 +104,10 @@ def drilled_tolerance(diameter: Decimal, unit: Unit) -> DrilledTolerance | None:
 
 def _rounded(amount: Decimal, unit: Unit) -> Decimal:
     return amount if unit is Unit.INCH else convert(amount, Unit.INCH, unit).quantize(Decimal("0.01"))
+
+
+def _place(diameter: Decimal, unit: Unit) -> int:
+    return bisect_left(stock_drills(unit), diameter, key=lambda drill: drill.diameter)
 
 
 def _has_drill(diameter: Decimal, unit: Unit, slack: Decimal) -> bool:

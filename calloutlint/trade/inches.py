@@ -3,6 +3,7 @@
 from dataclasses import dataclass
 from decimal import Decimal
 from fractions import Fraction
+from functools import lru_cache
 
 ROUNDED = Decimal("0.0005")
 """Drawings round inch sizes to three places: `.281` is 9/32, `.312` is 5/16."""
@@ -50,6 +51,7 @@ def number_diameter(number: int) -> Decimal | None:
     return _NUMBER_START + number * _NUMBER_STEP if number in _NUMBERS else None
 
 
+@lru_cache(maxsize=1024)
 def nominal_size(diameter: Decimal) -> NominalSize | None:
     """The nominal size that a diameter in inches stands for, as written or rounded to three places.
 

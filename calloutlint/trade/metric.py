@@ -4,7 +4,7 @@ import re
 from collections.abc import Mapping
 from dataclasses import dataclass
 from decimal import Decimal
-from functools import cache
+from functools import cache, lru_cache
 
 from calloutlint.trade import metric_tolerances
 from calloutlint.trade.tables import read_table
@@ -70,6 +70,7 @@ def thread(diameter: Decimal, pitch: Decimal | None = None, series: str = "M") -
     return ThreadForm(f"M{diameter:f}", series, Unit.MM, diameter, stated, diameter - crest * stated)
 
 
+@lru_cache(maxsize=256)
 def limits(form: ThreadForm, class_: str) -> ThreadLimits | None:
     """Limits of a metric thread for a class such as 6g, 4g6g, 6H, 4H5H; None for what ISO 965-1 has not.
 

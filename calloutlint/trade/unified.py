@@ -5,6 +5,7 @@ classes 1B and 2B to three places from #6 up; its largest value goes by four pla
 """
 
 from decimal import Decimal
+from functools import lru_cache
 
 from calloutlint.trade import unified_series
 from calloutlint.trade.inches import inches, named_size, nominal_size
@@ -47,6 +48,7 @@ def thread(size: str | Decimal, tpi: Decimal, series: str = "") -> ThreadForm:
     return ThreadForm(name, named, Unit.INCH, diameter, pitch, diameter - crest * pitch)
 
 
+@lru_cache(maxsize=256)
 def limits(form: ThreadForm, class_: str) -> ThreadLimits | None:
     """Limits of a Unified thread for class 1A, 2A, 3A, 1B, 2B or 3B; None for any other.
 

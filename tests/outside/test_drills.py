@@ -11,6 +11,7 @@ from calloutlint.trade.drills import (
     drill_diameter,
     drilled_tolerance,
     is_stock,
+    next_fitting_drill,
     next_larger_stock,
     stock_drills,
 )
@@ -101,6 +102,25 @@ def test_smallest_drill_that_is_large_enough(diameter: str, unit: Unit, expected
     assert drill is not None
     assert drill.name == expected
     assert drill.diameter >= Decimal(diameter)
+
+
+@pytest.mark.parametrize(
+    ("least", "unit", "expected"),
+    [
+        (".280", Unit.INCH, "K"),
+        (".2801", Unit.INCH, "9/32"),
+        (".281", Unit.INCH, "L"),
+        ("6.57", Unit.MM, "6.6"),
+        ("6.571", Unit.MM, "6.7"),
+        ("2.5", Unit.INCH, None),
+    ],
+)
+def test_smallest_drill_whose_smallest_hole_is_large_enough(
+    least: str, unit: Unit, expected: str | None
+) -> None:
+    """The hole of a drill may come out .001 in or 0.03 mm smaller (AND10387)."""
+    drill = next_fitting_drill(Decimal(least), unit)
+    assert (drill.name if drill else None) == expected
 
 
 def test_above_the_largest_drill_there_is_none() -> None:
