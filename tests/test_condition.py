@@ -155,8 +155,8 @@ def truth(term: Term, view: View) -> bool | None:
     """True, False, or None for unknown, by the two tests that a condition becomes."""
     holds, fails = code_of(term.holds).read(view), code_of(term.fails).read(view)
     assert not (holds and fails)
-    outcome = True if holds else False if fails else None
-    assert code_of(term.value).read(view) is outcome
+    outcome: bool | None = True if holds else False if fails else None
+    assert [code_of(term.value).read(view)] == [outcome]
     return outcome
 
 

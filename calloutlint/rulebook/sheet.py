@@ -1,5 +1,6 @@
 """The rule sheet: one TOML file with a rule, its wording and its proof."""
 
+import re
 import tomllib
 from collections.abc import Mapping
 from dataclasses import dataclass
@@ -20,7 +21,13 @@ def _known_standard(text: str) -> str:
     return text
 
 
-RuleId = Annotated[str, Field(pattern=r"^[A-Z]+-\d{2,3}$")]
+def _rule_id(text: str) -> str:
+    if not re.fullmatch(r"[A-Z]+-\d{2,3}", text):
+        raise ValueError(f"'{text}' is no rule id: expected capitals, a hyphen and a number, such as HOUSE-01")
+    return text
+
+
+RuleId = Annotated[str, AfterValidator(_rule_id)]
 GradeWord = Literal["critical", "major", "minor", "observation"]
 Text = Annotated[str, Field(min_length=1)]
 LimitAmount = str | int | Decimal
