@@ -1,4 +1,4 @@
-"""How each datum feature is itself controlled, and where control runs in a circle.
+"""Where the control of datum features runs in a circle: a feature held to itself, or each held to the other.
 
 Source: ASME Y14.5 (datum features are controlled in form, and to datums of higher precedence),
 ISO 5459. That a feature of a common datum may refer to that common datum (two journals in runout to A-B)
@@ -7,43 +7,15 @@ practice under both.
 """
 
 from collections.abc import Iterator, Mapping
-from dataclasses import dataclass
 
 from calloutlint.facts.datums.frames import Use, uses_of
 from calloutlint.facts.datums.kinds import letters_of
 from calloutlint.facts.datums.scheme import DatumScheme, Established
 from calloutlint.model.callout import Callout, DatumFeature
-from calloutlint.model.frame import Characteristic, DatumRef, Segment
+from calloutlint.model.frame import DatumRef, Segment
 from calloutlint.model.hole import HoleStep
-from calloutlint.model.size import Size, SizeStatus
+from calloutlint.model.size import Size
 from calloutlint.model.thread import Thread
-
-FORM = frozenset(
-    {
-        Characteristic.STRAIGHTNESS,
-        Characteristic.FLATNESS,
-        Characteristic.CIRCULARITY,
-        Characteristic.CYLINDRICITY,
-    }
-)
-
-
-@dataclass(frozen=True, slots=True)
-class Control:
-    """How one datum feature is controlled: whether it has a `size`, its `form` lines, its lines to datums."""
-
-    letter: str
-    size: bool
-    form: tuple[Segment, ...]
-    related: tuple[Segment, ...]
-
-
-def controls(feature: Established) -> Control:
-    """How a datum feature is controlled by the callouts that establish it."""
-    segments = [segment for callout in feature.callouts for segment in callout.segments]
-    sized = any(callout.threads or any(map(_is_size, callout.sizes)) for callout in feature.callouts)
-    form = tuple(s for s in segments if s.characteristic in FORM or (not s.datums and _is_profile(s)))
-    return Control(feature.letter, sized, form, tuple(s for s in segments if s.datums))
 
 
 def self_references(callout: Callout) -> tuple[tuple[Segment, DatumRef], ...]:
@@ -82,27 +54,6 @@ def loop_use(ring: tuple[str, ...], scheme: DatumScheme) -> Use:
         if letter in ring and any(_names(ref) & (set(ring) - {letter}) for ref in use.segment.datums)
     ]
     return uses[-1]
-
-
-def lacks_form(feature: Established) -> bool:
-    """Whether nothing on a datum feature limits its form: no size, no form tolerance, none that implies one."""
-    control = controls(feature)
-    return bool(feature.callouts) and not (control.size or control.form or control.related)
-
-
-def lacks_relation(feature: Established, primary: DatumRef) -> bool:
-    """Whether no tolerance on a secondary datum feature relates it to the primary datum."""
-    wanted = _names(primary)
-    related = controls(feature).related
-    return bool(feature.callouts) and not any(wanted & _names(ref) for s in related for ref in s.datums)
-
-
-def _is_size(size: Size) -> bool:
-    return size.status is not SizeStatus.REFERENCE
-
-
-def _is_profile(segment: Segment) -> bool:
-    return segment.characteristic in (Characteristic.SURFACE_PROFILE, Characteristic.LINE_PROFILE)
 
 
 def _names(ref: DatumRef) -> set[str]:

@@ -98,7 +98,7 @@ def _assumed(references: tuple[Reference | None, ...], order: int, scheme: Datum
     if reference is None:
         return None
     said = [f"{letter} {geometry.assumed}" for letter, geometry in reference.members if geometry.assumed]
-    letters = [letter for letter, _ in reference.members]
+    letters = list(dict.fromkeys(letter for letter, _ in reference.members))
     before = [letter for r in _present(references[:order]) for letter, _ in r.members]
     if len(letters) > 1 and not _told(letters, letters, scheme):
         said.append(f"{' and '.join(letters)} taken as standing in one line or plane")

@@ -27,7 +27,7 @@ from calloutlint.facts.datums.motion import (
 
 OBLIQUE: tuple[Vector, ...] = ((0, 3, 4), (3, 0, 4))
 _ASIDE: tuple[Vector, ...] = ((5, 0, 0), (0, 0, 5), (2, 3, 7), (4, 6, 14))
-_CONTACTS: tuple[Vector, ...] = ((0, 0, 0), (6, 0, 1), (1, 5, 8))
+_CONTACTS = ((3, 2), (9, 2), (4, 7))
 _SPREAD: tuple[Vector, ...] = ((0, 0, 0), (9, 1, 4), (1, 8, 3))
 
 
@@ -121,7 +121,7 @@ def placements(geometry: DatumGeometry, *, oblique: bool = False) -> Iterator[Pl
     usual = (Y, Z, X) if kind is DatumKind.CENTRE_PLANE else (Z, Y, X)
     directions = (*usual, *OBLIQUE) if oblique else usual
     if kind is DatumKind.POINT:
-        yield from (Placement(geometry, Z, at) for at in (ORIGIN, *_ASIDE))
+        yield from (Placement(geometry, Z, at) for at in (ORIGIN, (0, 0, 5), *_ASIDE))
     elif kind is DatumKind.PATTERN:
         yield from (
             Placement(geometry, direction, at, layout)
