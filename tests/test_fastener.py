@@ -56,6 +56,8 @@ def unit_of(pin: Size) -> str:
     [
         ("1/4-20 UNC-2A x .75 SHCS", "1/4-20 UNC 2A", Head.SOCKET_CAP, ".75"),
         (".250-20 UNC-2A socket head cap screw", ".250-20 UNC 2A", Head.SOCKET_CAP, ""),
+        ("SCREW, CAP, SOCKET HEAD, .250-20UNC-2A X 1.00", ".250-20 UNC 2A", Head.SOCKET_CAP, "1.00"),
+        ("SCREW, CAP, HEXAGON HEAD, 3/8-16", "3/8-16", Head.HEX, ""),
         ("¼-20 UNC x 1½ SHCS", "1/4-20 UNC", Head.SOCKET_CAP, "1 1/2"),
         ("1/4-20 SHCS x 3/4", "1/4-20", Head.SOCKET_CAP, "3/4"),
         ("ANSI B18.3 1/4-20 x 1 hexagon socket head cap screw", "1/4-20", Head.SOCKET_CAP, "1"),
@@ -135,6 +137,11 @@ def test_a_whole_number_before_a_pitch_is_a_number_size_or_inches(text: str, thr
         ("M6x20", "M6", None, None, "20"),
         ("M20x2 - 6g LH", "M20x2 6g LH", None, None, ""),
         ("M64x6", "M64x6", None, None, ""),
+        ("M8-1.25 x 30 SHCS", "M8x1.25", Head.SOCKET_CAP, None, "30"),
+        ("M6-20", "M6", None, None, ""),
+        ("ISO 14583 hexalobular socket pan head screw M5", "M5", Head.PAN, "ISO 14583", ""),
+        ("hexalobular socket countersunk screw M5", "M5", Head.FLAT, None, ""),
+        ("M6 screw with hex nut", "M6", None, None, ""),
         ("MJ6x1-4h6h", "MJ6x1 4h6h", None, None, ""),
         ("M12 X 40 LG HEX BOLT", "M12", Head.HEX, None, "40"),
         ("4 x M6 screws", "M6", None, None, ""),
@@ -193,7 +200,7 @@ def test_a_pin_is_in_the_drawings_unit_unless_it_shows_another(text: str, expect
     [
         "", " ", "garbage", "M", "#13-20", "3/0 bolt", "FOR 3/8 TUBE", "ITEM #4", "1/4 PLATE", "10 SCREW",
         "1/4 shoulder screw", "1/8 RIVET", "⌀.250 SPRING PIN", "⌀0 PIN", "TAPER PIN 1/4", "DOWEL", "M6 DOWEL",
-        "#10 WOOD SCREW", "⌀", "x", "-", "1/3-20 UNC", "SEE NOTE 4",
+        "#10 WOOD SCREW", "PART 91352-4-12", "⌀", "x", "-", "1/3-20 UNC", "SEE NOTE 4",
     ],
 )  # fmt: skip
 def test_what_is_not_understood_has_neither_thread_nor_pin(text: str) -> None:

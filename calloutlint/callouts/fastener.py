@@ -12,7 +12,7 @@ from calloutlint.model.fastener import Fastener
 from calloutlint.model.thread import Thread, ThreadSystem
 from calloutlint.model.values import Value
 from calloutlint.trade.inches import number_diameter
-from calloutlint.trade.metric import is_plausible_pitch
+from calloutlint.trade.metric import is_plausible_pitch, series_has
 from calloutlint.units import Unit
 
 _SPELLINGS = (
@@ -28,9 +28,10 @@ _FRACTION = r"\d{1,2}/(?:2|4|8|16|32|64)(?!\d)"
 _LENGTH = rf"(?P<length>\d+[ -]{_FRACTION}|{_FRACTION}|\d*\.\d+|\d+)"
 _METRIC = re.compile(r"(?<![A-Za-z0-9.])(?P<series>MJ?)\s?(?P<size>\d+(?:\.\d+)?)(?![\d/])", re.IGNORECASE)
 _METRIC_NUMBER = re.compile(r"\s*x\s*P?\s*(?P<number>\d+(?:\.\d+)?)(?:\s*mm\b)?", re.IGNORECASE)
+_METRIC_DASHED = re.compile(r"\s*-\s*(?P<number>\d+(?:\.\d+)?)(?![\da-zA-Z.])")
 _METRIC_CLASS = re.compile(r"\s*-?\s*(?P<class>(?:\d[a-hE-H]){1,2})(?![A-Za-z0-9.])")
 _INCH = re.compile(
-    r"(?<![A-Za-z0-9./])(?:(?:#|NO\.?\s*|NUMBER\s+)(?P<number>\d{1,2})"
+    r"(?<![A-Za-z0-9./-])(?:(?:#|NO\.?\s*|NUMBER\s+)(?P<number>\d{1,2})"
     rf"|(?P<size>\d[ -]{_FRACTION}|{_FRACTION}|\d?\.\d{{1,4}}|\d{{1,2}}))(?![\d/.])"
     r"(?P<mark>\s*(?:\"|IN(?:CH)?\b\.?))?"
     r"(?:\s*-\s*(?P<tpi>\d{1,2}(?:\.5)?)(?![\d./]))?",
@@ -103,18 +104,7 @@ def _find_thread(text: str) -> _Found:
 
 def _metric(match: re.Match[str], text: str) -> _Found:
     size = parse_value(match["size"], Unit.MM)
-    pitch, class_, length = None, None, None
-    place = match.end()
-    while number := (_METRIC_CLASS.match(text, place) or _METRIC_NUMBER.match(text, place)):
-        place = number.end()
-        if "class" in number.re.groupindex:
-            class_ = number["class"]
-            continue
-        value = parse_value(number["number"], Unit.MM)
-        if pitch is None and length is None and is_plausible_pitch(size.amount, value.amount):
-            pitch = value
-        else:
-            length = value
+    pitch, class_, length = _metric_tail(size.amount, text, match.end())
     thread = Thread(
         ThreadSystem.METRIC,
         size=f"M{size.text}",
@@ -125,6 +115,25 @@ def _metric(match: re.Match[str], text: str) -> _Found:
         left_hand=bool(_LEFT_HAND.search(text)),
     )
     return _Found(thread, length or _said_length(text, Unit.MM))
+
+
+def _metric_tail(size: Decimal, text: str, place: int) -> tuple[Value | None, str | None, Value | None]:
+    """Pitch, class and length after `M8`: `x1.25-6g x 30`, `-1.25 x 30`, ` x 30`."""
+    pitch, class_, length = None, None, None
+    dashed = _METRIC_DASHED.match(text, place)
+    if dashed and series_has(size, Decimal(dashed["number"])):
+        pitch, place = parse_value(dashed["number"], Unit.MM), dashed.end()
+    while found := (_METRIC_CLASS.match(text, place) or _METRIC_NUMBER.match(text, place)):
+        place = found.end()
+        if "class" in found.re.groupindex:
+            class_ = found["class"]
+            continue
+        value = parse_value(found["number"], Unit.MM)
+        if pitch is None and length is None and is_plausible_pitch(size, value.amount):
+            pitch = value
+        else:
+            length = value
+    return pitch, class_, length
 
 
 def _inch(match: re.Match[str], text: str) -> _Found:

@@ -19,14 +19,15 @@ _HEADS: tuple[tuple[str, Head | None], ...] = (
     ),
     (r"SET[ -]?SCREW|GRUB|\bSS[SH]?S\b|HEADLESS", Head.NONE),
     (r"\bSTUDS?\b|THREADED ROD|ALL[ -]?THREAD", Head.STUD),
+    (r"(?:HEXALOB\w*|TORX)\b.*\b(?:FLAT|COUNTERSUNK|CSK)", Head.FLAT),
     (r"\bFHS?CS\b|\bSFHCS\b|(?:SOC\w*|SKT|HEX\w*)\b.*\b(?:FLAT|COUNTERSUNK|CSK)", Head.SOCKET_COUNTERSUNK),
     (r"FLAT (?:HEAD|HD\.?) (?:SOC|SKT|CAP)|(?:COUNTERSUNK|CSK)\b.*\b(?:SOC|SKT)", Head.SOCKET_COUNTERSUNK),
     (r"\bS?BHS?CS\b|BUTTON", Head.SOCKET_BUTTON),
-    (r"\bSHCS\b|\bSOC(?:KET|\.)?\s*(?:HEAD|HD|HE?X|CAP|SCR)|\bSKT\b|HEX\w*[ -]SOCKET|ALLEN", Head.SOCKET_CAP),
     (r"\bFIL\w*\.?\s*(?:HEAD|HD)|FILLISTER|CHEESE", Head.FILLISTER),
     (r"\bPAN\b|\bPHMS\b|\bPHCR\b|\bPHPS\b", Head.PAN),
+    (r"\bSHCS\b|\bSOC(?:KET|\.)?\s*(?:HEAD|HD|HE?X|CAP|SCR)|\bSKT\b|HEX\w*[ -]SOCKET|ALLEN", Head.SOCKET_CAP),
     (r"FLAT\s*(?:HEAD|HD)|\bFHMS\b|COUNTERSUNK|\bCSK\b", Head.FLAT),
-    (r"\bHEX|\bHH(?:CS|B|MS)?\b|\bHCS\b", Head.HEX),
+    (r"\bHEX\w*\b(?! NUT)|\bHH(?:CS|B|MS)?\b|\bHCS\b", Head.HEX),
 )
 _HEAD_OF_STANDARD = {
     Head.SOCKET_CAP: ("ISO 4762", "DIN 912", "ISO 12474"),
