@@ -75,7 +75,7 @@ def _untagged(lines: Sequence[str]) -> Layout:
             open_run, after_text = False, open_run or after_text
         elif _is_comment(line):
             continue
-        elif not opens_feature(line) and (pair := _pair(number, line, inside=bool(runs))):
+        elif (pair := _pair(number, line, inside=bool(runs))) and not opens_feature(line):
             layout.pairs.append(pair)
             open_run = after_text = False
         else:

@@ -1,11 +1,11 @@
 """The callout sheet: text of a drawing's title block and callouts, read into a `Drawing`."""
 
 import re
-from collections.abc import Iterable
+from collections.abc import Iterable, Iterator
 from pathlib import Path
 
 from calloutlint.callouts.parse import parse_callout
-from calloutlint.model.callout import Callout, Part
+from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, SheetLine
 from calloutlint.reading.encoding import read_text_file, split_lines
 from calloutlint.reading.layout import Block, Layout, lay_out
@@ -43,7 +43,7 @@ def parse_sheet(text: str, file: str, remarks: tuple[str, ...] = ()) -> Drawing:
         joints=tuple(title.joints),
         process=title.process,
         notes=tuple(title.notes),
-        callouts=_callouts(layout.blocks, title.unit, has_decimal_commas(layout)),
+        callouts=tuple(_callouts(layout.blocks, title.unit, has_decimal_commas(layout))),
         lines=_outside_lines(title, layout),
         remarks=remarks,
     )
@@ -61,17 +61,11 @@ def has_decimal_commas(layout: Layout) -> bool:
     return commas > 0 and commas > sum(len(_POINT.findall(text)) for text in texts)
 
 
-def _callouts(blocks: Iterable[Block], unit: Unit | None, decimal_comma: bool) -> tuple[Callout, ...]:
-    """Parses every callout; those with the same text share one parse, since spans are relative to it."""
-    known: dict[tuple[str, ...], tuple[Part, ...]] = {}
-    callouts = []
+def _callouts(blocks: Iterable[Block], unit: Unit | None, decimal_comma: bool) -> Iterator[Callout]:
     for block in blocks:
-        lines = tuple(line.text for line in block.lines)
-        parts = known.get(lines)
-        if parts is None:
-            parts = known[lines] = parse_callout(lines, unit, decimal_comma=decimal_comma)
-        callouts.append(Callout(block.balloon, parts, block.zone, tuple(block.lines)))
-    return tuple(callouts)
+        lines = [line.text for line in block.lines]
+        parts = parse_callout(lines, unit, decimal_comma=decimal_comma)
+        yield Callout(block.balloon, parts, block.zone, tuple(block.lines))
 
 
 def _outside_lines(title: TitleBlock, layout: Layout) -> tuple[SheetLine, ...]:

@@ -1,6 +1,6 @@
 """A drawing written out as a callout sheet in canonical text, whatever it was read from."""
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterable, Iterator, Sequence
 
 from calloutlint.callouts.write import Style, write_callout
 from calloutlint.model.callout import Callout
@@ -20,7 +20,7 @@ def transcribe(drawing: Drawing, style: Style = Style.UNICODE) -> str:
     """The sheet of a drawing. Read back, it gives an equal drawing, and the lines that were not understood."""
     rows = [f"{key + ':':{_KEY_WIDTH}}{value}" for key, value in _title_block(drawing, style)]
     rows.append("")
-    rows += _callouts(drawing.callouts, style)
+    rows += _callouts(drawing.callouts, style, drawing.unit)
     strays = [line.text for line in drawing.lines if line.key is None]
     return "\n".join([*rows, "", *strays] if strays else rows) + "\n"
 
@@ -51,22 +51,29 @@ def _stated(drawing: Drawing) -> Iterator[tuple[str, str | None]]:
     yield "revision", drawing.revision
     yield "sheet", drawing.sheet
     yield "title", drawing.title
-    yield "standard", drawing.standard and drawing.standard.written
+    yield "standard", drawing.standard.written if drawing.standard else None
     yield "units", drawing.unit
-    yield "tolerances", drawing.general and drawing.general.written
-    yield "process", drawing.process and drawing.process.written
+    yield "tolerances", drawing.general.written if drawing.general else None
+    yield "process", drawing.process.written if drawing.process else None
     yield from (("fastener", fastener.text) for fastener in drawing.fasteners)
     yield from (("joint", joint_text(joint)) for joint in drawing.joints)
     yield from (("note", note) for note in drawing.notes)
 
 
-def _callouts(callouts: Iterable[Callout], style: Style) -> Iterator[str]:
+def _callouts(callouts: Sequence[Callout], style: Style, unit: Unit | None) -> Iterator[str]:
     tags = [f"{c.balloon} {c.zone}) " if c.zone else f"{c.balloon}) " for c in callouts]
     width = max(map(len, tags), default=0)
     for tag, callout in zip(tags, callouts, strict=True):
-        lines = write_callout(callout, style) or [""]
+        lines = _lines(callout, style, unit)
         yield (tag.ljust(width) + lines[0]).rstrip()
         yield from (" " * width + line for line in lines[1:])
+
+
+def _lines(callout: Callout, style: Style, unit: Unit | None) -> list[str]:
+    """A callout that was not understood in full stands as it was written."""
+    if callout.unread and callout.source:
+        return [line.text for line in callout.source]
+    return write_callout(callout, style, unit) or [""]
 
 
 def _holes(holes: Iterable[HoleRef]) -> str:
