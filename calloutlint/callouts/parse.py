@@ -1,7 +1,7 @@
 """Reads the text of a callout. Whatever it says, parts come back, never an error."""
 
 import re
-from collections.abc import Sequence
+from collections.abc import Collection, Sequence
 from functools import cache, lru_cache
 
 from lark import Lark, Token, Tree, UnexpectedInput
@@ -9,7 +9,8 @@ from lark import Lark, Token, Tree, UnexpectedInput
 from calloutlint.callouts.build import build
 from calloutlint.callouts.expected import expected_words
 from calloutlint.callouts.grammar import load_grammar
-from calloutlint.callouts.line import Line
+from calloutlint.callouts.build.line import Line
+from calloutlint.callouts.note import find_note
 from calloutlint.callouts.spelling import Normal, normalise
 from calloutlint.model.callout import Part, Unread
 from calloutlint.model.source import Span
@@ -59,29 +60,42 @@ def _too_long(text: str, index: int) -> Unread:
 
 def _parse_line(index: int, normal: Normal, unit: Unit | None, framed: bool) -> Line:
     """The parse of one line; on an error the whole word is set aside and the line parsed again."""
-    text = normal.text
+    text = _without_note(normal.text)
     lower = framed and _LOWER(text) is not None and _OPENS_FRAME(text) is None
     start = "lower" if lower else "line"
-    expected: list[tuple[int, tuple[str, ...]]] = []
+    expected: dict[int, tuple[str, ...]] = {}
     while True:
         try:
             tree = grammar().parse(text, start=start)
         except UnexpectedInput as error:
             begin, end = _word_at(text, error)
-            expected.append(
-                (begin, expected_words(error.accepts or error.expected if hasattr(error, "accepts") else ()))
-            )
+            expected[begin] = expected_words(_accepted(error))
             text = text[:begin] + "\ufffd" * (end - begin) + text[end:]
-            continue
-        items = (tree,) if lower else tuple(tree.children)
-        return Line(index, normal, items, unit, tuple(expected))
+        else:
+            items = (tree,) if lower else tuple(tree.children)
+            return Line(index, normal, items, unit, expected)
+
+
+def _without_note(text: str) -> str:
+    """The text with a fastener named in it set aside: its numbers are not the callout's."""
+    found = find_note(text)
+    if found is None:
+        return text
+    begin, end = found
+    return text[:begin] + "\ufffc" * (end - begin) + text[end:]
+
+
+def _accepted(error: UnexpectedInput) -> Collection[str]:
+    accepted: Collection[str] | None = getattr(error, "accepts", None) or getattr(error, "expected", None)
+    return accepted or getattr(error, "allowed", None) or ()
 
 
 def _word_at(text: str, error: UnexpectedInput) -> tuple[int, int]:
-    """The first word at or after the error that is not set aside yet, else the last before it."""
+    """The word at the error, or the last before it; a bar outside a frame takes the rest of the line with it."""
     at = error.pos_in_stream
     token = getattr(error, "token", None)
     if at is None or (isinstance(token, Token) and token.type == "$END"):
         at = len(text)
     words = [match.span() for match in _WORD.finditer(text)]
-    return next((span for span in words if span[1] > at), words[-1] if words else (0, len(text)))
+    begin, end = next((span for span in words if span[1] > at), words[-1] if words else (0, len(text)))
+    return (begin, len(text)) if text[begin] == "|" else (begin, end)

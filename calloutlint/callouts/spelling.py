@@ -102,7 +102,9 @@ def _exchanged() -> dict[int, str]:
 
 _AS_IS = {"X", "-", "DEPTH FEATURE"}
 _EXCHANGED = _exchanged() | {0xA0: " ", 0x2007: " ", 0x2009: " ", 0x202F: " ", 0x3000: " "}
-_NORMAL = {spelling: normal for spelling, normal in _spelled().items() if ord(spelling[0]) not in _EXCHANGED}
+_NORMAL = {
+    spelling: normal for spelling, normal in _spelled().items() if spelling.translate(_EXCHANGED) == spelling
+}
 _SPACES = re.compile(r"\s+")
 _COMMA = re.compile(r"(?<=\d),(?=\d)|(?<![\w,]),(?=\d)")
 

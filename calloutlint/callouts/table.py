@@ -20,7 +20,7 @@ class Spelling:
     @property
     def normal(self) -> str:
         """What the grammar sees: the symbol itself, or `‹WORD›` for a word."""
-        return f"‹{self.symbol}›" if self.symbol[0].isascii() and self.symbol[0].isalpha() else self.symbol
+        return f"‹{self.symbol}›" if self.symbol.isascii() and self.symbol[0].isalpha() else self.symbol
 
     @property
     def every(self) -> tuple[str, ...]:

@@ -5,7 +5,7 @@ from difflib import get_close_matches
 from functools import lru_cache
 
 from calloutlint.callouts.ordinary import ORDINARY
-from calloutlint.callouts.table import SPELLINGS
+from calloutlint.callouts.table import CHARACTERISTICS, SPELLINGS
 from calloutlint.model.callout import Meaning
 
 _MEANINGS: tuple[tuple[Meaning, str], ...] = (
@@ -44,6 +44,7 @@ _KNOWN = sorted(
         if spelling.replace("'", "").isalpha() and spelling.isascii() and len(spelling) > 3
     }
 )
+_CHARACTERISTICS = {spelling.upper() for row in CHARACTERISTICS for spelling in row.every}
 _LEAST_FOR_ONE_SLIP, _LEAST_FOR_TWO_SLIPS = 6, 9
 
 
@@ -76,6 +77,11 @@ def nearest_spelling(word: str) -> str | None:
         return slip
     close = get_close_matches(upper, _KNOWN, n=1, cutoff=0.6)
     return close[0] if close else None
+
+
+def is_characteristic(spelling: str) -> bool:
+    """Whether a known spelling names a geometric characteristic."""
+    return spelling in _CHARACTERISTICS
 
 
 def _is_ordinary(upper: str) -> bool:

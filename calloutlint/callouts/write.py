@@ -3,6 +3,7 @@
 from collections.abc import Iterator, Sequence
 
 
+from calloutlint.callouts.note import names_fastener
 from calloutlint.callouts.spelling import normalise
 from calloutlint.callouts.write_frame import write_frame, write_scope, write_segment
 from calloutlint.callouts.write_size import write_size, write_step, write_thread
@@ -41,7 +42,8 @@ def write_parts(parts: Sequence[Part], style: Style, unit: Unit | None = None) -
         written = write_part(part, style, unit=unit)
         every = [written] if isinstance(written, str) else written
         if at and lines and _joins(parts, at):
-            lines[-1] = f"{lines[-1]} {every[0]}"
+            bar = " |" if isinstance(part, Unread) and isinstance(parts[at - 1], Frame) else ""
+            lines[-1] = f"{lines[-1]}{bar} {every[0]}"
             every = every[1:]
         lines += every
     return lines
@@ -80,7 +82,8 @@ def _write_other(
         return _write_target(part, writing)
     if isinstance(part, FastenerNote):
         hold = f" {part.hold.upper()}" if part.hold else ""
-        return f"FOR {part.fastener.text}{hold}"
+        clear = "" if names_fastener(part.fastener.text) else "CLEARANCE "
+        return f"{clear}FOR {part.fastener.text}{hold}"
     return part.written if isinstance(part, Count) else part.text
 
 
@@ -109,7 +112,8 @@ def _joins(parts: Sequence[Part], at: int) -> bool:
     if isinstance(before, Unread):
         return getattr(part, "doubtful", False)
     if isinstance(part, Words):
-        return isinstance(before, Size | Thread | HoleStep) and _trails(part, following)
+        tapped = isinstance(before, Thread) and part.text == "TAP"
+        return tapped or isinstance(before, Size | Thread | HoleStep) and _trails(part, following)
     return isinstance(before, Words) and isinstance(part, Size | Thread) and _leads(before)
 
 

@@ -1,7 +1,7 @@
 """Canonical text of sizes, threads and hole steps."""
 
-from calloutlint.callouts.frames import MODIFIER_OF
-from calloutlint.callouts.sizes import FORMS
+from calloutlint.callouts.build.frames import MODIFIER_OF
+from calloutlint.callouts.build.sizes import FORMS
 from calloutlint.callouts.writing import Writing
 from calloutlint.model.hole import HoleStep, StepKind
 from calloutlint.model.size import (

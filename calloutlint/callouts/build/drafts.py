@@ -52,6 +52,17 @@ class SizeDraft:
             and self.extent is None
         )
 
+    @property
+    def plain(self) -> bool:
+        """Whether nothing is said of it but its number, form and count."""
+        return (
+            self.tolerance is None
+            and self.fit is None
+            and self.deviation is None
+            and self.dual is None
+            and self.status is SizeStatus.TOLERANCED
+        )
+
     def finish(self) -> Size:
         return Size(
             self.form,

@@ -4,9 +4,9 @@ import re
 
 from lark import Token, Tree
 
-from calloutlint.callouts.drafts import SizeDraft
-from calloutlint.callouts.line import Line
-from calloutlint.model.size import Count, Deviations, FitCode, Limits, PlusMinus, SizeForm
+from calloutlint.callouts.build.drafts import SizeDraft
+from calloutlint.callouts.build.line import Line
+from calloutlint.model.size import Count, Deviations, FitCode, Limits, PlusMinus, SizeForm, SizeModifier
 from calloutlint.model.values import Value
 
 FORMS = {
@@ -16,6 +16,16 @@ FORMS = {
     "CR": SizeForm.CONTROLLED_RADIUS,
     "SR": SizeForm.SPHERICAL_RADIUS,
     "□": SizeForm.SQUARE,
+}
+SIZE_MODIFIERS = {
+    "⟨ST⟩": SizeModifier.STATISTICAL,
+    "⟨CF⟩": SizeModifier.CONTINUOUS_FEATURE,
+    "Ⓔ": SizeModifier.ENVELOPE,
+    "Ⓘ": SizeModifier.INDEPENDENCY,
+    "Ⓕ": SizeModifier.FREE_STATE,
+    "CT": SizeModifier.COMMON_TOLERANCE,
+    "CF": SizeModifier.CONTINUOUS_FEATURE,
+    "ST": SizeModifier.STATISTICAL,
 }
 _NUMBER = r"(?:(?:\d+[ -])?\d+/\d+(?!\d)|\d+\.?\d*|\.\d+)\s*(?:\"|mm|MM|[iI][nN]\.?)?(?:°(?:\s*\d+\.?\d*\s*')?(?:\s*\d+\.?\d*\s*\")?|')?"
 _LIMIT = r"(?:\d+\.?\d*|\.\d+)\s*(?:\"|mm|MM|[iI][nN]\.?|°)?"

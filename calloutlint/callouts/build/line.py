@@ -1,8 +1,8 @@
 """One parsed line of a callout, and where its pieces stand in the source."""
 
 import re
-from collections.abc import Iterable
-from dataclasses import dataclass, replace
+from collections.abc import Iterable, Mapping
+from dataclasses import dataclass, field, replace
 
 from lark import Token, Tree
 
@@ -19,23 +19,20 @@ Node = Token | Tree[Token]
 
 @dataclass(frozen=True, slots=True)
 class Line:
-    """Line `index` of a callout: its normalised text, its parse `items`, the unit its lengths are in."""
+    """Line `index` of a callout: its normalised text, its parse `items`, the unit its lengths are in.
+
+    `expected` says for the column of each word that was set aside what should have stood there.
+    """
 
     index: int
     normal: Normal
     items: tuple[Node, ...]
     unit: Unit | None
-    expected: tuple[tuple[int, tuple[str, ...]], ...] = ()
+    expected: Mapping[int, tuple[str, ...]] = field(default_factory=dict)
 
-    def span(self, first: Node, last: Node | None = None) -> Span:
+    def span(self, first: Token, last: Token | None = None) -> Span:
         """Where the pieces from `first` to `last` stand in the source."""
-        start = first.start_pos if isinstance(first, Token) else _tokens(first)[0].start_pos
-        ending = first if last is None else last
-        end = ending.end_pos if isinstance(ending, Token) else _tokens(ending)[-1].end_pos
-        return self.between(start or 0, end or 0)
-
-    def between(self, start: int, end: int) -> Span:
-        """The source span of the normalised columns `start` to `end`."""
+        start, end = first.start_pos or 0, (last or first).end_pos or 0
         normal = self.normal
         if not normal.shifts:
             return Span(self.index, start, end)
@@ -45,16 +42,17 @@ class Line:
         """The source text of a span, spaces folded."""
         return _SPACES.sub(" ", self.normal.source[span.start : span.end].strip())
 
-    def in_other_unit(self) -> "Line":
-        """The same line with lengths in the other unit, for a dual dimension."""
-        return replace(self, unit=None if self.unit is None else _OTHER.get(self.unit))
-
     def value(self, text: str) -> Value:
         """The number `text` in the unit of the callout."""
         return parse_value(text, self.unit)
 
+    def in_other_unit(self) -> "Line":
+        """The same line with lengths in the other unit, for a dual dimension."""
+        return replace(self, unit=None if self.unit is None else _OTHER.get(self.unit))
 
-def _tokens(tree: Tree[Token]) -> list[Token]:
+
+def tokens(tree: Tree[Token]) -> list[Token]:
+    """The pieces of a node."""
     return [child for child in tree.children if isinstance(child, Token)]
 
 

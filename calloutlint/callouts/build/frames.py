@@ -6,8 +6,8 @@ from dataclasses import dataclass, field
 
 from lark import Token
 
-from calloutlint.callouts.drafts import SegmentDraft
-from calloutlint.callouts.line import Line, joined
+from calloutlint.callouts.build.drafts import SegmentDraft
+from calloutlint.callouts.build.line import Line, joined
 from calloutlint.model.frame import (
     Characteristic,
     DatumLetter,
@@ -128,11 +128,15 @@ class _SegmentReader:
     def piece(self, piece: Token, following: Token | None) -> None:
         span = self.line.span(piece)
         kind = piece.type
-        if kind == "BAR":
-            self.bar()
+        if kind in {"BAR", "FILLER"}:
+            if kind == "BAR":
+                self.bar()
             return
         if kind in {"WORD", "UNREAD", "ON_CIRCLE"}:
             self.word(piece)
+            return
+        if piece == "LE" and not self.in_zone:
+            self.words.append(piece)
             return
         self.filled = True
         if kind == "LETTERS":

@@ -1,0 +1,151 @@
+"""The second pass: groups the pieces of all lines into the parts of a callout."""
+
+from collections.abc import Callable, Sequence
+
+from lark import Token, Tree
+
+from calloutlint.callouts.build import take_count, take_frame, take_hole, take_size, take_word
+from calloutlint.callouts.build.drafts import FrameDraft, SizeDraft
+from calloutlint.callouts.build.line import Line
+from calloutlint.callouts.build.state import DRAFTS, HOLES, State
+from calloutlint.callouts.expected import BY_PLACE
+from calloutlint.model.callout import Part, Unread, Words
+
+
+def build(lines: Sequence[Line]) -> tuple[Part, ...]:
+    """The parts of a callout from its parsed lines, in reading order."""
+    state = State()
+    for line in lines:
+        _read(state, line)
+    _end(state)
+    return tuple(part.finish() if isinstance(part, DRAFTS) else part for part in state.parts)
+
+
+def _read(state: State, line: Line) -> None:
+    state.begin(line)
+    for at, item in enumerate(line.items):
+        state.following = line.items[at + 1 :]
+        kind = item.data if isinstance(item, Tree) else item.type
+        if kind not in _MAY_BE_WORDS:
+            state.end_words()
+        if isinstance(item, Tree):
+            _TREES[kind](state, item)
+        else:
+            _TOKENS[kind](state, item)
+        state.previous = item
+        if _is_misspelled_frame(state) and state.following:
+            _take_rest(state)
+            break
+    state.end_words()
+    take_count.end_count(state)
+    if state.depth is not None and state.depth.size is None:
+        take_hole.place_extent(state, state.depth)
+    _mark_doubtful(state)
+
+
+def _is_misspelled_frame(state: State) -> bool:
+    last = state.last
+    return isinstance(last, Unread) and last.in_frame and not _holds_frame(state)
+
+
+def _holds_frame(state: State) -> bool:
+    return any(isinstance(part, FrameDraft) for part in state.parts[state.first :])
+
+
+def _take_rest(state: State) -> None:
+    """Keeps as plain words what follows a misspelled characteristic: what it would mean is not known."""
+    start, end = _first_token(state.following[0]), _last_token(state.following[-1])
+    span = state.line.span(start, end)
+    state.add_words(state.line.written(span), span)
+
+
+def _first_token(node: Token | Tree[Token]) -> Token:
+    return node if isinstance(node, Token) else next(node.scan_values(lambda _: True))
+
+
+def _last_token(node: Token | Tree[Token]) -> Token:
+    return node if isinstance(node, Token) else list(node.scan_values(lambda _: True))[-1]
+
+
+def _end(state: State) -> None:
+    """A deviation whose partner never came cannot be read."""
+    for at, part in reversed(list(enumerate(state.parts))):
+        if isinstance(part, SizeDraft) and part.deviation is not None:
+            part.doubtful = True
+            text = part.deviation.text
+            state.parts.insert(at + 1, Unread(text, BY_PLACE["deviation"], None, False, part.span))
+
+
+def _mark_doubtful(state: State) -> None:
+    """Marks the parts right beside unread text on this line."""
+    here = state.parts[state.first :]
+    for at, part in enumerate(here):
+        if not isinstance(part, Unread) or part.in_frame:
+            continue
+        for beside in (here[:at][::-1], here[at + 1 :]):
+            neighbour = next((other for other in beside if not isinstance(other, Words | Unread)), None)
+            if isinstance(neighbour, HOLES):
+                neighbour.doubtful = True
+            elif isinstance(neighbour, FrameDraft):
+                neighbour.segments[-1 if beside is not here[at + 1 :] else 0].doubtful = True
+
+
+_TREES: dict[str, Callable[[State, Tree[Token]], None]] = {
+    "size": take_size.take_size,
+    "stacked": take_size.take_stacked,
+    "thread": take_hole.take_thread,
+    "frame": take_frame.take_frame,
+    "lower": take_frame.take_lower,
+    "target": take_frame.take_target,
+}
+_TOKENS: dict[str, Callable[[State, Token], None]] = {
+    "COUNT": take_count.take_count,
+    "THRU": take_hole.take_through,
+    "DEPTH": take_hole.take_depth,
+    "DEEP": take_hole.take_deep,
+    "STEP": take_hole.take_step,
+    "DRILL_NAME": take_hole.take_drill_name,
+    "BY": take_hole.take_by,
+    "LEFT_HAND": take_hole.take_left_hand,
+    "STARTS": take_hole.take_starts,
+    "MAX": take_size.take_status,
+    "MIN": take_size.take_status,
+    "REFERENCE": take_size.take_status,
+    "BASIC": take_size.take_status,
+    "SIZE_MODIFIER": take_size.take_size_modifier,
+    "BOXED_FORM": take_size.take_boxed_form,
+    "OPEN_BOX": take_size.open_box,
+    "CLOSE_BOX": take_size.close,
+    "OPEN": take_size.open_parenthesis,
+    "CLOSE": take_size.close,
+    "SCOPE": take_frame.take_scope,
+    "DATUM_FEATURE": take_frame.take_datum_feature,
+    "DATUM_BOX": take_frame.take_datum_feature,
+    "FASTENER": take_word.take_fastener,
+    "WORD": take_word.take_word,
+    "ON_CIRCLE": take_word.take_plain,
+    "NUMBERED_NOTE": take_word.take_plain,
+    "DESIGNATION": take_word.take_plain,
+    "STRAY": take_word.as_word,
+    "UNREAD": take_word.take_unread,
+}
+# Pieces that may turn out to be plain words: a run of words goes on through them.
+_MAY_BE_WORDS = {
+    "WORD",
+    "ON_CIRCLE",
+    "NUMBERED_NOTE",
+    "DESIGNATION",
+    "DEPTH",
+    "STRAY",
+    "STEP",
+    "MAX",
+    "MIN",
+    "REFERENCE",
+    "BASIC",
+    "SIZE_MODIFIER",
+    "LEFT_HAND",
+    "STARTS",
+    "DATUM_FEATURE",
+    "target",
+    "UNREAD",
+}

@@ -1,0 +1,113 @@
+"""What the second pass knows while it reads: the parts so far, and what waits for its partner on this line."""
+
+from collections.abc import Sequence
+
+from lark import Token, Tree
+
+from calloutlint.callouts.build.drafts import (
+    DepthDraft,
+    FrameDraft,
+    SizeDraft,
+    StepDraft,
+    TargetDraft,
+    ThreadDraft,
+)
+from calloutlint.callouts.build.line import Line, Node
+from calloutlint.callouts.words import meanings_of, nearest_spelling
+from calloutlint.model.callout import Part, Unread, Words
+from calloutlint.model.frame import Scope
+from calloutlint.model.hole import StepKind
+from calloutlint.model.size import Count, SizeForm, SizeStatus
+from calloutlint.model.source import Span
+
+Draft = SizeDraft | ThreadDraft | StepDraft | FrameDraft | TargetDraft
+Hole = SizeDraft | ThreadDraft | StepDraft
+DRAFTS = (SizeDraft, ThreadDraft, StepDraft, FrameDraft, TargetDraft)
+HOLES = (SizeDraft, ThreadDraft, StepDraft)
+SPEAKS_OF_SIZE_BEFORE = {StepKind.DRILL, StepKind.REAM, StepKind.TAP}
+
+
+class State:
+    """The parts of a callout in the making; everything but `parts` and `scope` starts anew on each line."""
+
+    def __init__(self) -> None:
+        self.parts: list[Draft | Part] = []
+        self.scope: Scope | None = None
+        self.line: Line
+
+    def begin(self, line: Line) -> None:
+        """Turns to the next line."""
+        self.line = line
+        self.first = len(self.parts)
+        self.previous: Node | None = None
+        self.following: Sequence[Node] = ()
+        self.size: SizeDraft | None = None
+        self.count: Count | None = None
+        self.count_at = 0
+        self.step: StepDraft | None = None
+        self.depth: DepthDraft | None = None
+        self.target: TargetDraft | None = None
+        self.form: SizeForm | None = None
+        self.drill: str | None = None
+        self.drill_size: SizeDraft | None = None
+        self.box: SizeStatus | None = None
+        self.dual_of: SizeDraft | None = None
+        self.dual_statuses: list[SizeStatus] = []
+        self.status: SizeStatus | None = None
+        self.words: list[Token] = []
+
+    @property
+    def last(self) -> Draft | Part | None:
+        """The last part on this line."""
+        return self.parts[-1] if len(self.parts) > self.first else None
+
+    def last_of(self, kind: type[ThreadDraft] | type[FrameDraft]) -> ThreadDraft | FrameDraft | None:
+        """The last part of a kind on any line."""
+        return next((part for part in reversed(self.parts) if isinstance(part, kind)), None)
+
+    @property
+    def after_size(self) -> bool:
+        """Whether a size stands right before, closed with its brackets and modifiers."""
+        if isinstance(self.previous, Tree):
+            return bool(self.previous.data == "size")
+        return self.previous is not None and self.previous.type in {"CLOSE_BOX", "SIZE_MODIFIER"}
+
+    def follows(self, kind: str, at: int = 0) -> bool:
+        """Whether the next node but `at` is a rule or a terminal called `kind`."""
+        if at >= len(self.following):
+            return False
+        node = self.following[at]
+        return bool((node.data if isinstance(node, Tree) else node.type) == kind)
+
+    def give_count(self, owner: Hole | FrameDraft) -> None:
+        """Gives the count that waits to the part it stands before."""
+        if self.count is not None:
+            owner.count, self.count = self.count, None
+
+    def add_words(self, text: str, span: Span) -> None:
+        """Adds plain words to the parts."""
+        self.parts.append(Words(text, meanings_of(text), span))
+
+    def end_words(self) -> None:
+        """Closes a run of plain words."""
+        if not self.words:
+            return
+        span = self.line.span(self.words[0], self.words[-1])
+        self.words = []
+        text = self.line.written(span)
+        if self.step is not None and not self.step.size and text.upper() in {"TO", "FOR"}:
+            return
+        if self.step is not None and self.step.kind in SPEAKS_OF_SIZE_BEFORE:
+            self.step = None
+        self.target = None
+        self.add_words(text, span)
+
+    def unread(
+        self, token: Token, expected: tuple[str, ...], nearest: str | None = None, *, in_frame: bool = False
+    ) -> None:
+        """Adds text that cannot be read."""
+        span = self.line.span(token)
+        text = self.line.written(span)
+        if token.type == "UNREAD":
+            expected = self.line.expected.get(token.start_pos or 0) or expected
+        self.parts.append(Unread(text, expected, nearest or nearest_spelling(text), in_frame, span))

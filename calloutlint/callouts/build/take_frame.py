@@ -1,0 +1,94 @@
+"""Second pass: frames, what applies to them, datum features and datum targets."""
+
+import re
+
+from lark import Token, Tree
+
+from calloutlint.callouts.build.drafts import FrameDraft, SizeDraft, TargetDraft
+from calloutlint.callouts.build.frames import FrameRead, read_frame
+from calloutlint.callouts.build.line import tokens
+from calloutlint.callouts.build.state import State
+from calloutlint.callouts.expected import BY_PLACE
+from calloutlint.callouts.words import slip_of
+from calloutlint.model.callout import DatumFeature
+from calloutlint.model.frame import Scope, ScopeKind
+from calloutlint.model.source import Span
+
+_REFERRING = {"TO", "FROM", "WITH", "OF", "BY", "ON", "IN", "AT", "WRT", "AND", "&", "OR", "ABOUT", "NORMAL"}
+_NAMES_TARGET = re.compile(r"(?:datum\s+)?(?:movable\s+)?(?:datum\s+)?(?:targets?)?", re.IGNORECASE).fullmatch
+
+
+def take_frame(state: State, tree: Tree[Token]) -> None:
+    """A frame, or the first line of a composite one."""
+    read = read_frame(tokens(tree), state.line)
+    draft = FrameDraft(read.segments, state.scope)
+    state.scope = None
+    state.parts.append(draft)
+    state.give_count(draft)
+    _end_frame(state, read)
+
+
+def take_lower(state: State, tree: Tree[Token]) -> None:
+    """A lower line of a composite frame."""
+    above = state.last_of(FrameDraft)
+    if isinstance(above, FrameDraft):
+        read = read_frame(tokens(tree), state.line, above.segments[-1].characteristic)
+        above.segments += read.segments
+        _end_frame(state, read)
+
+
+def _end_frame(state: State, read: FrameRead) -> None:
+    for token, place in read.unread:
+        state.unread(token, BY_PLACE[place], in_frame=True)
+    for token in read.words:
+        if (len(token) < 3 and token != "LE") or slip_of(token) is not None:
+            state.unread(token, BY_PLACE["frame"], in_frame=True)
+            read.segments[-1].doubtful = True
+        else:
+            state.words.append(token)
+
+
+def take_scope(state: State, token: Token) -> None:
+    """ALL AROUND, between …: of the frame before it that has none, else of the next one."""
+    scope = _scope(token, state.line.span(token))
+    frame = state.last_of(FrameDraft)
+    if isinstance(frame, FrameDraft) and frame.scope is None:
+        frame.scope = scope
+    else:
+        state.scope = scope
+
+
+def _scope(token: Token, span: Span) -> Scope:
+    if token == "⌮":
+        return Scope(ScopeKind.ALL_AROUND, span=span)
+    if token == "‹ALL OVER›":
+        return Scope(ScopeKind.ALL_OVER, span=span)
+    start, end = re.findall(r"(?<![A-Za-z])[A-Z](?![A-Za-z])", token)
+    from_to = "→" in token or token.upper().startswith("FROM")
+    return Scope(ScopeKind.FROM_TO if from_to else ScopeKind.BETWEEN, start, end, span)
+
+
+def take_datum_feature(state: State, token: Token) -> None:
+    """A datum feature symbol; in `PARALLEL TO DATUM A` it is only spoken of."""
+    if token[0] == "▲" and state.words and state.words[-1].upper() in _REFERRING:
+        state.words.append(token)
+        return
+    state.end_words()
+    state.parts.append(DatumFeature(token.strip("▲-[] "), state.line.span(token)))
+
+
+def take_target(state: State, tree: Tree[Token]) -> None:
+    """A datum target; in `SEE DETAIL A1` it is plain words. The size of its area may stand before it."""
+    token = tokens(tree)[0]
+    before = " ".join(state.words)
+    if not _NAMES_TARGET(before.replace("▲", "DATUM")):
+        state.words.append(token)
+        return
+    draft = TargetDraft(token[0], int(token[1:]), state.line.span(token), movable="MOVABLE" in before.upper())
+    state.words = []
+    size = state.last
+    if isinstance(size, SizeDraft) and size.bare and size.nominal is not None:
+        draft.sizes.append(size.nominal)
+        state.parts.pop()
+    state.parts.append(draft)
+    state.target = draft

@@ -1,0 +1,70 @@
+"""Second pass: plain words, slips of known spellings, and text that cannot be read."""
+
+from lark import Token
+
+from calloutlint.callouts.build.sizes import SIZE_MODIFIERS
+from calloutlint.callouts.build.state import State
+from calloutlint.callouts.expected import BY_PLACE
+from calloutlint.callouts.note import read_note
+from calloutlint.callouts.words import is_characteristic, slip_of
+from calloutlint.model.callout import FastenerNote, TargetKind, Unread
+
+_TARGET_KINDS = {"LINE": TargetKind.LINE, "AREA": TargetKind.AREA, "POINT": TargetKind.POINT}
+_PUNCTUATION = set(",;.:/")
+
+
+def take_word(state: State, token: Token) -> None:
+    """A plain word, unless it belongs to a target or a size, or is a slip of a known spelling."""
+    upper = token.upper()
+    if state.target is not None and upper in _TARGET_KINDS:
+        state.target.kind = _TARGET_KINDS[upper]
+    elif state.target is not None and upper == "MOVABLE":
+        state.target.movable = True
+    elif token in _PUNCTUATION:
+        state.end_words()
+    elif token in SIZE_MODIFIERS and state.size is not None:
+        state.size.modifiers.append(SIZE_MODIFIERS[token])
+    elif (near := slip_of(token)) is not None:
+        state.end_words()
+        state.unread(token, BY_PLACE["word"], near, in_frame=is_characteristic(near))
+    else:
+        state.words.append(token)
+
+
+def as_word(state: State, token: Token) -> None:
+    """A known word or symbol that has nothing to act on: plain words, if it is made of letters."""
+    if state.line.written(state.line.span(token))[:1].isascii():
+        state.words.append(token)
+    else:
+        state.end_words()
+        state.unread(token, BY_PLACE["number"])
+
+
+def take_plain(state: State, token: Token) -> None:
+    """Words with numbers in them that are no sizes: `ON ⌀3.000 BC`, `SEE NOTE 3`."""
+    state.words.append(token)
+
+
+def take_fastener(state: State, token: Token) -> None:
+    """A fastener named in the callout, `FOR .250-20 UNC SCREW`."""
+    span = state.line.span(token)
+    fastener, hold = read_note(state.line.written(span))
+    state.parts.append(FastenerNote(fastener, hold, span))
+
+
+def take_unread(state: State, token: Token) -> None:
+    """A word that the grammar could not take. What a bar parts from no frame follows a wrong characteristic."""
+    span = state.line.span(token)
+    text = state.line.written(span)
+    if text[0] != "|":
+        state.end_words()
+        state.unread(token, BY_PLACE["word"])
+        return
+    wrong = state.words.pop() if state.words else None
+    state.end_words()
+    if wrong is not None:
+        state.unread(wrong, BY_PLACE["characteristic"], in_frame=True)
+    if isinstance(state.last, Unread):
+        state.add_words(text, span)
+    else:
+        state.unread(token, BY_PLACE["characteristic"], in_frame=True)
