@@ -106,11 +106,11 @@ class TestCheck:
         self, folder: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
     ) -> None:
         monkeypatch.chdir(folder)
-        (folder / "clean.txt").rename("--clean sheet.txt")
-        assert run("check", "--plain", "--", "--clean sheet.txt") == 0
-        assert "from --clean sheet.txt" in capsys.readouterr().out
-        assert told(capsys, "check", "--clean sheet.txt") == (
-            "calloutlint: There is no option '--clean sheet.txt'. If the file '--clean sheet.txt' is meant, "
+        (folder / "clean.txt").rename("--clean.txt")
+        assert run("check", "--plain", "--", "--clean.txt") == 0
+        assert "from --clean.txt" in capsys.readouterr().out
+        assert told(capsys, "check", "--clean.txt") == (
+            "calloutlint: There is no option '--clean.txt'. If the file '--clean.txt' is meant, "
             "write it after --. 'calloutlint check --help' lists what is understood.\n"
         )
 

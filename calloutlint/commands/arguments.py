@@ -54,9 +54,10 @@ def _unknown(command: Parser, word: str) -> str:
     if not word.startswith("-"):
         return f"'{word}' is one argument too many. {_see(command)}"
     known = [name for name in command._option_string_actions if name.startswith("--")]
-    hint = _nearest(word.partition("=")[0], known)
     if Path(word).exists():
-        hint += f" If the file '{word}' is meant, write it after --."
+        hint = f" If the file '{word}' is meant, write it after --."
+    else:
+        hint = _nearest(word.partition("=")[0], known)
     return f"There is no option '{word}'.{hint} {_see(command)}"
 
 

@@ -26,11 +26,8 @@ def show_tally(review: Review, screen: Screen) -> None:
     screen.paragraph(f"{', '.join(scope)}: {_grades(review)}.", ROLES.heading, indent=1)
     screen.paragraph(_gate_words(review), indent=1)
     if review.unread:
-        screen.paragraph(
-            f"{counted(review.unread, 'part').capitalize()} of callouts could not be read, "
-            "so this review cannot pass: what stands beside unread text was not checked.",
-            indent=1,
-        )
+        told = f"{counted(review.unread, 'place')} could not be read, so this review cannot pass"
+        screen.paragraph(f"{told}: what stands beside unread text was not checked.", indent=1)
     screen.paragraph(SAFETY, ROLES.quiet, indent=1)
 
 
