@@ -87,6 +87,7 @@ def unit_of(pin: Size) -> str:
         ("1/4", "1/4", None, ""),
         (".250", ".250", None, ""),
         ("1/4 BOLT", "1/4", None, ""),
+        ("1/4-20 SCREW WITH SPRING WASHER", "1/4-20", None, ""),
         ('1" BOLT', "1", None, ""),
     ],
 )
@@ -200,7 +201,7 @@ def test_a_pin_is_in_the_drawings_unit_unless_it_shows_another(text: str, expect
     [
         "", " ", "garbage", "M", "#13-20", "3/0 bolt", "FOR 3/8 TUBE", "ITEM #4", "1/4 PLATE", "10 SCREW",
         "1/4 shoulder screw", "1/8 RIVET", "⌀.250 SPRING PIN", "⌀0 PIN", "TAPER PIN 1/4", "DOWEL", "M6 DOWEL",
-        "#10 WOOD SCREW", "PART 91352-4-12", "⌀", "x", "-", "1/3-20 UNC", "SEE NOTE 4",
+        "#10 WOOD SCREW", "PIN, SPRING, ⌀.250", "PART 91352-4-12", "⌀", "x", "-", "1/3-20 UNC", "SEE NOTE 4",
     ],
 )  # fmt: skip
 def test_what_is_not_understood_has_neither_thread_nor_pin(text: str) -> None:

@@ -6,7 +6,7 @@ import pytest
 
 from calloutlint.callouts.fastener import parse_fastener
 from calloutlint.model.thread import Thread, ThreadSystem
-from calloutlint.trade import metric, unified
+from calloutlint.trade import metric, unified, unified_series
 from calloutlint.trade.inches import inches, nominal_size
 from calloutlint.trade.threads import form_of, limits_of, pitch_of, screws_into, series_has, tpi_of
 
@@ -159,3 +159,60 @@ def test_inches_of_a_fraction(text: str, expected: str) -> None:
 def test_what_is_no_size_in_inches(text: str) -> None:
     with pytest.raises(ValueError, match="no size in inches"):
         inches(text)
+
+
+def every_unified() -> list[tuple[str, Decimal, str]]:
+    return [
+        (name, tpi, series)
+        for name, listed in unified_series.all_series().items()
+        for series in ("UNC", "UNF", "UNEF", "UN")
+        for tpi in listed.of(series)
+    ]
+
+
+@pytest.mark.parametrize(("external", "internal"), [("1A", "1B"), ("2A", "2B"), ("3A", "3B"), ("2A", "3B")])
+def test_every_unified_screw_enters_every_hole_of_its_size(external: str, internal: str) -> None:
+    """At their closest the pitch and major diameters of ASME B1.1 just meet, and never cross."""
+    for name, tpi, series in every_unified():
+        form = unified.thread(name, tpi, series)
+        screw, hole = unified.limits(form, external), unified.limits(form, internal)
+        assert screw is not None
+        assert hole is not None
+        assert screw.pitch_min < screw.pitch_max <= hole.pitch_min < hole.pitch_max, (name, tpi)
+        assert screw.major_max is not None
+        assert screw.pitch_max < screw.major_min < screw.major_max <= hole.major_min, (name, tpi)
+        assert hole.minor_min is not None
+        assert hole.minor_max is not None
+        assert hole.minor_min < hole.minor_max < hole.pitch_min, (name, tpi)
+
+
+@pytest.mark.parametrize(
+    ("external", "internal"), [("6g", "6H"), ("4h", "4H"), ("6f", "6G"), ("8g", "7H"), ("5g6g", "5H6H")]
+)
+def test_every_metric_screw_enters_every_hole_of_its_size(external: str, internal: str) -> None:
+    """The pitches of ISO 261 from 0.5 mm, where all these classes are in use (ISO 965-1)."""
+    for diameter, listed in metric.pitches().items():
+        for pitch in filter(None, (listed.coarse, *listed.fine)):
+            form = metric.thread(diameter, pitch)
+            assert form is not None
+            screw, hole = metric.limits(form, external), metric.limits(form, internal)
+            if pitch < Decimal("0.5"):
+                continue
+            assert screw is not None
+            assert hole is not None
+            assert screw.pitch_min < screw.pitch_max <= hole.pitch_min < hole.pitch_max, (diameter, pitch)
+            assert screw.major_max is not None
+            assert screw.pitch_max < screw.major_min < screw.major_max <= hole.major_min, (diameter, pitch)
+            assert hole.minor_min is not None
+            assert hole.minor_max is not None
+            assert hole.minor_min < hole.minor_max < hole.pitch_min, (diameter, pitch)
+
+
+def test_coarse_is_the_coarsest() -> None:
+    """In every row of ISO 261 and of ASME B1.1 the series get finer from left to right."""
+    for listed in metric.pitches().values():
+        found = [pitch for pitch in (listed.coarse, *listed.fine) if pitch]
+        assert found == sorted(set(found), reverse=True)
+    for series in unified_series.all_series().values():
+        tpis = [tpi for tpi in (series.coarse, series.fine, series.extra_fine) if tpi]
+        assert tpis == sorted(set(tpis))
