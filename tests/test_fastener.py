@@ -218,6 +218,7 @@ def test_what_is_not_understood_has_neither_thread_nor_pin(text: str) -> None:
         ("1/4-20 SHCS WITH FLAT WASHER", False, True),
         ("M6 SEMS", False, True),
         ("M6 screw with lock washer", False, False),
+        ("M6 screw with spring washer", False, False),
         ("M6 screw, no washer", False, False),
         ("M6 washer head screw", False, False),
     ],

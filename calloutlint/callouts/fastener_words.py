@@ -49,7 +49,9 @@ _OTHERWISE_SIZED = re.compile(
     r"|\b(?:ROLL|SPRING|TAPER(?:ED)?|COTTER|SPLIT|SLOTTED)\s*PIN|\bPINS?\s*,\s*(?:ROLL|SPRING|TAPER|COTTER|SPLIT)",
     re.IGNORECASE,
 )
-_WASHER = re.compile(r"(?<!NO )(?<!WITHOUT )(?<!LOCK )(?<!LOCK)\bWASHERS?\b(?! HEAD)|\bSEMS\b", re.IGNORECASE)
+_WASHER = re.compile(
+    r"(?<!NO )(?<!WITHOUT )(?<!LOCK )(?<!LOCK)(?<!SPRING )\bWASHERS?\b(?! HEAD)|\bSEMS\b", re.IGNORECASE
+)
 
 
 def standard_in(text: str) -> tuple[str | None, str]:
