@@ -148,11 +148,11 @@ def test_rules_sorted_by_a_fact_find_what_all_rules_would() -> None:
     ]
     agenda = agenda_of(rules)
     assert agenda.fact == "characteristic"
-    assert {word.value: [r.id for r in few] for word, few in agenda.by_word.items()} == {
+    assert {word.value: [r.id for _, r in few] for word, few in agenda.by_word.items()} == {
         "position": ["HOUSE-01", "HOUSE-02", "HOUSE-03"],
         "flatness": ["HOUSE-02", "HOUSE-03"],
     }
-    assert [r.id for r in agenda.always] == ["HOUSE-03"]
+    assert [r.id for _, r in agenda.always] == ["HOUSE-03"]
 
 
 def test_the_first_variant_that_holds_gives_the_words_and_the_rest_falls_to_the_next() -> None:

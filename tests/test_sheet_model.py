@@ -67,7 +67,8 @@ def test_a_sheet_states_a_rule() -> None:
             '"ISO GPS"',
             '"ISO"',
             "h.toml: key 'holds.2': 'ISO' is no standard that rules know: "
-            "expected ASME Y14.5, ASME Y14.5-2018, ASME Y14.5-2009 and later, ASME Y14.5-1994 and earlier, or ISO GPS",
+            "expected ASME Y14.5, ASME Y14.5-2018, ASME Y14.5-2009 and later, "
+            "ASME Y14.5-1994 and earlier, or ISO GPS",
         ),
         (
             '"ISO GPS"',

@@ -2,9 +2,10 @@
 
 import re
 from collections import Counter
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Callable, Iterable, Sequence
 from dataclasses import dataclass
 from enum import StrEnum
+from typing import Any
 
 from calloutlint.facts.view import View
 from calloutlint.model.drawing import Package, Standard
@@ -16,16 +17,19 @@ IN_FRAMES = {"frame", "datum"}
 NOWHERE = Span(-1, -1, -1)
 
 
+Asked = tuple[tuple[Callable[[View], Any], Rule], ...]
+
+
 @dataclass(frozen=True, slots=True)
 class Agenda:
-    """The rules for one subject under one standard, by the word that the fact `fact` must hold."""
+    """The rules for one subject under one standard, each after its test, by the word that `fact` must hold."""
 
     fact: str | None
-    always: tuple[Rule, ...]
-    by_word: dict[StrEnum, tuple[Rule, ...]]
+    always: Asked
+    by_word: dict[StrEnum, Asked]
 
-    def rules(self, view: View) -> tuple[Rule, ...]:
-        """The rules that can fire on a view."""
+    def asked(self, view: View) -> Asked:
+        """The rules that a view can break."""
         return self.by_word.get(getattr(view, self.fact), self.always) if self.fact else self.always
 
 
@@ -41,19 +45,19 @@ class Engine:
 
     def findings(self, views: Iterable[View]) -> list[Finding]:
         """What the rules find in the views, in their order, without what yields to another finding."""
-        found = [(view, finding) for view in views for finding in self._about(view)]
+        found: list[tuple[View, Finding]] = []
+        drawing, agendas = None, self._agendas_under(None)
+        for view in views:
+            own = getattr(view, "drawing_model", None)
+            if own is not drawing:
+                drawing, agendas = own, self._agendas_under(own.standard if own else None)
+            agenda = agendas.get(view.subject)
+            if agenda is None or getattr(view.part, "doubtful", False) or getattr(view, "doubtful", False):
+                continue
+            for broken, rule in agenda.asked(view):
+                if broken(view) and (finding := rule.judge(view)):
+                    found.append((view, finding))
         return _unrepeated(self._unyielding(found))
-
-    def _about(self, view: View) -> Iterator[Finding]:
-        if getattr(view.part, "doubtful", False) or getattr(view, "doubtful", False):
-            return
-        drawing = getattr(view, "drawing_model", None)
-        agenda = self._agendas_under(drawing.standard if drawing else None).get(view.subject)
-        for rule in agenda.rules(view) if agenda else ():
-            if rule.broken.read(view):
-                finding = rule.judge(view)
-                if finding is not None:
-                    yield finding
 
     def _agendas_under(self, standard: Standard | None) -> dict[str, Agenda]:
         agendas = self._agendas.get(standard)
@@ -80,17 +84,20 @@ def agenda_of(rules: Sequence[Rule]) -> Agenda:
     """Rules sorted by the fact on which most of them depend, each list in the order given."""
     facts = Counter(fact for rule in rules for fact in rule.required_words)
     if not facts:
-        return Agenda(None, tuple(rules), {})
+        return Agenda(None, _asked(rules), {})
     fact = facts.most_common(1)[0][0]
     words = {word for rule in rules for word in rule.required_words.get(fact, ())}
-    always = tuple(rule for rule in rules if fact not in rule.required_words)
-    return Agenda(fact, always, {word: tuple(_possible(rules, fact, word)) for word in words})
+    always = [rule for rule in rules if fact not in rule.required_words]
+    by_word = {word: [rule for rule in rules if _possible(rule, fact, word)] for word in words}
+    return Agenda(fact, _asked(always), {word: _asked(possible) for word, possible in by_word.items()})
 
 
-def _possible(rules: Sequence[Rule], fact: str, word: StrEnum) -> Iterator[Rule]:
-    for rule in rules:
-        if fact not in rule.required_words or word in rule.required_words[fact]:
-            yield rule
+def _possible(rule: Rule, fact: str, word: StrEnum) -> bool:
+    return fact not in rule.required_words or word in rule.required_words[fact]
+
+
+def _asked(rules: Iterable[Rule]) -> Asked:
+    return tuple((rule.broken.read, rule) for rule in rules)
 
 
 def _same_place(view: View, finding: Finding, other_view: View, other: Finding) -> bool:
