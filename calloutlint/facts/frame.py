@@ -180,6 +180,11 @@ class FrameView(PartView):
         return self.part.characteristic
 
     @fact
+    def named(self) -> str:
+        """The characteristic as a sentence begins with it."""
+        return self.part.characteristic.value.capitalize()
+
+    @fact
     def form(self) -> bool:
         """Whether it is a form tolerance."""
         return self.part.characteristic in FORM
