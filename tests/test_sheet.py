@@ -127,6 +127,15 @@ def test_a_stray_line_and_an_unknown_key_say_why() -> None:
     ]
 
 
+@pytest.mark.parametrize("line", ["units:mm", "UNITS : mm", "  Units:\tmm"])
+def test_a_key_that_is_known_needs_no_space(line: str) -> None:
+    assert parse_sheet(line, "a").unit is Unit.MM
+
+
+def test_an_old_end_of_file_mark_is_no_line() -> None:
+    assert parse_sheet("units: mm\r\n1) ⌀5 +0.1 0\r\n\x1a", "a").lines[-1].key == "units"
+
+
 def test_text_with_a_colon_inside_a_callout_stays_in_it() -> None:
     assert blocks("1) ⌀5\n   SEE DETAIL: X") == [("1", None, ["⌀5", "SEE DETAIL: X"])]
 
@@ -181,8 +190,18 @@ def test_a_decimal_comma_is_a_property_of_the_sheet(text: str, expected: bool) -
 
 
 def test_a_sheet_with_decimal_commas_reads_as_one_with_points() -> None:
-    points = "standard: ISO 8015\nunits: mm\n\n1) ⌀6.6 +0.2 0 THRU\n   ⌖ | ⌀0.3 Ⓜ | A | B\n2) 12.5 ±0.1\n"
-    assert parse_sheet(points.replace(".", ","), "a").callouts == parse_sheet(points, "a").callouts
+    points = """\
+standard: ISO 8015
+units: mm
+tolerances: X.X ±0.2
+fastener: M6x0.75 hex head bolt
+joint: lid = 1 with M6x0.75 hex head bolt, thickness 4.5
+
+1) ⌀6.6 +0.2 0 THRU
+   ⌖ | ⌀0.3 Ⓜ | A | B
+2) 12.5 ±0.1
+"""
+    assert parse_sheet(points.replace(".", ","), "a") == parse_sheet(points, "a")
 
 
 def test_equal_text_is_read_the_same_wherever_it_stands() -> None:

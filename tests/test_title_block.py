@@ -178,7 +178,7 @@ def test_process_spread() -> None:
 
 def test_keys_stand_in_any_case_and_the_unit_holds_wherever_it_stands() -> None:
     block = block_of("TOLERANCES: .XX ±.01", "Rev: C", "DRAWING: SG-2207", "Units: INCH")
-    assert block.texts == {"revision": "C", "drawing": "SG-2207"}
+    assert (block.texts["revision"], block.texts["drawing"]) == ("C", "SG-2207")
     assert block.general is not None
     assert block.general.places[0].amount.unit is Unit.INCH
     assert all(line.known for line in block.lines)
@@ -218,3 +218,18 @@ def test_a_key_stated_twice_keeps_the_first() -> None:
     block = block_of("drawing: A-1", "drawing: A-2")
     assert block.texts["drawing"] == "A-1"
     assert block.lines[1].reason == "'drawing' is stated a second time; the first is used"
+
+
+def test_a_key_stated_twice_alike_is_no_fault() -> None:
+    assert all(line.known for line in block_of("rev: B", "revision: B").lines)
+
+
+def test_standards_and_tolerances_may_take_several_lines() -> None:
+    block = block_of(
+        "standard: ISO 8015", "standard: ISO 286-2", "tolerances: .XX ±.01", "tolerances: .XXX ±.005, or so"
+    )
+    assert block.standard is not None
+    assert (block.standard.written, block.standard.system) == ("ISO 8015, ISO 286-2", ISO)
+    assert block.general is not None
+    assert [tolerance.places for tolerance in block.general.places] == [2, 3]
+    assert [line.known for line in block.lines] == [True, True, True, False]

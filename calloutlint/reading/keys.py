@@ -19,6 +19,7 @@ READ = {
     "fastener": "fastener",
     "joint": "joint",
     "note": "note",
+    "notes": "note",
     "process": "process",
 }
 """Every spelling of a key that is read, and the key it stands for."""
@@ -37,7 +38,7 @@ treatment, type, used on, volume, weight
 UNCHECKED = frozenset(word.strip() for word in _USUAL.split(","))
 """Usual title-block words; common practice, no source."""
 
-REPEATABLE = frozenset({"fastener", "joint", "note"})
+REPEATABLE = frozenset({"fastener", "joint", "note", "standard", "tolerances"})
 
 
 def normal_key(written: str) -> str:

@@ -13,7 +13,9 @@ _TAG = re.compile(
     r"\s*(?P<balloon>\d{1,5}(?:\.\d{1,2})?[A-Za-z]?)"
     r"(?:[ \t]+(?P<zone>[A-Za-z]{1,2}-?\d{1,2}|\d{1,2}-?[A-Za-z]{1,2}))?\)[ \t]*"
 )
-_KEY = re.compile(r"(?P<indent>\s*)(?P<key>[A-Za-z][A-Za-z0-9 ./_&'-]{0,39}?)[ \t]*:(?:[ \t]+|$)(?P<value>.*)")
+_KEY = re.compile(
+    r"(?P<indent>\s*)(?P<key>[A-Za-z][A-Za-z0-9 ./_&'-]{0,39}?)[ \t]*:(?P<gap>[ \t]*)(?P<value>.*)"
+)
 _INDENTED_COMMENT = re.compile(r"\s*#(?:\s+(?!\d)|$)")
 _STRAY = "the line belongs to no callout; a balloon such as 12) opens one"
 
@@ -109,12 +111,15 @@ def _source(number: int, line: str, start: int = 0) -> SourceLine:
 
 
 def _pair(number: int, line: str, inside: bool) -> SheetLine | None:
-    """A `key: value` line. Inside a callout an unknown key counts only flush left, else it is callout text."""
+    """A `key: value` line.
+
+    A key that is not known needs its space (`SG-2210:7` is no pair), and inside a callout stands flush left.
+    """
     found = _KEY.match(line)
     if found is None:
         return None
     key = normal_key(found["key"])
     known = is_known(key)
-    if inside and not known and found["indent"]:
+    if not known and ((found["value"] and not found["gap"]) or (inside and found["indent"])):
         return None
     return SheetLine(number, line.strip(), key, found["value"].strip(), known)

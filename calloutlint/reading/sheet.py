@@ -28,8 +28,9 @@ def parse_sheet(text: str, file: str, remarks: tuple[str, ...] = ()) -> Drawing:
 
     Any text gives a drawing: what is not understood is kept in its `lines` and the callouts' unread parts.
     """
-    layout = lay_out(split_lines(text.removeprefix("\ufeff")))
-    title = read_title_block(layout.pairs)
+    layout = lay_out(split_lines(text.removeprefix("\ufeff").rstrip("\x1a")))
+    commas = has_decimal_commas(layout)
+    title = read_title_block(layout.pairs, decimal_comma=commas)
     return Drawing(
         file=file,
         number=title.texts.get("drawing"),
@@ -43,7 +44,7 @@ def parse_sheet(text: str, file: str, remarks: tuple[str, ...] = ()) -> Drawing:
         joints=tuple(title.joints),
         process=title.process,
         notes=tuple(title.notes),
-        callouts=tuple(_callouts(layout.blocks, title.unit, has_decimal_commas(layout))),
+        callouts=tuple(_callouts(layout.blocks, title.unit, commas)),
         lines=_outside_lines(title, layout),
         remarks=remarks,
     )

@@ -1,8 +1,7 @@
 """The title block: what its `key: value` lines say of the drawing as a whole."""
 
-from collections.abc import Callable, Iterable, Mapping
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass, field, replace
-from typing import Any
 
 from calloutlint.callouts.fastener import parse_fastener
 from calloutlint.model.drawing import GeneralTolerances, Process, SheetLine, Standard
@@ -10,7 +9,7 @@ from calloutlint.model.fastener import Fastener, Joint
 from calloutlint.reading.joints import JointTextError, parse_joint, spelled_fastener
 from calloutlint.reading.keys import READ, REPEATABLE
 from calloutlint.reading.standards import read_standard, read_unit
-from calloutlint.reading.tolerances import read_general_tolerances, read_process
+from calloutlint.reading.tolerances import decimal_points, read_general_tolerances, read_process
 from calloutlint.units import Unit
 
 
@@ -18,6 +17,7 @@ from calloutlint.units import Unit
 class TitleBlock:
     """What a title block states; `lines` are its lines, each marked where it could not be understood."""
 
+    decimal_comma: bool = False
     texts: dict[str, str] = field(default_factory=dict)
     standard: Standard | None = None
     unit: Unit | None = None
@@ -29,43 +29,37 @@ class TitleBlock:
     lines: list[SheetLine] = field(default_factory=list)
 
 
-def read_title_block(pairs: Iterable[SheetLine]) -> TitleBlock:
+def read_title_block(pairs: Sequence[SheetLine], *, decimal_comma: bool = False) -> TitleBlock:
     """The title block of a sheet from its `key: value` lines; the unit is read first, wherever it stands."""
-    pairs = list(pairs)
-    block = TitleBlock()
+    block = TitleBlock(decimal_comma=decimal_comma)
     block.unit = next((read_unit(pair.value) for pair in pairs if pair.key == "units" and pair.value), None)
-    seen: set[str] = set()
-    for pair in pairs:
-        block.lines.append(_read_line(block, pair, seen))
+    block.lines = [_read_line(block, pair) for pair in pairs]
     return block
 
 
-def _read_line(block: TitleBlock, pair: SheetLine, seen: set[str]) -> SheetLine:
+def _read_line(block: TitleBlock, pair: SheetLine) -> SheetLine:
     """Takes one line into the block; the line comes back with a reason where it could not be understood."""
     if not pair.known:
         return replace(pair, reason=f"{pair.key!r} is no title-block key that is known")
     if pair.key not in READ or not pair.value:
         return pair
-    if pair.key in seen and pair.key not in REPEATABLE:
+    if pair.key not in REPEATABLE and block.texts.setdefault(pair.key, pair.value) != pair.value:
         return replace(pair, known=False, reason=f"{pair.key!r} is stated a second time; the first is used")
-    seen.add(pair.key)
-    reason = _TAKE.get(pair.key, _take_text)(block, pair)
+    reason = _TAKE[pair.key](block, pair) if pair.key in _TAKE else None
     return replace(pair, known=False, reason=reason) if reason else pair
 
 
-def _take_text(block: TitleBlock, pair: SheetLine) -> None:
-    block.texts[str(pair.key)] = pair.value
-
-
 def _take_standard(block: TitleBlock, pair: SheetLine) -> None:
-    block.standard = read_standard(pair.value)
+    before = f"{block.standard.written}, " if block.standard else ""
+    block.standard = read_standard(before + pair.value)
 
 
 def _take_tolerances(block: TitleBlock, pair: SheetLine) -> str | None:
-    block.general = read_general_tolerances(pair.value, block.unit)
-    if not block.general.unread:
+    before, understood = (f"{block.general.written}, ", block.general.unread) if block.general else ("", ())
+    block.general = read_general_tolerances(before + pair.value, block.unit)
+    pieces = ", ".join(repr(piece) for piece in block.general.unread if piece not in understood)
+    if not pieces:
         return None
-    pieces = ", ".join(repr(piece) for piece in block.general.unread)
     return f"not understood: {pieces}; expected such as .XX ±.01, X.X ±0.2, angles ±1° or ISO 2768-m"
 
 
@@ -75,12 +69,12 @@ def _take_process(block: TitleBlock, pair: SheetLine) -> str | None:
 
 
 def _take_fastener(block: TitleBlock, pair: SheetLine) -> None:
-    block.fasteners.append(parse_fastener(spelled_fastener(pair.value)))
+    block.fasteners.append(parse_fastener(spelled_fastener(_with_points(block, pair.value))))
 
 
 def _take_joint(block: TitleBlock, pair: SheetLine) -> str | None:
     try:
-        block.joints.append(parse_joint(pair.value, pair.number))
+        block.joints.append(parse_joint(_with_points(block, pair.value), pair.number))
     except JointTextError as error:
         return str(error)
     return None
@@ -90,8 +84,11 @@ def _take_note(block: TitleBlock, pair: SheetLine) -> None:
     block.notes.append(pair.value)
 
 
-_TAKE: Mapping[str | None, Callable[[TitleBlock, SheetLine], Any]] = {
-    "units": lambda block, pair: None,
+def _with_points(block: TitleBlock, text: str) -> str:
+    return decimal_points(text) if block.decimal_comma else text
+
+
+_TAKE: Mapping[str, Callable[[TitleBlock, SheetLine], str | None]] = {
     "standard": _take_standard,
     "tolerances": _take_tolerances,
     "process": _take_process,

@@ -62,9 +62,8 @@ def read_general_tolerances(written: str, unit: Unit | None) -> GeneralTolerance
     An amount without a unit of its own is in `unit`. A bare `±0.2` holds for every number of places, one for
     fractions for sizes without decimals. What is not understood is in `unread`.
     """
-    text = _spelled(written)
+    rest = text = decimal_points(_spelled(written))
     found = _Found(unit)
-    rest = _decimal_points(text)
     for pattern, take in (
         (_ISO_2768, found.iso_2768_class),
         (_ANGLES, found.angle_tolerance),
@@ -81,10 +80,11 @@ def read_general_tolerances(written: str, unit: Unit | None) -> GeneralTolerance
 
 def read_process(written: str, unit: Unit | None) -> Process | None:
     """The stated spread `location 0.05, size 0.02`; None where neither can be read."""
-    matches = _PROCESS.finditer(_decimal_points(written))
+    text = decimal_points(written)
+    matches = _PROCESS.finditer(text)
     found = {match["what"].lower(): _length(match, unit) for match in matches}
     location, size = found.get("location") or found.get("position"), found.get("size")
-    return Process(written, location, size) if location or size else None
+    return Process(text, location, size) if location or size else None
 
 
 @dataclass(slots=True)
@@ -143,5 +143,6 @@ def _spelled(written: str) -> str:
     return " ".join(written.split())
 
 
-def _decimal_points(text: str) -> str:
+def decimal_points(text: str) -> str:
+    """The text with a point for every decimal comma: between two digits, or in `X,X`."""
     return re.sub(r"(?<=\d),(?=\d)|(?<=[Xx]),(?=[Xx])", ".", text)
