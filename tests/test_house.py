@@ -71,7 +71,7 @@ def test_a_house_sheet_changes_grade_and_limit(house: Path) -> None:
     ],
 )
 def test_an_amendment_that_fits_no_rule_is_refused(text: str, problem: str) -> None:
-    sheets = read_sheets([("own.toml", OWN), ("b.toml", text)], cases=False)
+    sheets = read_sheets([("own.toml", OWN), ("b.toml", text)])
     with pytest.raises(RuleSheetError) as caught:
         combine(sheets)
     assert str(caught.value) == f"b.toml: {problem}"
@@ -80,7 +80,7 @@ def test_an_amendment_that_fits_no_rule_is_refused(text: str, problem: str) -> N
 def test_a_limit_may_not_become_another_kind_of_amount() -> None:
     """The rule's own texts are checked again with the new limit."""
     text = 'amends = "HOUSE-01"\nwhy = "x"\nlimits.widest = "2 deg"'
-    filed = combine(read_sheets([("own.toml", OWN), ("b.toml", text)], cases=False))
+    filed = combine(read_sheets([("own.toml", OWN), ("b.toml", text)]))
     with pytest.raises(RuleSheetError, match="key 'demand': a length cannot be compared with an angle"):
         build_rules(filed)
 

@@ -43,7 +43,7 @@ finds = []
 
 
 def proof_of(text: str) -> Proof:
-    sheet = read_sheet(text, "h.toml", cases=True)
+    sheet = read_sheet(text, "h.toml")
     assert isinstance(sheet, Sheet)
     (proof,) = prove(Rulebook(build_rules([Filed("h.toml", sheet)])))
     return proof
@@ -117,7 +117,7 @@ def test_each_way_to_fail_is_told(old: str, new: str, failures: list[str]) -> No
 
 @pytest.fixture(scope="module")
 def shipped() -> Rulebook:
-    return load_rulebook(cases=True)
+    return load_rulebook()
 
 
 def test_every_shipped_rule_holds(shipped: Rulebook) -> None:

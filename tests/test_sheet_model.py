@@ -27,7 +27,7 @@ redline  = "add diameter to tolerance"
 
 
 def build(text: str) -> Rule:
-    sheet = read_sheet(text, "h.toml", cases=True)
+    sheet = read_sheet(text, "h.toml")
     assert isinstance(sheet, Sheet)
     return build_rules([Filed("h.toml", sheet)])[0]
 
@@ -154,14 +154,6 @@ def test_what_is_not_toml_says_where() -> None:
     assert problems("id = HOUSE").startswith("h.toml: this is not TOML: Invalid value (at line 1, column 6)")
 
 
-def test_cases_are_left_unread_where_they_are_not_wanted() -> None:
-    text = SHEET + "\n[[case]]\nthis is no TOML at all"
-    sheet = read_sheet(text, "h.toml", cases=False)
-    assert isinstance(sheet, Sheet)
-    assert sheet.case == []
-    assert "this is not TOML" in problems(text)
-
-
 @pytest.mark.parametrize(
     ("text", "problem"),
     [
@@ -176,12 +168,12 @@ def test_cases_are_left_unread_where_they_are_not_wanted() -> None:
 )
 def test_an_amendment_must_change_one_thing_and_say_why(text: str, problem: str) -> None:
     with pytest.raises(RuleSheetError) as caught:
-        read_sheet(text, "h.toml", cases=True)
+        read_sheet(text, "h.toml")
     assert str(caught.value).startswith(problem)
 
 
 def test_an_amendment_is_read() -> None:
-    sheet = read_sheet("amends = 'FIT-06'\nwhy = 'our shop'\ngrade = 'minor'", "h.toml", cases=True)
+    sheet = read_sheet("amends = 'FIT-06'\nwhy = 'our shop'\ngrade = 'minor'", "h.toml")
     assert isinstance(sheet, Amendment)
     assert (sheet.rule, sheet.grade) == ("FIT-06", "minor")
 

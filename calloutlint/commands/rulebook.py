@@ -56,7 +56,7 @@ def run_show(options: Namespace) -> int:
     from calloutlint.rulebook.rulebook import load_rulebook
     from calloutlint.rulebook.text_error import nearest
 
-    rules = {rule.id: rule for rule in load_rulebook(options.house, cases=True).rules}
+    rules = {rule.id: rule for rule in load_rulebook(options.house).rules}
     wanted = options.id.upper()
     if wanted not in rules:
         raise CalloutlintError(
@@ -83,6 +83,6 @@ def run_prove(options: Namespace) -> int:
     from calloutlint.rulebook.proof import prove
     from calloutlint.rulebook.rulebook import load_rulebook
 
-    proofs = prove(load_rulebook(options.folders, cases=True))
+    proofs = prove(load_rulebook(options.folders))
     show_proofs(proofs, Screen(sys.stdout, plain=options.plain))
     return 0 if all(proof.holds for proof in proofs) else 1

@@ -71,11 +71,16 @@ class Engine:
 
     def _unyielding(self, found: list[tuple[View, Finding]]) -> list[Finding]:
         """The findings without those whose rule yields to another that found something in the same place."""
+        if not self._yields:
+            return [finding for _, finding in found]
+        beside: dict[tuple[int, int], list[tuple[View, Finding]]] = {}
+        for view, finding in found:
+            beside.setdefault((id(finding.drawing), id(finding.callout)), []).append((view, finding))
         kept = []
         for view, finding in found:
-            stronger = self._yields.get(finding.rule)
-            rivals = [(v, f) for v, f in found if f.rule in stronger] if stronger else []
-            if not any(_same_place(v, f, view, finding) for v, f in rivals):
+            stronger = self._yields.get(finding.rule, frozenset())
+            rivals = beside[id(finding.drawing), id(finding.callout)] if stronger else []
+            if not any(f.rule in stronger and _same_line(v, f, view, finding) for v, f in rivals):
                 kept.append(finding)
         return kept
 
@@ -100,19 +105,12 @@ def _asked(rules: Iterable[Rule]) -> Asked:
     return tuple((rule.broken.read, rule) for rule in rules)
 
 
-def _same_place(view: View, finding: Finding, other_view: View, other: Finding) -> bool:
-    """The same callout, and for two findings in frames the same line; without callouts the same drawing."""
-    if finding.drawing is not other.drawing or finding.callout is not other.callout:
-        return False
-    if view.subject in IN_FRAMES and other_view.subject in IN_FRAMES:
-        return _overlap(finding.span, other.span)
-    return True
-
-
-def _overlap(one: Span | None, other: Span | None) -> bool:
-    if one is None or other is None:
+def _same_line(view: View, finding: Finding, other_view: View, other: Finding) -> bool:
+    """Whether two findings of a callout stand on one frame line, or not both in frames."""
+    one, two = finding.span, other.span
+    if not (view.subject in IN_FRAMES and other_view.subject in IN_FRAMES and one and two):
         return True
-    return one.line == other.line and one.start < other.end and other.start < one.end
+    return one.line == two.line and one.start < two.end and two.start < one.end
 
 
 def _unrepeated(findings: list[Finding]) -> list[Finding]:

@@ -8,8 +8,8 @@ from calloutlint.rulebook.sheet import Amendment, Filed, LimitAmount, Sheet, rea
 from calloutlint.rulebook.text_error import nearest
 
 
-def read_sheets(texts: Sequence[SheetText], *, cases: bool) -> list[tuple[str, Sheet | Amendment]]:
-    """The sheets in some files, with their names; with their cases where these are wanted.
+def read_sheets(texts: Sequence[SheetText]) -> list[tuple[str, Sheet | Amendment]]:
+    """The sheets in some files, with their names.
 
     Raises:
         RuleSheetError: sheets are broken; every problem is told.
@@ -18,7 +18,7 @@ def read_sheets(texts: Sequence[SheetText], *, cases: bool) -> list[tuple[str, S
     sheets = []
     for file, text in texts:
         try:
-            sheets.append((file, read_sheet(text, file, cases=cases)))
+            sheets.append((file, read_sheet(text, file)))
         except RuleSheetError as error:
             problems.append(str(error))
     if problems:

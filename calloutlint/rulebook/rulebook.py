@@ -42,36 +42,32 @@ class Rulebook:
         return ordered(self.engine.findings(walk(subjects(package))), package)
 
 
-def load_rulebook(house: Sequence[Path] = (), *, cases: bool = False) -> Rulebook:
+def load_rulebook(house: Sequence[Path] = ()) -> Rulebook:
     """The rules that ship and those of the house folders.
 
-    Without cases the rules are kept from one run to the next, since to read and check every sheet again
-    would take longer than most drawings do.
-
-    Args:
-        house: folders of house rule sheets.
-        cases: whether the cases of the sheets are wanted, to prove them or show them.
+    They are kept from one run to the next, since to read and check every sheet again would take longer than
+    most drawings do.
 
     Raises:
         RuleSheetError: sheets are broken; the message tells every problem with its file and key.
         CalloutlintError: a house folder is missing.
     """
     texts = read_texts((folder("rules"), *house))
-    path = None if cases else _saved.saved_path(texts, list(_code_stamps()))
+    path = _saved.saved_path(texts, list(_code_stamps()))
     if path is not None and (rules := _saved.load(path, pickle.load)):
         return Rulebook(rules)
-    rules = _built(texts, cases=cases)
+    rules = _built(texts)
     if path is not None:
         _saved.save(path, lambda file: pickle.dump(rules, file))
     return Rulebook(rules)
 
 
-def _built(texts: Sequence[SheetText], *, cases: bool) -> tuple[Rule, ...]:
+def _built(texts: Sequence[SheetText]) -> tuple[Rule, ...]:
     # Only a first run pays for the libraries that read and check sheets.
     from calloutlint.rulebook.build import build_rules
     from calloutlint.rulebook.house import combine, read_sheets
 
-    return build_rules(combine(read_sheets(texts, cases=cases)))
+    return build_rules(combine(read_sheets(texts)))
 
 
 def _code_stamps() -> Iterator[object]:

@@ -13,8 +13,6 @@ from calloutlint.errors import RuleSheetError
 from calloutlint.rulebook.holds import holding
 from calloutlint.rulebook.text_error import nearest
 
-CASES_OPEN = "\n[[case]]"
-
 
 def _known_standard(text: str) -> str:
     holding(text)
@@ -113,13 +111,13 @@ class Filed:
     sheet: Sheet
 
 
-def read_sheet(text: str, file: str, *, cases: bool) -> Sheet | Amendment:
-    """The sheet in a file's text; its cases, which stand last, are left out where they are not needed.
+def read_sheet(text: str, file: str) -> Sheet | Amendment:
+    """The sheet in a file's text.
 
     Raises:
         RuleSheetError: the text is not TOML, or a key is unknown, missing or wrong.
     """
-    data = _toml(text if cases else text.partition(CASES_OPEN)[0], file)
+    data = _toml(text, file)
     model: type[Sheet] | type[Amendment] = Amendment if {"retires", "amends"} & data.keys() else Sheet
     try:
         sheet = model.model_validate(data)
