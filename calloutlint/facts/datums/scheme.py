@@ -12,7 +12,7 @@ from calloutlint.facts.datums.motion import FREEDOMS, Freedom
 from calloutlint.facts.datums.relations import Relations, relations_of
 from calloutlint.facts.datums.targets import contacts_of
 from calloutlint.model.callout import Callout, DatumTarget
-from calloutlint.model.drawing import Drawing, System
+from calloutlint.model.drawing import Drawing, Package, System
 from calloutlint.model.frame import DatumRef, Modifier, Segment
 
 
@@ -110,6 +110,15 @@ def scheme_of(*sheets: Drawing) -> DatumScheme:
         for relation in relations_of(feature.letter, callout, geometries)
     )
     return DatumScheme(sheets, features, Relations.closed(relations))
+
+
+def schemes_of(package: Package) -> tuple[DatumScheme, ...]:
+    """The schemes of a package, one for each drawing; sheets with the same number and revision are one."""
+    drawings: dict[object, list[Drawing]] = {}
+    for at, sheet in enumerate(package.drawings):
+        key = (sheet.number, sheet.revision) if sheet.number and sheet.sheet else at
+        drawings.setdefault(key, []).append(sheet)
+    return tuple(scheme_of(*sheets) for sheets in drawings.values())
 
 
 def _established(letter: str, callouts: Sequence[Callout]) -> Established:

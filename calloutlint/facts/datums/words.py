@@ -9,7 +9,7 @@ _TURNS = ("", "turn about one axis", "turn about two axes", "turn about every ax
 
 
 def in_words(freedoms: Collection[Freedom]) -> str:
-    """What a part with these freedoms may do: `slide in two directions and turn about one axis`; "" for none."""
+    """What these freedoms let a part do: `slide in two directions and turn about one axis`; "" for none."""
     turns = sum(freedom.turns for freedom in freedoms)
     said = (_SLIDES[len(freedoms) - turns], _TURNS[turns])
     return " and ".join(filter(None, said))
