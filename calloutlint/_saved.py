@@ -17,6 +17,8 @@ from calloutlint import __version__
 
 T = TypeVar("T")
 
+KEPT = 24
+
 
 def saved_path(*made_of: object) -> Path | None:
     """Where to keep what is made of `made_of` by this version; None where there is no private folder."""
@@ -35,12 +37,18 @@ def load(path: Path, read: Callable[[IO[bytes]], T]) -> T | None:
 
 
 def save(path: Path, write: Callable[[IO[bytes]], object]) -> None:
-    """Keep what `write` writes, whole or not at all; a folder that cannot be written is no error."""
+    """Keep what `write` writes, whole or not at all; a folder that cannot be written is no error.
+
+    What was written longest ago is thrown away, so that the folder does not grow from version to version.
+    """
     with suppress(OSError):
         handle, unfinished = tempfile.mkstemp(dir=path.parent)
         with os.fdopen(handle, "wb") as file:
             write(file)
         Path(unfinished).replace(path)
+        kept = sorted(path.parent.glob("*.tables"), key=lambda file: file.stat().st_mtime, reverse=True)
+        for old in kept[KEPT:]:
+            old.unlink()
 
 
 def _private_folder() -> Path | None:

@@ -9,7 +9,8 @@ import pytest
 from calloutlint.errors import CalloutlintError, RuleSheetError
 from calloutlint.rulebook.build import build_rules
 from calloutlint.rulebook.finding import Grade
-from calloutlint.rulebook.house import combine, read_sheets
+from calloutlint.rulebook.house import amended, filed_rules, read_sheets
+from calloutlint.rulebook.proof import prove
 from calloutlint.rulebook.rulebook import load_rulebook
 
 OWN = """
@@ -59,6 +60,16 @@ def test_a_house_sheet_changes_grade_and_limit(house: Path) -> None:
     assert rules["HOUSE-01"].sheet.limits == {"widest": "2 mm"}
 
 
+def test_a_retired_or_amended_rule_is_proven_as_written(house: Path) -> None:
+    shipped = [(proof.rule, proof.holds) for proof in prove(load_rulebook())]
+    (house / "gauges" / "own.toml").unlink()
+    (house / "a.toml").write_text('retires = "FRAME-01"\nwhy = "x"', encoding="utf-8")
+    (house / "b.toml").write_text('amends = "FRAME-02"\ngrade = "minor"\nwhy = "x"', encoding="utf-8")
+    book = load_rulebook([house])
+    assert [(proof.rule, proof.holds) for proof in prove(book)] == shipped
+    assert len(book.rules) == len(shipped) - 1
+
+
 @pytest.mark.parametrize(
     ("text", "problem"),
     [
@@ -73,14 +84,15 @@ def test_a_house_sheet_changes_grade_and_limit(house: Path) -> None:
 def test_an_amendment_that_fits_no_rule_is_refused(text: str, problem: str) -> None:
     sheets = read_sheets([("own.toml", OWN), ("b.toml", text)])
     with pytest.raises(RuleSheetError) as caught:
-        combine(sheets)
+        amended(filed_rules(sheets), sheets)
     assert str(caught.value) == f"b.toml: {problem}"
 
 
 def test_a_limit_may_not_become_another_kind_of_amount() -> None:
     """The rule's own texts are checked again with the new limit."""
     text = 'amends = "HOUSE-01"\nwhy = "x"\nlimits.widest = "2 deg"'
-    filed = combine(read_sheets([("own.toml", OWN), ("b.toml", text)]))
+    sheets = read_sheets([("own.toml", OWN), ("b.toml", text)])
+    filed = amended(filed_rules(sheets), sheets)
     with pytest.raises(RuleSheetError, match="key 'demand': a length cannot be compared with an angle"):
         build_rules(filed)
 

@@ -26,11 +26,11 @@ def read_sheets(texts: Sequence[SheetText]) -> list[tuple[str, Sheet | Amendment
     return sheets
 
 
-def combine(sheets: Sequence[tuple[str, Sheet | Amendment]]) -> list[Filed]:
-    """Rules by id, with what amendments change in them.
+def filed_rules(sheets: Sequence[tuple[str, Sheet | Amendment]]) -> list[Filed]:
+    """The sheets that state rules, sorted by id.
 
     Raises:
-        RuleSheetError: an id is used twice, or an amendment does not fit a rule.
+        RuleSheetError: an id is used twice.
     """
     rules: dict[str, Filed] = {}
     problems: list[str] = []
@@ -40,6 +40,19 @@ def combine(sheets: Sequence[tuple[str, Sheet | Amendment]]) -> list[Filed]:
         if sheet.id in rules:
             problems.append(f"{file}: {sheet.id} is the id of another rule already, in {rules[sheet.id].file}")
         rules[sheet.id] = Filed(file, sheet)
+    if problems:
+        raise RuleSheetError("\n".join(problems))
+    return [rules[id_] for id_ in sorted(rules)]
+
+
+def amended(written: Sequence[Filed], sheets: Sequence[tuple[str, Sheet | Amendment]]) -> list[Filed]:
+    """Rules with what amendments change in them.
+
+    Raises:
+        RuleSheetError: an amendment does not fit a rule; every problem is told.
+    """
+    rules = {filed.sheet.id: filed for filed in written}
+    problems: list[str] = []
     for file, sheet in sheets:
         if isinstance(sheet, Amendment):
             try:
@@ -48,7 +61,7 @@ def combine(sheets: Sequence[tuple[str, Sheet | Amendment]]) -> list[Filed]:
                 problems.append(str(error))
     if problems:
         raise RuleSheetError("\n".join(problems))
-    return [rules[id_] for id_ in sorted(rules)]
+    return list(rules.values())
 
 
 def _amend(rules: dict[str, Filed], amendment: Amendment, file: str) -> None:

@@ -34,9 +34,12 @@ class Proof:
 
 
 def prove(rulebook: Rulebook, ids: Sequence[str] = ()) -> list[Proof]:
-    """Runs the cases of some rules, or of all, each rule beside only those that it yields to."""
-    by_id = {rule.id: rule for rule in rulebook.rules}
-    chosen = [by_id[id_] for id_ in ids] if ids else rulebook.rules
+    """Runs the cases of some rules, or of all, each rule beside only those that it yields to.
+
+    A case says what its sheet does as written: what house sheets change in it stays out.
+    """
+    by_id = {rule.id: rule for rule in rulebook.as_written or rulebook.rules}
+    chosen = [by_id[id_] for id_ in ids] if ids else by_id.values()
     return [prove_rule(rule, by_id) for rule in chosen]
 
 

@@ -6,6 +6,7 @@ import pickle
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from functools import cached_property
+from importlib.resources import files
 from pathlib import Path
 
 from calloutlint import _saved
@@ -22,9 +23,10 @@ CODE_FOLDERS = ("facts", "model", "rulebook")
 
 @dataclass(frozen=True)
 class Rulebook:
-    """Rules in force, sorted by id."""
+    """Rules in force, sorted by id; `as_written` are all rules without what house sheets change in them."""
 
     rules: tuple[Rule, ...]
+    as_written: tuple[Rule, ...] = ()
 
     @cached_property
     def digest(self) -> str:
@@ -54,26 +56,31 @@ def load_rulebook(house: Sequence[Path] = ()) -> Rulebook:
     """
     texts = read_texts((folder("rules"), *house))
     path = _saved.saved_path(texts, list(_code_stamps()))
-    if path is not None and (rules := _saved.load(path, pickle.load)):
-        return Rulebook(rules)
-    rules = _built(texts)
+    if path is not None and isinstance(kept := _saved.load(path, pickle.load), Rulebook):
+        return kept
+    built = _built(texts)
     if path is not None:
-        _saved.save(path, lambda file: pickle.dump(rules, file))
-    return Rulebook(rules)
+        _saved.save(path, lambda file: pickle.dump(built, file))
+    return built
 
 
-def _built(texts: Sequence[SheetText]) -> tuple[Rule, ...]:
+def _built(texts: Sequence[SheetText]) -> Rulebook:
     # Only a first run pays for the libraries that read and check sheets.
     from calloutlint.rulebook.build import build_rules
-    from calloutlint.rulebook.house import combine, read_sheets
+    from calloutlint.rulebook.house import amended, filed_rules, read_sheets
 
-    return build_rules(combine(read_sheets(texts)))
+    sheets = read_sheets(texts)
+    written = filed_rules(sheets)
+    in_force = amended(written, sheets)
+    rules = build_rules(in_force)
+    return Rulebook(rules, rules if in_force == written else build_rules(written))
 
 
 def _code_stamps() -> Iterator[object]:
     """What tells one state of the code that rules run on from another, while it is being worked on."""
     yield read_text("grammar", "condition.lark")
-    for name in CODE_FOLDERS:
-        for file in sorted((Path(__file__).parent.parent / name).glob("*.py")):
+    places = (files("calloutlint") / name for name in CODE_FOLDERS)
+    for place in (place for place in places if isinstance(place, Path)):
+        for file in sorted(place.glob("*.py")):
             status = file.stat()
-            yield name, file.name, status.st_mtime_ns, status.st_size
+            yield place.name, file.name, status.st_mtime_ns, status.st_size
