@@ -31,6 +31,7 @@ BY_PLACE = {
     "number": ("a number after the symbol",),
     "deviation": ("a second deviation, 0 if it is nil",),
     "word": ("a known word or symbol",),
+    "value": ("numbers that make sense together",),
     "size": ("a size before the tolerance",),
     "series": ("a thread series such as UNC or UNF",),
     "bracket": ("an opening bracket before it",),

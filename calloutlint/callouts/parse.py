@@ -1,7 +1,7 @@
 """Reads the text of a callout. Whatever it says, parts come back, never an error."""
 
 import re
-from collections.abc import Collection, Sequence
+from collections.abc import Collection, Mapping, Sequence
 from functools import cache, lru_cache
 
 from lark import Lark, Token, Tree, UnexpectedInput
@@ -9,7 +9,7 @@ from lark import Lark, Token, Tree, UnexpectedInput
 from calloutlint.callouts.build import build
 from calloutlint.callouts.expected import expected_words
 from calloutlint.callouts.grammar import load_grammar
-from calloutlint.callouts.build.line import Line
+from calloutlint.callouts.build.line import Line, Node
 from calloutlint.callouts.note import find_note
 from calloutlint.callouts.spelling import Normal, normalise
 from calloutlint.model.callout import Part, Unread
@@ -59,10 +59,15 @@ def _too_long(text: str, index: int) -> Unread:
 
 
 def _parse_line(index: int, normal: Normal, unit: Unit | None, framed: bool) -> Line:
-    """The parse of one line; on an error the whole word is set aside and the line parsed again."""
     text = _without_note(normal.text)
     lower = framed and _LOWER(text) is not None and _OPENS_FRAME(text) is None
-    start = "lower" if lower else "line"
+    items, expected = _items(text, "lower" if lower else "line")
+    return Line(index, normal, items, unit, expected)
+
+
+@lru_cache(maxsize=8192)
+def _items(text: str, start: str) -> tuple[tuple[Node, ...], Mapping[int, tuple[str, ...]]]:
+    """The parse of one line; on an error the whole word is set aside and the line parsed again."""
     expected: dict[int, tuple[str, ...]] = {}
     while True:
         try:
@@ -70,10 +75,9 @@ def _parse_line(index: int, normal: Normal, unit: Unit | None, framed: bool) -> 
         except UnexpectedInput as error:
             begin, end = _word_at(text, error)
             expected[begin] = expected_words(_accepted(error))
-            text = text[:begin] + "\ufffd" * (end - begin) + text[end:]
+            text = text[:begin] + "\uFFFD" * (end - begin) + text[end:]
         else:
-            items = (tree,) if lower else tuple(tree.children)
-            return Line(index, normal, items, unit, expected)
+            return (tree,) if start == "lower" else tuple(tree.children), expected
 
 
 def _without_note(text: str) -> str:

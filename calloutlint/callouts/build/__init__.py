@@ -6,7 +6,7 @@ from lark import Token, Tree
 
 from calloutlint.callouts.build import take_count, take_frame, take_hole, take_size, take_word
 from calloutlint.callouts.build.drafts import FrameDraft, SizeDraft
-from calloutlint.callouts.build.line import Line
+from calloutlint.callouts.build.line import Line, tokens
 from calloutlint.callouts.build.state import DRAFTS, HOLES, State
 from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.model.callout import Part, Unread, Words
@@ -29,7 +29,7 @@ def _read(state: State, line: Line) -> None:
         if kind not in _MAY_BE_WORDS:
             state.end_words()
         if isinstance(item, Tree):
-            _TREES[kind](state, item)
+            _take_tree(state, item)
         else:
             _TOKENS[kind](state, item)
         state.previous = item
@@ -41,6 +41,15 @@ def _read(state: State, line: Line) -> None:
     if state.depth is not None and state.depth.size is None:
         take_hole.place_extent(state, state.depth)
     _mark_doubtful(state)
+
+
+def _take_tree(state: State, tree: Tree[Token]) -> None:
+    """Takes a node; one whose numbers make no sense, such as `1/0-20 UNC`, cannot be read."""
+    try:
+        _TREES[tree.data](state, tree)
+    except ValueError:
+        pieces = tokens(tree)
+        state.unread_span(state.line.span(pieces[0], pieces[-1]), BY_PLACE["value"])
 
 
 def _is_misspelled_frame(state: State) -> bool:

@@ -42,7 +42,10 @@ MODIFIER_OF = {
 _MODIFIER_WORDS = {modifier.value: modifier for modifier in Modifier if len(modifier.value) in {2, 3}}
 _SHAPES = {"⌀": ZoneShape.DIAMETER, "S⌀": ZoneShape.SPHERE}
 _BARE = frozenset("MLSPFTUIER")
-_WITH_NUMBER = frozenset({Modifier.PROJECTED, Modifier.UNEQUAL, Modifier.OFFSET_ZONE})
+_WITH_NUMBER = frozenset(
+    {Modifier.PROJECTED, Modifier.UNEQUAL, Modifier.OFFSET_ZONE, Modifier.SIMULTANEOUS}
+)
+_PASSED_OVER = {"FILLER", "OPEN_GROUP", "CLOSE_GROUP"}
 _NO_COMPOSITE = frozenset(Characteristic) - {
     Characteristic.POSITION,
     Characteristic.SURFACE_PROFILE,
@@ -80,13 +83,15 @@ class _Datum:
     letters: list[_Letter]
     freedoms: tuple[str, ...] = ()
     joining: bool = False
+    closed: bool = False
+    uses: list[_Use] = field(default_factory=list)
     spans: list[Span] = field(default_factory=list)
 
     def finish(self) -> DatumRef:
         span = joined(self.spans)
         letters = tuple(letter.finish() for letter in self.letters)
         if len(letters) > 1:
-            return DatumRef(letters, (), self.freedoms, span)
+            return DatumRef(letters, tuple(use.finish() for use in self.uses), self.freedoms, span)
         uses = letters[0].modifiers
         return DatumRef((DatumLetter(letters[0].letter, (), letters[0].span),), uses, self.freedoms, span)
 
@@ -128,9 +133,12 @@ class _SegmentReader:
     def piece(self, piece: Token, following: Token | None) -> None:
         span = self.line.span(piece)
         kind = piece.type
-        if kind in {"BAR", "FILLER"}:
-            if kind == "BAR":
-                self.bar()
+        if kind == "BAR":
+            self.bar()
+            return
+        if kind in _PASSED_OVER:
+            if kind == "CLOSE_GROUP" and self.datums:
+                self.datums[-1].closed = True
             return
         if kind in {"WORD", "UNREAD", "ON_CIRCLE"}:
             self.word(piece)
@@ -212,8 +220,9 @@ class _SegmentReader:
                 use.value, self.loose = self.loose[0], None
             self.uses.append(use)
         elif self.datums:
-            self.datums[-1].letters[-1].uses.append(use)
-            self.datums[-1].spans.append(span)
+            datum = self.datums[-1]
+            (datum.uses if datum.closed and len(datum.letters) > 1 else datum.letters[-1].uses).append(use)
+            datum.spans.append(span)
 
     def letters(self, piece: Token, span: Span, following: Token | None) -> None:
         datum = self.datums[-1] if self.datums else None

@@ -32,6 +32,7 @@ _LIMIT = r"(?:\d+\.?\d*|\.\d+)\s*(?:\"|mm|MM|[iI][nN]\.?|°)?"
 _PAIR = re.compile(rf"\s*([+-]?\s*{_NUMBER})\s*[/,]?\s*([+-]?\s*{_NUMBER})\s*").fullmatch
 _LIMITS = re.compile(rf"\s*({_LIMIT})(?:-|\s+-\s+|\s*/\s*|\s+)⌀?({_LIMIT}|{_NUMBER})\s*").fullmatch
 _COUNTED = re.compile(r"(\d+)").search
+_WIDEST_LIMITS = 10  # `30-0.1` is neither: a deviation needs a space before its sign
 _NUMBER_WORDS = "ONE TWO THREE FOUR FIVE SIX SEVEN EIGHT NINE TEN ELEVEN TWELVE".split()
 
 
@@ -75,9 +76,11 @@ def add_tolerance(draft: SizeDraft, piece: Token, line: Line) -> None:
         letters = text.rstrip("0123456789")
         draft.fit = FitCode(letters, text[len(letters) :])
     elif piece.type == "FIT_LIMITS":
+        draft.tolerance = _limits(text[1:-1].strip(), line)
+    elif piece.type == "IN_PARENTHESES":
         inside = text[1:-1].strip()
-        signed = inside[0] in "+-" or re.search(r"[\s/][+-]", inside)
-        draft.tolerance = _deviations(inside, line) if signed else _limits(inside, line)
+        equal = inside.startswith("±")
+        draft.tolerance = PlusMinus(line.value(inside[1:])) if equal else _deviations(inside, line)
 
 
 def _one_deviation(draft: SizeDraft, value: Value) -> None:
@@ -98,7 +101,11 @@ def _limits(text: str, line: Line) -> Limits:
     match = _LIMITS(text)
     if match is None:
         raise ValueError(f"'{text}' is not a pair of limits.")
-    return Limits(line.value(match[1]), line.value(match[2]))
+    limits = Limits(line.value(match[1]), line.value(match[2]))
+    smaller, larger = sorted((limits.first.amount, limits.second.amount))
+    if larger > _WIDEST_LIMITS * smaller:
+        raise ValueError(f"'{text}' is too wide a pair of limits to be one.")
+    return limits
 
 
 def _improper(text: str) -> bool:

@@ -106,8 +106,13 @@ class State:
         self, token: Token, expected: tuple[str, ...], nearest: str | None = None, *, in_frame: bool = False
     ) -> None:
         """Adds text that cannot be read."""
-        span = self.line.span(token)
-        text = self.line.written(span)
         if token.type == "UNREAD":
             expected = self.line.expected.get(token.start_pos or 0) or expected
+        self.unread_span(self.line.span(token), expected, nearest, in_frame=in_frame)
+
+    def unread_span(
+        self, span: Span, expected: tuple[str, ...], nearest: str | None = None, *, in_frame: bool = False
+    ) -> None:
+        """Adds a stretch of text that cannot be read."""
+        text = self.line.written(span)
         self.parts.append(Unread(text, expected, nearest or nearest_spelling(text), in_frame, span))

@@ -15,7 +15,7 @@ from calloutlint.model.frame import Scope, ScopeKind
 from calloutlint.model.source import Span
 
 _REFERRING = {"TO", "FROM", "WITH", "OF", "BY", "ON", "IN", "AT", "WRT", "AND", "&", "OR", "ABOUT", "NORMAL"}
-_NAMES_TARGET = re.compile(r"(?:datum\s+)?(?:movable\s+)?(?:datum\s+)?(?:targets?)?", re.IGNORECASE).fullmatch
+_NAMES_TARGET = {"▲", "DATUM", "MOVABLE", "TARGET", "TARGETS"}
 
 
 def take_frame(state: State, tree: Tree[Token]) -> None:
@@ -80,11 +80,11 @@ def take_datum_feature(state: State, token: Token) -> None:
 def take_target(state: State, tree: Tree[Token]) -> None:
     """A datum target; in `SEE DETAIL A1` it is plain words. The size of its area may stand before it."""
     token = tokens(tree)[0]
-    before = " ".join(state.words)
-    if not _NAMES_TARGET(before.replace("▲", "DATUM")):
+    before = {word.upper() for word in state.words}
+    if not before <= _NAMES_TARGET:
         state.words.append(token)
         return
-    draft = TargetDraft(token[0], int(token[1:]), state.line.span(token), movable="MOVABLE" in before.upper())
+    draft = TargetDraft(token[0], int(token[1:]), state.line.span(token), movable="MOVABLE" in before)
     state.words = []
     size = state.last
     if isinstance(size, SizeDraft) and size.bare and size.nominal is not None:

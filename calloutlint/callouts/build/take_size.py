@@ -188,7 +188,7 @@ def take_boxed_form(state: State, token: Token) -> None:
 
 def open_box(state: State, token: Token) -> None:
     """`[`: a dual dimension right after a size, else a basic one."""
-    behind = isinstance(state.previous, Token) and state.previous.type in _STATUSES
+    behind = isinstance(state.previous, Token) and state.previous.type in {*_STATUSES, "THRU"}
     state.box = SizeStatus.BASIC
     state.dual_of = state.size if state.after_size or behind else None
 
