@@ -4,9 +4,11 @@ from __future__ import annotations
 
 import re
 from decimal import Decimal
+from functools import cached_property
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.callout import CalloutView
+from calloutlint.facts.datum_index import DatumIndex
 from calloutlint.facts.view import View, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, SheetLine, Standard, System
@@ -188,25 +190,22 @@ class DrawingView(View):
     @fact
     def defined_letters(self) -> tuple[str, ...]:
         """Datum letters defined on it or on its other sheets in the package, targets included."""
-        return tuple(sorted(self._definitions))
+        return tuple(sorted(self.datums.definitions))
 
     @fact
     def referenced_letters(self) -> tuple[str, ...]:
         """Datum letters referenced on it or on its other sheets in the package."""
-        return tuple(sorted(self._references))
+        return tuple(sorted(self.datums.references))
 
     @fact
     def duplicates_another(self) -> bool:
         """Whether an earlier drawing of the package has the same number, revision and sheet."""
         return self.package.is_duplicate(self.part)
 
-    @property
-    def _definitions(self) -> dict[str, list[Callout]]:
-        return self.package.datum_index(self.part).definitions
-
-    @property
-    def _references(self) -> frozenset[str]:
-        return self.package.datum_index(self.part).references
+    @cached_property
+    def datums(self) -> DatumIndex:
+        """The datums of the drawing, its other sheets in the package included."""
+        return self.package.datum_index(self.part)
 
     def first_under(self, balloon: str) -> Callout:
         """The first callout with this balloon number."""
@@ -214,7 +213,7 @@ class DrawingView(View):
 
     def definers(self, letter: str) -> list[Callout]:
         """The callouts that establish a datum feature, in the order of the sheets."""
-        return self._definitions.get(letter, [])
+        return self.datums.definitions.get(letter, [])
 
     def is_plane(self, letter: str) -> bool | None:
         """Whether the datum feature is a plain surface; None where it is not known."""

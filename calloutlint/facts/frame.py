@@ -5,18 +5,20 @@ from __future__ import annotations
 from collections import Counter
 from typing import TYPE_CHECKING
 
+from calloutlint.facts.datum import DatumView
+from calloutlint.facts.datums.held import left
+from calloutlint.facts.datums.location import Unlocated
+from calloutlint.facts.datums.words import in_words
 from calloutlint.facts.onward import PartView
+from calloutlint.facts.tolerance import MATERIAL, ToleranceView
 from calloutlint.facts.view import Length, fact
 from calloutlint.model.callout import Meaning
 from calloutlint.model.frame import (
     Characteristic,
-    DatumRef,
     Frame,
     Modifier,
-    ModifierUse,
     ScopeKind,
     Segment,
-    Zone,
     ZoneShape,
 )
 from calloutlint.model.size import SizeModifier
@@ -34,133 +36,6 @@ ORIENTATION = {Characteristic.ANGULARITY, Characteristic.PERPENDICULARITY, Chara
 PROFILE = {Characteristic.LINE_PROFILE, Characteristic.SURFACE_PROFILE}
 SURFACE_FORM = {Characteristic.CIRCULARITY, Characteristic.CYLINDRICITY}
 RUNOUT = {Characteristic.CIRCULAR_RUNOUT, Characteristic.TOTAL_RUNOUT}
-MATERIAL = (Modifier.MMC, Modifier.LMC, Modifier.RFS)
-
-
-class ToleranceView(PartView):
-    """The tolerance compartment of a frame line. Its lengths are unknown where no value is written."""
-
-    subject = "tolerance"
-
-    def __init__(self, zone: Zone | None, frame: FrameView) -> None:
-        super().__init__(zone, frame.callout)
-        self._frame = frame
-        self._uses: tuple[ModifierUse, ...] = zone.modifiers if zone else ()
-
-    @fact
-    def value(self) -> Length | None:
-        """The tolerance as stated."""
-        return self._length(self.part.value) if self.part else None
-
-    @fact
-    def written(self) -> str:
-        """The tolerance value as written."""
-        return self.part.value.text if self.part and self.part.value else ""
-
-    @fact
-    def shape(self) -> ZoneShape | None:
-        """Width, diameter or sphere; unknown where no tolerance is written."""
-        return self.part.shape if self.part else None
-
-    @fact
-    def modifiers(self) -> tuple[Modifier, ...]:
-        """The modifiers in the order written."""
-        return tuple(use.kind for use in self._uses)
-
-    @fact
-    def projected(self) -> Length | None:
-        """Height of the projected zone; unknown where none is written."""
-        return self._amount(Modifier.PROJECTED)
-
-    @fact
-    def unequal(self) -> Length | None:
-        """Amount of an unequally disposed zone outside the material; unknown where none is written."""
-        return self._amount(Modifier.UNEQUAL)
-
-    def _amount(self, kind: Modifier) -> Length | None:
-        use = self.part.modifier(kind) if self.part else None
-        return self._length(use.value) if use else None
-
-    @fact
-    def per_unit(self) -> bool:
-        """Whether the tolerance is stated per unit of length or area."""
-        return self.part is not None and self.part.per is not None
-
-    @fact
-    def out_of_order(self) -> bool:
-        """Whether a material condition modifier does not come first, or the statistical symbol not last."""
-        kinds = list(self.modifiers)
-        late_material = any(kind in MATERIAL for kind in kinds[1:]) and kinds[0] not in MATERIAL
-        early_statistical = Modifier.STATISTICAL in kinds[:-1]
-        return late_material or early_statistical
-
-    @fact
-    def at_lmc(self) -> Length | None:
-        """The tolerance with its whole bonus, at the hole's least material condition."""
-        bonus = self._frame.hole.bonus
-        return None if self.value is None or bonus is None else self.value + bonus
-
-
-class DatumView(PartView):
-    """One datum compartment of a frame line."""
-
-    subject = "datum"
-    part: DatumRef
-
-    def __init__(self, part: DatumRef, frame: FrameView, place: int) -> None:
-        super().__init__(part, frame.callout)
-        self._frame = frame
-        self._place = place
-
-    @fact
-    def frame(self) -> FrameView:
-        """The frame line that it stands in."""
-        return self._frame
-
-    @fact
-    def name(self) -> str:
-        """The datum as named: `A`, `A-B`."""
-        return self.part.name
-
-    @fact
-    def place(self) -> int:
-        """Order of precedence, from 1."""
-        return self._place
-
-    @fact
-    def letters(self) -> tuple[str, ...]:
-        """Its letters; two or more in a common datum."""
-        return tuple(letter.letter for letter in self.part.letters)
-
-    @fact
-    def modifiers(self) -> tuple[Modifier, ...]:
-        """Its modifiers, those of single letters of a common datum included."""
-        own = (use.kind for letter in self.part.letters for use in letter.modifiers)
-        return (*own, *(use.kind for use in self.part.modifiers))
-
-    @fact
-    def freedoms(self) -> tuple[str, ...]:
-        """The degrees of freedom named with it, as written."""
-        return self.part.freedoms
-
-    @fact
-    def undefined(self) -> tuple[str, ...]:
-        """Letters that are defined nowhere on the drawing or its other sheets."""
-        known = self._callout.drawing.defined_letters
-        return tuple(letter for letter in self.letters if letter not in known)
-
-    @fact
-    def plane(self) -> bool | None:
-        """Whether every datum feature it names is a plane; unknown where one is not known."""
-        kinds = [self._callout.drawing.is_plane(letter) for letter in self.letters]
-        if None in kinds:
-            return None
-        return all(kinds)
-
-    @fact
-    def own(self) -> bool:
-        """Whether it names, alone, a datum feature that this very callout establishes."""
-        return len(self.letters) == 1 and self.letters[0] in self._callout.datum_letters
 
 
 class FrameView(PartView):
@@ -218,6 +93,37 @@ class FrameView(PartView):
     def datums(self) -> tuple[DatumView, ...]:
         """Its datum compartments in order of precedence."""
         return tuple(DatumView(ref, self, place) for place, ref in enumerate(self.part.datums, start=1))
+
+    @fact
+    def left_free(self) -> str | None:
+        """The degrees of freedom that its datums leave, in words; unknown where a datum is not known."""
+        free = left(self.part, self._callout.drawing.datums.scheme)
+        return None if free is None else in_words(free)
+
+    @fact
+    def unlocated(self) -> Unlocated | None:
+        """Why a single feature's position does not locate it; unknown where it may."""
+        return self._callout.drawing.datums.unlocated(self._callout.part, self.part)
+
+    @fact
+    def reordered_in_joint(self) -> str | None:
+        """Balloon of another callout of its joint with these datums in another order; unknown if none has."""
+        return self._callout.drawing.datums.reordered_in_joint(self._callout.part, self.part)
+
+    @fact
+    def reordered(self) -> str | None:
+        """Balloon of another callout elsewhere with these datums in another order; unknown if none has."""
+        return self._callout.drawing.datums.reordered(self._callout.part, self.part)
+
+    @fact
+    def other_boundary(self) -> str | None:
+        """Balloon of another position with these datums, other material modifiers; unknown if none has."""
+        return self._callout.drawing.datums.other_boundary(self._callout.part, self.part)
+
+    @fact
+    def closes_ring(self) -> tuple[str, ...]:
+        """Datum letters that are each controlled to the next in a ring, which this line closes."""
+        return self._callout.drawing.datums.ring_closed(self._callout.part, self.part)
 
     @fact
     def composite(self) -> bool:

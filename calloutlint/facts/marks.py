@@ -5,6 +5,8 @@ from __future__ import annotations
 from collections.abc import Iterator
 from typing import TYPE_CHECKING, Any
 
+from calloutlint.facts.datums.completeness import TargetFault
+from calloutlint.facts.datums.control import Uncontrolled
 from calloutlint.facts.onward import PartView
 from calloutlint.facts.view import fact
 from calloutlint.model.callout import DatumFeature, DatumTarget, TargetKind, Unread
@@ -187,6 +189,20 @@ class TargetView(PartView):
         """Point, line or area."""
         return self.part.kind
 
+    @property
+    def _fault(self) -> TargetFault | None:
+        return self._callout.drawing.datums.target_fault(self.part)
+
+    @fact
+    def missing(self) -> tuple[int, ...]:
+        """Numbers left out among the targets of its letter; told of the first target only."""
+        return self._fault.missing if self._fault else ()
+
+    @fact
+    def contacts(self) -> int | None:
+        """Points that the targets of a primary plane make, if fewer than three; told of the first only."""
+        return self._fault.contacts if self._fault else None
+
 
 class DefinitionView(PartView):
     """A datum feature symbol: the callout's feature establishes the datum."""
@@ -203,6 +219,20 @@ class DefinitionView(PartView):
     def referenced(self) -> bool:
         """Whether a frame on the drawing, on any of its sheets, references it."""
         return self.part.letter in self._callout.drawing.referenced_letters
+
+    @property
+    def _lack(self) -> Uncontrolled | None:
+        return self._callout.drawing.datums.uncontrolled(self.part.letter)
+
+    @fact
+    def lacks_form(self) -> bool:
+        """Whether it is a primary datum feature without control of its size or form."""
+        return self._lack is not None and self._lack.primary is None
+
+    @fact
+    def lacks_relation_to(self) -> str | None:
+        """The primary datum that nothing relates it to, as a secondary one; unknown if there is none."""
+        return self._lack.primary.name if self._lack and self._lack.primary else None
 
     @fact
     def repeats(self) -> str | None:

@@ -3,11 +3,11 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from dataclasses import dataclass
 from functools import cached_property
 
 from calloutlint.facts.assembly import Assembly
 from calloutlint.facts.callout import CalloutView
+from calloutlint.facts.datum_index import DatumIndex
 from calloutlint.facts.drawing import DrawingView
 from calloutlint.facts.fastener import FastenerView
 from calloutlint.facts.joint import JointView
@@ -15,14 +15,6 @@ from calloutlint.facts.passage import PassageView
 from calloutlint.facts.view import View, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, Package
-
-
-@dataclass(frozen=True, slots=True)
-class DatumIndex:
-    """Where the datum letters of a drawing, all its sheets together, are defined and referenced."""
-
-    definitions: dict[str, list[Callout]]
-    references: frozenset[str]
 
 
 class PackageView(View):
@@ -88,7 +80,7 @@ class PackageView(View):
         key = f"{drawing.number}\0{drawing.revision}" if drawing.number else drawing.file
         if key not in self._indexes:
             sheets = [other for other in self.part.drawings if _same_drawing(other, drawing)]
-            self._indexes[key] = _index(sheets)
+            self._indexes[key] = DatumIndex(sheets, self.part.joints)
         return self._indexes[key]
 
     def is_duplicate(self, drawing: Drawing) -> bool:
@@ -109,17 +101,3 @@ def _same_drawing(one: Drawing, other: Drawing) -> bool:
         return True
     same = (one.number, one.revision) == (other.number, other.revision)
     return same and one.number is not None and one.sheet != other.sheet
-
-
-def _index(sheets: list[Drawing]) -> DatumIndex:
-    features: dict[str, list[Callout]] = {}
-    targets: dict[str, list[Callout]] = {}
-    references: set[str] = set()
-    for callout in (callout for sheet in sheets for callout in sheet.callouts):
-        for letter in dict.fromkeys(feature.letter for feature in callout.datum_features):
-            features.setdefault(letter, []).append(callout)
-        for target in callout.datum_targets:
-            targets.setdefault(target.letter, []).append(callout)
-        for segment in callout.segments:
-            references |= {letter.letter for ref in segment.datums for letter in ref.letters}
-    return DatumIndex(targets | features, frozenset(references))

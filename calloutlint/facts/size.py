@@ -8,9 +8,10 @@ from typing import TYPE_CHECKING
 
 from calloutlint.facts.onward import PartView, amount_in
 from calloutlint.facts.view import Length, fact
+from calloutlint.model.drawing import GeneralTolerances
 from calloutlint.model.size import Deviations, Limits, PlusMinus, Size, SizeForm, SizeModifier, SizeStatus
 from calloutlint.model.values import Value
-from calloutlint.trade.general_tolerances import general_tolerance
+from calloutlint.trade.general_tolerances import covers_angles, general_tolerance
 from calloutlint.units import Unit
 
 if TYPE_CHECKING:
@@ -200,10 +201,13 @@ class SizeView(PartView):
     @fact
     def covered(self) -> bool | None:
         """Whether general tolerances cover this size; unknown where they were not fully read."""
-        if self.general is not None:
-            return True
         tolerances = self.drawing_model.general
+        if self.general is not None or (tolerances and self._is_covered_angle(tolerances)):
+            return True
         return None if tolerances is not None and tolerances.unread else False
+
+    def _is_covered_angle(self, tolerances: GeneralTolerances) -> bool:
+        return self.part.form is SizeForm.ANGLE and covers_angles(tolerances)
 
     @fact
     def repeats_general(self) -> bool | None:

@@ -3,10 +3,11 @@
 from collections.abc import Iterator
 
 from calloutlint.facts.callout import CalloutView
+from calloutlint.facts.datum import DatumView
 from calloutlint.facts.drawing import DrawingView, LineView
 from calloutlint.facts.fastener import FastenerView
 from calloutlint.facts.fixing import FixingView
-from calloutlint.facts.frame import DatumView, FrameView
+from calloutlint.facts.frame import FrameView
 from calloutlint.facts.joint import JointView, MemberView
 from calloutlint.facts.marks import DefinitionView, GapView, SymbolView, TargetView, UnreadView
 from calloutlint.facts.package import PackageView
