@@ -8,6 +8,8 @@ from calloutlint.errors import SheetError
 from calloutlint.model.fastener import HoleRef
 from calloutlint.reading.joints import FORM
 from calloutlint.reading.package import demo_package, read_package
+from calloutlint.rulebook.finding import Grade
+from calloutlint.rulebook.rulebook import load_rulebook
 
 KEYS = "name, drawings, joints, house, waivers, gate"
 SHEET = "drawing: {}\nrevision: A\nstandard: ASME Y14.5-2018\nunits: mm\n\n4) 4X ⌀6.6 +0.2 0 THRU\n"
@@ -124,6 +126,34 @@ def test_the_demo_is_a_package_of_mating_drawings() -> None:
     assert sum(len(drawing.callouts) for drawing in demo.drawings) == 40
     assert len(demo.joints) == 4
     assert all(line.known for drawing in demo.drawings for line in drawing.lines)
+
+
+MISTAKES = {
+    ("SG-2207", "5", "FIT-06"),
+    ("SG-2207", "6", "FRAME-01"),
+    ("SG-2207", "7", "FRAME-04"),
+    ("SG-2207", "8", "FRAME-15"),
+    ("SG-2207", "14", "READ-01"),
+    ("SG-2210", "5", "FIT-02"),
+    ("SG-2210", "6", "DATUM-01"),
+    ("SG-2210", "7", "SIZE-01"),
+    ("SG-2210", "9", "SIZE-09"),
+    ("SG-2230", None, "NOTE-05"),
+    ("SG-2230", "5", "SIZE-10"),
+    ("SG-2230", "6", "FIT-03"),
+}
+"""What is wrong in the demo, on purpose; all else in it is sound."""
+
+
+def test_the_mistakes_of_the_demo_are_found_and_no_others() -> None:
+    book = load_rulebook()
+    shipped = {rule.id for rule in book.rules}
+    found = {
+        (finding.drawing.number, finding.callout.balloon if finding.callout else None, finding.rule)
+        for finding in book.check(demo_package())
+        if finding.grade > Grade.OBSERVATION and finding.drawing
+    }
+    assert found == {mistake for mistake in MISTAKES if mistake[2] in shipped}
 
 
 def test_paths_that_cannot_be_looked_at_say_so(tmp_path: Path) -> None:
