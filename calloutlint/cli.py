@@ -41,9 +41,13 @@ def build_parser() -> Parser:
 
 
 def _fail(message: str) -> int:
-    shown = "".join(c if c.isprintable() or c == "\n" else "\N{REPLACEMENT CHARACTER}" for c in message)
+    lines = (f"calloutlint: {_visible(line)}\n" for line in message.splitlines())
     try:
-        sys.stderr.write(f"calloutlint: {shown}\n")
+        sys.stderr.write("".join(lines))
     except OSError:
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stderr.fileno())
     return FAILED
+
+
+def _visible(line: str) -> str:
+    return "".join(character if character.isprintable() else "\N{REPLACEMENT CHARACTER}" for character in line)

@@ -123,6 +123,13 @@ def test_marks_in_one_place_share_it_and_marks_that_overlap_stand_under_each_oth
     """)
 
 
+def test_a_mark_at_the_end_of_a_line_is_still_seen() -> None:
+    assert drawn([TextRow((Piece("⌀.5 x"),))], {Place(0, 0, (5, 5)): [A]}) == lines("""
+    ⌀.5 x
+        a
+    """)
+
+
 def test_more_letters_than_a_compartment_is_wide_widen_it() -> None:
     marks = [Mark(letter, "") for letter in "abcdefg"]
     assert drawn([frame("⏥", ".1")], {Place(0, 1): marks}) == lines("""
@@ -193,7 +200,7 @@ def test_text_is_wrapped_by_terminal_columns(text: str, width: int, expected: li
         ("⌖ | ⌀.014 Ⓜ | A", "POS | DIA .014 (M) | A"),
         ("at Ⓜ it would grow to ⌀.023 – “bonus” ±30°", 'at (M) it would grow to DIA .023 - "bonus" +/-30 DEG'),
         ("⟨ST⟩ □.5 ↧ .25 é", "<ST> SQ .5 DEPTH .25 e"),
-        ("漢", "?"),
+        ("漢 μ⌀, ⌀", "U+6F22 uDIA, DIA"),
         ("\x1b[31m\x00\u202e", "?[31m??"),
     ],
 )

@@ -2,13 +2,15 @@
 
 from collections.abc import Iterator
 from dataclasses import dataclass
-from itertools import accumulate
 
 from calloutlint.callouts.write import Style, write_part
 from calloutlint.model.callout import Callout, DatumFeature, Part, Unread
 from calloutlint.model.frame import Frame, Scope, ScopeKind, Segment
 from calloutlint.model.source import Span
 from calloutlint.report.printable import printable
+
+LONGEST = 240
+"""Characters of a source line that are quoted; longer ones are cut short."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -154,6 +156,7 @@ def _quoted(text: str, line: int, start: int, unread: list[Unread], style: Style
     begin = start + len(text) - len(text.lstrip())
     span = Span(line, begin, start + len(text.rstrip()))
     inside = next((part for part in unread if span.start <= part.span.start < span.end), None)
-    shown = [printable(character, style) for character in text.strip()]
-    ends = tuple(accumulate(map(len, shown)))
-    return Piece("".join(shown), inside, span, ends)
+    quoted = text.strip()[:LONGEST]
+    ends = tuple(len(printable(quoted[: end + 1], style)) for end in range(len(quoted)))
+    more = "…" if len(quoted) < len(text.strip()) else ""
+    return Piece(printable(quoted + more, style), inside, span, ends)

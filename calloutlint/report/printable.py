@@ -1,27 +1,31 @@
 """Text made safe for a terminal: no control characters, and in plain output nothing beyond ASCII."""
 
+import re
 import unicodedata
 
 from calloutlint.callouts.table import SPELLINGS
 from calloutlint.callouts.write import Style
 
-# Signs that messages use beside the symbols of callouts, and symbols that need a space beside them.
+# Signs that messages use beside the symbols of callouts; degrees need a space before them.
 _SIGNS = {
-    "⌀": "DIA ", "□": "SQ ", "°": " DEG", "−": "-", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-",
+    "°": " DEG", "−": "-", "–": "-", "—": "-", "…": "...", "·": "-", "•": "-",
     "×": "x", "←": "<-", "≤": "<=", "≥": ">=", "≠": "!=", "√": "sqrt", "²": "^2", "³": "^3", "µ": "u", "μ": "u",
     "‘": "'", "’": "'", "“": '"', "”": '"', "„": '"', "⟨": "<", "⟩": ">", "\N{NO-BREAK SPACE}": " ",
 }  # fmt: skip
 _ASCII = {row.symbol: row.ascii for row in SPELLINGS if not row.symbol.isascii()} | _SIGNS
 
+_SPACED = re.compile(r"([⌀□])(?=[\w.\[(])")
+
 _UNSEEN = {"Cc", "Cf", "Cs", "Co", "Cn", "Zl", "Zp"}
 
 
 def printable(text: str, style: Style) -> str:
-    """`text` with every control or unassigned character shown as `�` (`?` in ASCII); tabs become spaces."""
+    """`text` with control characters shown as `�` or `?`; in ASCII, foreign ones by their code, `U+8EF8`."""
     if text.isascii() and text.isprintable():
         return text
-    spelled = _ascii if style is Style.ASCII else _visible
-    return "".join(map(spelled, text))
+    if style is Style.ASCII:
+        return "".join(map(_ascii, _SPACED.sub(r"\1 ", text)))
+    return "".join(map(_visible, text))
 
 
 def _visible(character: str) -> str:
@@ -31,10 +35,12 @@ def _visible(character: str) -> str:
 
 
 def _ascii(character: str) -> str:
+    if character.isascii() and character.isprintable():
+        return character
     if character in _ASCII:
         return _ASCII[character]
     shown = _visible(character)
-    if shown.isascii():
-        return shown
+    if shown == "\N{REPLACEMENT CHARACTER}":
+        return "?"
     letters = unicodedata.normalize("NFKD", shown).encode("ascii", "ignore").decode()
-    return letters or "?"
+    return letters or f"U+{ord(character):04X}"

@@ -1,7 +1,7 @@
 """A line of a callout with heavy lines under its marked columns, wrapped where it is too long."""
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from rich.cells import cell_len
 from rich.text import Text
@@ -24,10 +24,18 @@ class Underline:
 def underlined(text: str, marks: Sequence[Underline], glyphs: Glyphs, width: int) -> list[Text]:
     """`text` on lines of at most `width` columns, each followed by the marks under it."""
     canvas = Canvas()
+    seen = [_seen(mark, len(text)) for mark in marks if text]
     for start, end in breaks(text, width):
-        inside = [mark for mark in marks if mark.start < max(end, mark.start + 1) and mark.end > start]
-        _draw(canvas, text, start, end, [mark for mark in inside if mark.start < end], glyphs)
+        _draw(
+            canvas, text, start, end, [mark for mark in seen if mark.start < end and mark.end > start], glyphs
+        )
     return canvas.lines()
+
+
+def _seen(mark: Underline, length: int) -> Underline:
+    """The mark inside the line and at least one character long, even if it stands at its end."""
+    start = max(0, min(mark.start, length - 1))
+    return replace(mark, start=start, end=max(mark.end, start + 1))
 
 
 def _draw(canvas: Canvas, text: str, start: int, end: int, marks: Sequence[Underline], glyphs: Glyphs) -> None:
