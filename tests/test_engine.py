@@ -136,8 +136,10 @@ def test_only_rules_for_the_drawings_standard_are_asked() -> None:
 
 
 def test_parts_beside_unread_text_are_skipped() -> None:
-    text = HEAD + "1) .500 ±.005\n   ⏥ | .010\n2) .500 ±.005 QWXZ.7.7\n   ⏥ | .010 | ?!? | B\n"
-    assert [f.callout.balloon for f in check([rule()], text) if f.callout] == ["1"]
+    text = HEAD + "1) .500 ±.005\n   ⌖ | .010 Ⓜ | A\n2) .500 ±.005\n   ⌖ | .010 Ⓜ | ?!? | B\n"
+    for examined, expected in [("frame", ["1"]), ("datum", ["1"]), ("symbol", ["1"]), ("size", ["1", "2"])]:
+        found = check([rule(examine=examined, say=examined)], text)
+        assert [f.callout.balloon for f in found if f.callout] == expected
 
 
 def test_rules_sorted_by_a_fact_find_what_all_rules_would() -> None:

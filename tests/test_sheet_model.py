@@ -150,6 +150,19 @@ def test_mistakes_in_variants_and_cases_are_told_with_their_number() -> None:
     assert problems(SHEET + "\n[[case]]\nsheet = ''\n") == "h.toml: key 'case.1.finds': field required"
 
 
+@pytest.mark.parametrize("deep", ["(never or " * 400 + "composite" + ")" * 400, "not " * 3000 + "composite"])
+def test_what_is_nested_too_deeply_is_refused(deep: str) -> None:
+    told = problems(SHEET.replace("frame is position", deep))
+    assert told == "h.toml: key 'when': this is nested too deeply: state it in fewer steps"
+
+
+def test_a_long_sum_is_refused_before_python_chokes_on_it() -> None:
+    long = SHEET.replace("frame is position", "count of datums" + " + 1" * 140 + " > 1")
+    assert build(long).broken.read.__name__ == "<lambda>"
+    longer = SHEET.replace("frame is position", "count of datums" + " + 1" * 400 + " > 1")
+    assert "nested too deeply" in problems(longer)
+
+
 def test_what_is_not_toml_says_where() -> None:
     assert problems("id = HOUSE").startswith("h.toml: this is not TOML: Invalid value (at line 1, column 6)")
 

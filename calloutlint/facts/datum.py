@@ -29,6 +29,11 @@ class DatumView(PartView):
         self._frame = frame
         self._place = place
 
+    @property
+    def doubtful(self) -> bool:
+        """Whether unread text stands in its frame line."""
+        return self._frame.part.doubtful
+
     @fact
     def frame(self) -> FrameView:
         """The frame line that it stands in."""

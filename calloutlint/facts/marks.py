@@ -45,6 +45,12 @@ class SymbolView(PartView):
         self._frame = frame
         self._on_datum = on_datum
 
+    @property
+    def doubtful(self) -> bool:
+        """Whether unread text stands beside its size or in its frame line."""
+        bearer = self._frame.part if self._frame else self.part
+        return bool(getattr(bearer, "doubtful", False))
+
     @fact
     def kind(self) -> Modifier | None:
         """Which modifier; unknown for a symbol that is none."""

@@ -88,10 +88,14 @@ class _Reader:
             return form(text, self.scope)
         except TextError as error:
             self.problems.append(f"{self.file}: key '{key}': {error.shown_in(text)}")
-            return otherwise
+        except RecursionError:
+            self.problems.append(
+                f"{self.file}: key '{key}': this is nested too deeply: state it in fewer steps"
+            )
+        return otherwise
 
     def condition(self, key: str, text: str) -> Term:
-        return self.read(key, text, condition, ALWAYS)
+        return self.read(key, text, _runnable, ALWAYS)
 
     def message(self, key: str, text: str | None, figures: list[str]) -> Message | None:
         if text is None:
@@ -124,6 +128,13 @@ def _own_wording(sheet: Sheet, reader: _Reader) -> Wording:
         assumed=reader.message("assumed", sheet.assumed or None, []),
         correction=reader.correction("redline", sheet.redline),
     )
+
+
+def _runnable(text: str, scope: Scope) -> Term:
+    term = condition(text, scope)
+    code_of(term.holds)
+    code_of(term.fails)
+    return term
 
 
 def _place(text: str, scope: Scope) -> Code | None:

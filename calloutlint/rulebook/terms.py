@@ -8,12 +8,14 @@ and what runs is ordinary short-circuit Python.
 from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass, field
 from decimal import Decimal
+from itertools import accumulate
 from typing import Any
 
 from calloutlint.rulebook.code import EXAMINED, Code
 from calloutlint.rulebook.kinds import COUNT, FLAG, Kind
 from calloutlint.units import Unit
 
+DEEPEST = 150  # CPython compiles up to 200 brackets within each other
 OPPOSITE = {"<": ">=", "<=": ">", ">": "<=", ">=": "<", "==": "!=", "!=": "==", "in": "not in"}
 
 
@@ -65,9 +67,17 @@ class Term:
 
 
 def code_of(form: Callable[[Writer], str]) -> Code:
-    """One of a term's three forms, ready to run."""
+    """One of a term's three forms, ready to run.
+
+    Raises:
+        RecursionError: it is nested so deeply that Python might not compile it.
+    """
     writer = Writer()
-    return Code(form(writer), writer.constants)
+    expression = form(writer)
+    steps = ({"(": 1, ")": -1}.get(character, 0) for character in expression)
+    if max(accumulate(steps), default=0) > DEEPEST:
+        raise RecursionError
+    return Code(expression, writer.constants)
 
 
 def _operands(writer: Writer, terms: Sequence[Term]) -> tuple[str, list[str]]:
