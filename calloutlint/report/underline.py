@@ -26,9 +26,8 @@ def underlined(text: str, marks: Sequence[Underline], glyphs: Glyphs, width: int
     canvas = Canvas()
     seen = [_seen(mark, len(text)) for mark in marks if text]
     for start, end in breaks(text, width):
-        _draw(
-            canvas, text, start, end, [mark for mark in seen if mark.start < end and mark.end > start], glyphs
-        )
+        here = [mark for mark in seen if mark.start < end and mark.end > start]
+        _draw(canvas, text, start, end, here, glyphs)
     return canvas.lines()
 
 
