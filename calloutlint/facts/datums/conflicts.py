@@ -59,7 +59,7 @@ def _members(joint: Joint, scheme: DatumScheme) -> set[int]:
         id(callout)
         for sheet in scheme.sheets
         for hole in (*joint.holes, *joint.mates)
-        if hole.drawing == sheet.number or (hole.drawing is None and joint in sheet.joints)
+        if hole.drawing == sheet.name or (hole.drawing is None and joint in sheet.joints)
         for callout in sheet.callouts
         if callout.balloon == hole.balloon
     }
