@@ -65,10 +65,10 @@ def review_options(parser: Parser) -> None:
 def run(options: Namespace) -> int:
     """Check the drawings that the options name; the exit status."""
     check_reports(options)
-    package, rulebook = read(options)
+    package = read(options)
     if options.datums:
         return _show_datums(package, options)
-    return show_and_report(reviewed(package, rulebook, options), options)
+    return show_and_report(reviewed(package, rules_for(package, options.house), options), options)
 
 
 def check_reports(options: Namespace) -> None:
@@ -80,12 +80,11 @@ def check_reports(options: Namespace) -> None:
             check_report_path(path)
 
 
-def read(options: Namespace) -> "tuple[Package, Rulebook]":
-    """The package that the options name, and the rules that hold for it."""
+def read(options: Namespace) -> "Package":
+    """The package that the options name."""
     from calloutlint.reading.package import read_package
 
-    package = with_standard(read_package(options.paths), options.standard)
-    return package, rules_for(package, options.house)
+    return with_standard(read_package(options.paths), options.standard)
 
 
 def rules_for(package: "Package", house: Sequence[Path] = ()) -> "Rulebook":

@@ -15,7 +15,7 @@ from calloutlint.commands.arguments import (
     reader_may_leave,
     standard_option,
 )
-from calloutlint.commands.check import read, reviewed, status
+from calloutlint.commands.check import read, reviewed, rules_for, status
 
 if TYPE_CHECKING:
     from calloutlint.model.drawing import Package
@@ -48,7 +48,8 @@ def run(options: Namespace) -> int:
     from calloutlint.report.screen import Screen
 
     screen = Screen(sys.stdout, plain=options.plain)
-    package, rulebook = read(options)
+    package = read(options)
+    rulebook = rules_for(package, options.house)
     if not options.incorporate:
         outcome = reviewed(package, rulebook, options)
         with reader_may_leave():
@@ -57,7 +58,7 @@ def run(options: Namespace) -> int:
     corrections = _incorporate(package, rulebook)
     with reader_may_leave():
         show_incorporated(corrections, screen)
-    return status(reviewed(read(options)[0], rulebook, options))
+    return status(reviewed(read(options), rulebook, options))
 
 
 def _incorporate(package: "Package", rulebook: "Rulebook") -> "Sequence[Correction]":

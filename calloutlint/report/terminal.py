@@ -148,7 +148,7 @@ def _show_finding(judged: Judged, letter: str, screen: Screen) -> None:
         screen.paragraph(f"Line {finding.part.number}: {' '.join(finding.part.text.split())}", indent=INDENT)
     screen.paragraph(finding.message, ROLES.message, indent=INDENT)
     if finding.assumed:
-        screen.paragraph(f"Assumed: {finding.assumed}", ROLES.message, indent=INDENT)
+        screen.paragraph(f"Assumption: {finding.assumed.rstrip('.')}.", ROLES.message, indent=INDENT)
 
 
 def _show_redline(redline: Redline, old: Callout | None, rows: Sequence[Row], screen: Screen) -> None:
