@@ -22,7 +22,7 @@ _LENGTH = re.compile(
     r"(?P<unit>mm|in(?:ch(?:es)?)?\.?|[\"″])?",
     re.IGNORECASE,
 )
-_BALLOON = re.compile(r"\d{1,5}(?:\.\d{1,2})?[A-Za-z]?")
+_BALLOON = re.compile(r"\d{1,7}(?:\.\d{1,2})?[A-Za-z]?")
 
 
 class JointTextError(ValueError):

@@ -10,7 +10,7 @@ from calloutlint.model.source import SourceLine
 from calloutlint.reading.keys import is_known, normal_key
 
 _TAG = re.compile(
-    r"\s*(?P<balloon>\d{1,5}(?:\.\d{1,2})?[A-Za-z]?)"
+    r"\s*(?P<balloon>\d{1,7}(?:\.\d{1,2})?[A-Za-z]?)"
     r"(?:[ \t]+(?P<zone>[A-Za-z]{1,2}-?\d{1,2}|\d{1,2}-?[A-Za-z]{1,2}))?\)[ \t]*"
 )
 _KEY = re.compile(
