@@ -3,175 +3,21 @@
 from __future__ import annotations
 
 from decimal import Decimal
-from enum import StrEnum
+from fractions import Fraction
 from itertools import product
 
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from calloutlint.facts.view import Angle, Length, Number, View, fact
 from calloutlint.rulebook.build import limit
-from calloutlint.rulebook.figures import joined, written
 from calloutlint.rulebook.index import required_words
-from calloutlint.rulebook.kinds import ANGLE, COUNT, LENGTH, NUMBER
-from calloutlint.rulebook.resolve import condition, expression
+from calloutlint.rulebook.resolve import condition
 from calloutlint.rulebook.scope import Scope
-from calloutlint.rulebook.template import message
-from calloutlint.rulebook.terms import Term, code_of
+from calloutlint.rulebook.terms import code_of
 from calloutlint.rulebook.text_error import TextError
 from calloutlint.units import Unit
-
-
-class Metal(StrEnum):
-    BRASS = "brass"
-    GUNMETAL = "gun metal"
-    IRON = "iron"
-
-
-class Mark(StrEnum):
-    CAST = "C"
-    TESTED = "T"
-
-
-class StemView(View):
-    """A valve stem."""
-
-    subject = "stem"
-
-    def __init__(self, name: str, unit: Unit | None, across: str | None, marks: tuple[Mark, ...] = ()) -> None:
-        self.unit = unit
-        self._name, self._across, self._marks = name, across, marks
-
-    @fact
-    def name(self) -> str:
-        """Its name."""
-        return self._name
-
-    @fact
-    def across(self) -> Length | None:
-        """Its diameter."""
-        return None if self._across is None else Decimal(self._across)
-
-    @fact
-    def marks(self) -> tuple[Mark, ...]:
-        """The marks cast on it."""
-        return self._marks
-
-    @fact
-    def tested(self) -> bool:
-        """Whether it was tested."""
-        return Mark.TESTED in self._marks
-
-
-class ValveView(View):
-    """A sluice valve."""
-
-    subject = "valve"
-
-    def __init__(
-        self,
-        unit: Unit | None = Unit.MM,
-        bore: str | None = "80",
-        metal: Metal = Metal.BRASS,
-        stems: tuple[StemView, ...] = (),
-        flags: tuple[bool | None, ...] = (None, None, None),
-    ) -> None:
-        self.unit = unit
-        self._bore, self._metal, self._stems, self._flags = bore, metal, stems, flags
-
-    @fact
-    def bore(self) -> Length | None:
-        """Its bore."""
-        return None if self._bore is None else Decimal(self._bore)
-
-    @fact
-    def lift(self) -> Length:
-        """How far the gate lifts."""
-        return Decimal("25.4") if self.unit is Unit.MM else Decimal("1")
-
-    @fact
-    def slope(self) -> Angle:
-        """Slope of the seat."""
-        return Decimal("5.5")
-
-    @fact
-    def ratio(self) -> Number:
-        """Ratio of the gear."""
-        return Decimal("2.5")
-
-    @fact
-    def bolts(self) -> int:
-        """Number of bolts."""
-        return 8
-
-    @fact
-    def metal(self) -> Metal:
-        """What it is cast of."""
-        return self._metal
-
-    @fact
-    def count(self) -> int:
-        """How many are ordered."""
-        return 3
-
-    @fact
-    def rising_stem(self) -> bool:
-        """Whether its stem rises."""
-        return True
-
-    @fact
-    def stems(self) -> tuple[StemView, ...]:
-        """Its stems."""
-        return self._stems
-
-    @fact
-    def stem(self) -> StemView | None:
-        """The first stem."""
-        return self._stems[0] if self._stems else None
-
-    @fact
-    def letters(self) -> tuple[str, ...]:
-        """Letters on its plate."""
-        return ("A", "B")
-
-    @fact
-    def one(self) -> bool | None:
-        """A flag that may be unknown."""
-        return self._flags[0]
-
-    @fact
-    def two(self) -> bool | None:
-        """Another."""
-        return self._flags[1]
-
-    @fact
-    def three(self) -> bool | None:
-        """A third."""
-        return self._flags[2]
-
-
-def truth(term: Term, view: View) -> bool | None:
-    """True, False, or None for unknown, by the two tests that a condition becomes."""
-    holds, fails = code_of(term.holds).read(view), code_of(term.fails).read(view)
-    assert not (holds and fails)
-    outcome: bool | None = True if holds else False if fails else None
-    assert [code_of(term.value).read(view)] == [outcome]
-    return outcome
-
-
-def ask(text: str, view: View | None = None) -> bool | None:
-    return truth(condition(text, Scope(ValveView)), view or ValveView())
-
-
-def value(text: str, view: View | None = None) -> object:
-    return code_of(expression(text, Scope(ValveView)).value).read(view or ValveView())
-
-
-STEMS = (
-    StemView("left", Unit.MM, "12", (Mark.CAST,)),
-    StemView("right", Unit.MM, "14", (Mark.CAST, Mark.TESTED)),
-)
+from tests.valve import STEMS, StemView, ValveView, ask, truth, value
 
 
 @pytest.mark.parametrize(
@@ -287,8 +133,6 @@ def test_logic_is_kleenes(flags: tuple[bool | None, bool | None, bool | None]) -
     assert ask("valve is one", view) is a
 
 
-Formula = tuple[str, tuple["Formula", ...]]
-
 FORMULAS: st.SearchStrategy[object] = st.recursive(
     st.sampled_from(["one", "two", "three"]),
     lambda inner: st.one_of(
@@ -322,6 +166,35 @@ def reckoned(formula: object, flags: dict[str, bool | None]) -> bool | None:
 def test_any_formula_is_kleenes(formula: object, flags: tuple[bool | None, ...]) -> None:
     known = dict(zip(("one", "two", "three"), flags, strict=True))
     assert ask(spelled(formula), ValveView(flags=flags)) is reckoned(formula, known)
+
+
+SUMS: st.SearchStrategy[tuple[str, Fraction]] = st.recursive(
+    st.sampled_from(
+        [
+            ("lift", Fraction(1)),
+            ("25.4 mm", Fraction(1)),
+            (".005 in", Fraction(1, 200)),
+            ("127 mm", Fraction(5)),
+        ]
+    ),
+    lambda inner: st.one_of(
+        st.builds(lambda a, b: (f"({a[0]} + {b[0]})", a[1] + b[1]), inner, inner),
+        st.builds(lambda a, b: (f"({a[0]} - {b[0]})", a[1] - b[1]), inner, inner),
+        st.builds(lambda a, n: (f"{a[0]} * {n}", a[1] * n), inner, st.integers(1, 9)),
+        st.builds(lambda a, n: (f"({a[0]}) / {n}", a[1] / n), inner, st.sampled_from([1, 2, 4, 5, 8])),
+        st.builds(lambda a: (f"-({a[0]})", -a[1]), inner),
+    ),
+    max_leaves=6,
+)
+
+
+@given(SUMS)
+def test_arithmetic_is_exact(case: tuple[str, Fraction]) -> None:
+    """Against rational arithmetic, for amounts that end in decimals; an inch is exactly 25.4 mm."""
+    text, expected = case
+    found = value(text, ValveView(Unit.INCH))
+    assert isinstance(found, Decimal)
+    assert Fraction(found) == expected
 
 
 @pytest.mark.parametrize(
@@ -441,71 +314,3 @@ def test_a_named_limit_stands_for_its_amount() -> None:
     scope = Scope(ValveView, {"smallest": term})
     assert truth(condition("bore > smallest", scope), ValveView()) is True
     assert truth(condition("bore < smallest", scope), ValveView(Unit.INCH, "2.5")) is True
-
-
-@pytest.mark.parametrize(
-    ("amount", "unit", "shown"),
-    [
-        (".2790", Unit.INCH, ".279"),
-        (".28", Unit.INCH, ".280"),
-        ("1.5", Unit.INCH, "1.500"),
-        (".00025", Unit.INCH, ".00025"),
-        (".123456", Unit.INCH, ".12346"),
-        ("-.002", Unit.INCH, "-.002"),
-        ("0", Unit.INCH, ".000"),
-        ("-0.000001", Unit.INCH, ".000"),
-        ("12.50", Unit.MM, "12.5"),
-        ("0.5", Unit.MM, "0.5"),
-        (".05", Unit.MM, "0.05"),
-        ("100", Unit.MM, "100"),
-        ("1.23456", Unit.MM, "1.2346"),
-        ("0", Unit.MM, "0"),
-    ],
-)
-def test_lengths_are_written_in_the_drawings_manner(amount: str, unit: Unit, shown: str) -> None:
-    """Decimals as ASME Y14.5 has them: no zero before the point in inch, one in millimetre, none behind."""
-    assert written(Decimal(amount), LENGTH, unit) == shown
-
-
-def test_other_quantities_signs_and_lists_are_written_plainly() -> None:
-    assert written(Decimal("30.50"), ANGLE, Unit.INCH) == "30.5°"
-    assert written(Decimal(".5"), NUMBER, Unit.INCH) == "0.5"
-    assert written(4, COUNT, Unit.INCH) == "4"
-    assert written(Decimal(".002"), LENGTH, Unit.INCH, signed=True) == "+.002"
-    assert written(Decimal("-.002"), LENGTH, Unit.INCH, signed=True) == "-.002"
-    assert written(Decimal("0"), LENGTH, Unit.MM, signed=True) == "0"
-    assert joined(["A"]) == "A"
-    assert joined(["A", "B", "C"]) == "A, B and C"
-    assert joined([]) == "none"
-
-
-def test_a_message_shows_its_values_and_collects_its_figures() -> None:
-    said = message(
-        "{{{metal}}} {stems} {stem.marks} {bolts} bolts, {bore}, {lift / 2:+} at {slope}", Scope(ValveView)
-    ).say(ValveView(stems=STEMS))
-    assert said is not None
-    assert said.text == "{brass} left and right C 8 bolts, 80, +12.7 at 5.5°"
-    assert said.figures == {"bore": "80 mm", "lift / 2": "12.7 mm", "slope": "5.5°"}
-
-
-def test_a_message_that_meets_an_unknown_is_not_said() -> None:
-    assert message("{bore} of {metal}", Scope(ValveView)).say(ValveView(bore=None)) is None
-
-
-@pytest.mark.parametrize(
-    ("text", "problem"),
-    [
-        ("{bor}", "'bor' is not known here; the nearest is 'bore'\n    {bor}\n     ^^^"),
-        ("a {bore", "this brace has no partner: write it twice to show one\n    a {bore\n      ^"),
-        ("{rising_stem}", "a yes or no cannot be written in a message\n    {rising_stem}\n     ^^^^^^^^^^^"),
-        ("{metal:+}", "only a quantity has a sign, this is a word\n    {metal:+}\n     ^^^^^^^"),
-        (
-            "first\nthen {bore < 3 mm}",
-            "a yes or no cannot be written in a message\n    then {bore < 3 mm}\n          ^^^^^^^^^^^",
-        ),
-    ],
-)
-def test_a_mistake_in_a_message_is_told_with_its_place(text: str, problem: str) -> None:
-    with pytest.raises(TextError) as caught:
-        message(text, Scope(ValveView))
-    assert caught.value.shown_in(text) == problem
