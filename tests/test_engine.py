@@ -14,6 +14,7 @@ from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, Package
 from calloutlint.model.frame import DatumRef, Segment, Zone
 from calloutlint.reading.sheet import parse_sheet
+from calloutlint.redline.edits import VERBS
 from calloutlint.rulebook.build import build_rules
 from calloutlint.rulebook.engine import agenda_of, balloon_key
 from calloutlint.rulebook.finding import Edit, Finding, Grade
@@ -219,6 +220,12 @@ def test_a_redline_names_the_parts_to_change(redline: str, expected: list[tuple[
     (finding,) = check([rule(when="frame is position", redline=redline)])
     assert [(e.verb, e.word, type(e.target), e.value) for e in finding.edits] == expected
     assert all(isinstance(edit, Edit) for edit in finding.edits)
+
+
+def test_every_verb_of_the_language_can_be_carried_out() -> None:
+    redlines = ["add M to tolerance", "drop datums", "replace tolerance.value with 3 mm", "reorder tolerance"]
+    rules = [rule(f"HOUSE-0{n}", redline=text) for n, text in enumerate([*redlines, "respell callout"])]
+    assert {edit.verb for finding in check(rules) for edit in finding.edits} == set(VERBS)
 
 
 def test_a_finding_may_stand_on_another_view_than_the_examined_one() -> None:

@@ -10,14 +10,6 @@ from calloutlint.rulebook.syntax import Syntax, parse, phrase, place
 from calloutlint.rulebook.terms import Fact, Term, code_of
 from calloutlint.rulebook.text_error import TextError, nearest
 
-VERBS = {
-    "add": "put a symbol into a part: add M to tolerance",
-    "drop": "take a symbol out of a part, or a part out of the callout: drop M from tolerance, drop datums",
-    "replace": "write another value for a fact: replace count with 4",
-    "reorder": "put what a fact lists into the standard's order: reorder tolerance.modifiers",
-    "respell": "write a part in canonical text: respell callout",
-}
-
 
 def correction(text: str, scope: Scope) -> Correction:
     """The correction that a `redline` key states; none for an empty text.

@@ -31,9 +31,10 @@ GRADES = {grade.word: grade for grade in Grade}
 class Edit:
     """One change of a redline.
 
-    `verb` is one of `redline.VERBS`. `target` is the model part to change, or a tuple of parts. `word` is the
-    symbol to add or drop, or the name of the target's fact to change, None for the part as a whole. `value`
-    is what to write: a length is in the unit of the drawing.
+    `verb` is `add` or `drop` (a symbol; `drop` also a whole part), `replace` (what a fact of the part says),
+    `reorder` (into the standard's order) or `respell` (in canonical text). `target` is the model part to
+    change, or a tuple of parts. `word` is the symbol to add or drop, or the name of the target's fact to
+    change, None for the part as a whole. `value` is what to write: a length is in the unit of the drawing.
     """
 
     verb: str
