@@ -63,9 +63,10 @@ def _draw_frames(numbered: Sequence[tuple[int, Row]], marked: Marked, glyphs: Gl
 
 def _grid_row(number: int, row: FrameRow, marked: Marked, glyphs: Glyphs) -> GridRow:
     cells = tuple(_cell(piece.text, _marks(marked, number, index)) for index, piece in enumerate(row.pieces))
-    pointers = [(f"{glyphs.pointer} {mark.letter}", mark.style) for mark in _marks(marked, number, None)]
+    marks = _marks(marked, number, None)
     beside = [(row.beside, "")] if row.beside else []
-    return GridRow(cells, row.lower, (*beside, *pointers))
+    beside += [(f"{glyphs.pointer} {_joined(marks)}", marks[0].style)] if marks else []
+    return GridRow(cells, row.lower, tuple(beside))
 
 
 def _marks(marked: Marked, row: int, piece: int | None) -> list[Mark]:

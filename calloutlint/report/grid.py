@@ -39,6 +39,11 @@ class GridRow:
     beside: tuple[tuple[str, str], ...] = ()
     torn: tuple[bool, bool] = (False, False)
 
+    @property
+    def beside_width(self) -> int:
+        """Terminal columns that the text to its right takes, with the spaces before it."""
+        return sum(1 + cell_len(text) for text, _ in self.beside)
+
 
 def draw_grid(rows: Sequence[GridRow], glyphs: Glyphs) -> Canvas:
     """The rows under each other as one drawing, compartments of a column equally wide."""
@@ -57,7 +62,10 @@ def draw_grid(rows: Sequence[GridRow], glyphs: Glyphs) -> Canvas:
 
 def tear(row: GridRow, width: int) -> list[GridRow]:
     """The row in as many lines as it needs to stay within `width` columns, torn where it goes on."""
-    cells = [part for cell in row.cells for part in _split(cell, max(width - 4, 1))]
+    symbol, *others = row.cells
+    cells = [replace(symbol, text="" if row.lower else symbol.text), *others]
+    width -= row.beside_width
+    cells = [part for cell in cells for part in _split(cell, max(width - 4, 1))]
     lines: list[list[Cell]] = [[]]
     for cell in cells:
         if lines[-1] and _width([*lines[-1], cell]) > width:
@@ -73,7 +81,7 @@ def tear(row: GridRow, width: int) -> list[GridRow]:
 def grid_width(rows: Sequence[GridRow]) -> int:
     """Terminal columns that the rows take together, text beside them included."""
     edges = _columns(rows)
-    return max(edges[len(row.cells)] + 1 + sum(1 + cell_len(text) for text, _ in row.beside) for row in rows)
+    return max(edges[len(row.cells)] + 1 + row.beside_width for row in rows)
 
 
 def _width(cells: Sequence[Cell]) -> int:

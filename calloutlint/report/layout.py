@@ -105,9 +105,10 @@ def _frame_rows(frame: Frame, style: Style) -> Iterator[tuple[int, Row]]:
 
 def _cells(segment: Segment, style: Style) -> tuple[Piece, ...]:
     texts = [text.strip() for text in _text(segment, style).split("|")]
-    parts = [None, *([segment.zone] if segment.zone else []), *segment.datums]
-    spans = [part.span if part else None for part in parts]
-    return tuple(Piece(text, part, span) for text, part, span in zip(texts, parts, spans, strict=True))
+    parts = [None, segment.zone, *segment.datums]
+    return tuple(
+        Piece(text, part, part.span if part else None) for text, part in zip(texts, parts, strict=False)
+    )
 
 
 def _text(part: Part | Segment, style: Style) -> str:

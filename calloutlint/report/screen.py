@@ -13,6 +13,7 @@ from calloutlint.report.styles import ASCII, UNICODE
 from calloutlint.report.wrap import wrap
 
 NARROWEST = 40
+NARROWEST_TEXT = 20
 
 # Locale settings that an interpreter sets by itself in the C locale (PEP 538).
 _COERCED = {"", "C.UTF-8", "C.utf8", "UTF-8"}
@@ -53,6 +54,10 @@ class Screen:
         """Print `text` wrapped, moved right by `indent`, its lines hanging from the end of `head`."""
         opening = Text(" " * indent).append_text(head or Text())
         hang = cell_len(opening.plain)
+        if self.width - hang < NARROWEST_TEXT and text:
+            self.line(opening)
+            hang = min(indent + 3, self.width - NARROWEST_TEXT)
+            opening = Text(" " * hang)
         for line in self.wrapped(text, hang) or [""]:
             self.line(opening.append(line, style or None))
             opening = Text(" " * hang)
@@ -60,7 +65,7 @@ class Screen:
     def wrapped(self, text: str, indent: int = 0) -> list[str]:
         """`text` as this screen can show it, in lines that fit it after `indent` columns."""
         paragraphs = [self.spell(line) for line in text.splitlines()]
-        return wrap("\n".join(paragraphs), max(self.width - indent, NARROWEST // 2))
+        return wrap("\n".join(paragraphs), self.width - indent)
 
     def rule(self, style: str = "") -> None:
         """Print a line across the screen."""
