@@ -11,7 +11,7 @@ from calloutlint.model.callout import Callout
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import Depth, Size, SizeForm, SizeStatus, Through
-from calloutlint.trade.clearance import ClearanceSizes, clearance_sizes, is_published
+from calloutlint.trade.clearance import assumed_range, is_published
 from calloutlint.units import Unit, convert
 
 NOT_CLEARANCE = {StepKind.REAM, StepKind.TAP}
@@ -125,22 +125,17 @@ class HoleView(PartView):
 
 
 def _admits(fastener: Fastener, nominal: Decimal, unit: Unit | None) -> bool:
-    sizes = _sizes_for(fastener)
+    """Whether a hole lies between the close and loose published sizes of a fastener."""
     diameter = fastener.thread.diameter if fastener.thread else None
-    if sizes is None or diameter is None or diameter.unit is None or unit is None:
+    if diameter is None or diameter.unit is None or unit is None:
         return False
-    close = convert(sizes.close, diameter.unit, unit)
-    loose = convert(sizes.loose, diameter.unit, unit)
+    span = assumed_range(diameter.amount, diameter.unit)
+    if span is None:
+        return False
+    close, loose = (convert(end, diameter.unit, unit) for end in span)
     return close <= nominal <= loose
 
 
 def _diameter_mm(fastener: Fastener) -> Decimal:
     diameter = fastener.thread.diameter if fastener.thread else None
     return amount_in(diameter, Unit.MM) or Decimal(0)
-
-
-def _sizes_for(fastener: Fastener) -> ClearanceSizes | None:
-    diameter = fastener.thread.diameter if fastener.thread else None
-    if diameter is None or diameter.unit is None:
-        return None
-    return clearance_sizes(diameter.amount, diameter.unit)
