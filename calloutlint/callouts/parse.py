@@ -75,7 +75,7 @@ def _items(text: str, start: str) -> tuple[tuple[Node, ...], Mapping[int, tuple[
         except UnexpectedInput as error:
             begin, end = _word_at(text, error)
             expected[begin] = expected_words(_accepted(error))
-            text = text[:begin] + "\uFFFD" * (end - begin) + text[end:]
+            text = text[:begin] + "\ufffd" * (end - begin) + text[end:]
         else:
             return (tree,) if start == "lower" else tuple(tree.children), expected
 

@@ -101,7 +101,7 @@ def _exchanged() -> dict[int, str]:
 
 
 _AS_IS = {"X", "-", "DEPTH FEATURE"}
-_EXCHANGED = _exchanged() | {0xA0: " ", 0x2007: " ", 0x2009: " ", 0x202F: " ", 0x3000: " "}
+_EXCHANGED = _exchanged() | {code: " " for code in range(0x3001) if chr(code).isspace() and code != ord("\t")}
 _NORMAL = {
     spelling: normal for spelling, normal in _spelled().items() if spelling.translate(_EXCHANGED) == spelling
 }
@@ -111,8 +111,8 @@ _COMMA = re.compile(r"(?<=\d),(?=\d)|(?<![\w,]),(?=\d)")
 _FRAME_WORDS = {s.upper() for row in CHARACTERISTICS for s in row.every if s[0].isalpha() or s in {"—", "//"}}
 _FRAME_FOLLOWS = r"(?=\s*[\]|]|[\s:=]*(?:[S]?[⌀]|%%[cC]|S?DIA\b|dia\b|-?\.?\d)%s)"
 _LONG_FOLLOWS = r"|\s+[A-Z](?![A-Za-z0-9.])"
-_NUMBER_FOLLOWS = r"(?=\s*[\d.(\[])"
-_RADIUS_FOLLOWS = rf"(?:(?<!\d\sR)(?<!\dR){_NUMBER_FOLLOWS}|(?=\s*\d*\.\d|\s*[(\[]))"
+_NUMBER_FOLLOWS = r"(?=\s*[(\[]?\s*\.?\d)"
+_RADIUS_FOLLOWS = rf"(?:(?<!\d\sR)(?<!\dR){_NUMBER_FOLLOWS}|(?=\s*\d*\.\d|\s*[(\[]\s*\.?\d))"
 
 
 def _ending(spelling: str) -> str:

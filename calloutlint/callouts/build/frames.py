@@ -42,9 +42,7 @@ MODIFIER_OF = {
 _MODIFIER_WORDS = {modifier.value: modifier for modifier in Modifier if len(modifier.value) in {2, 3}}
 _SHAPES = {"⌀": ZoneShape.DIAMETER, "S⌀": ZoneShape.SPHERE}
 _BARE = frozenset("MLSPFTUIER")
-_WITH_NUMBER = frozenset(
-    {Modifier.PROJECTED, Modifier.UNEQUAL, Modifier.OFFSET_ZONE, Modifier.SIMULTANEOUS}
-)
+_WITH_NUMBER = frozenset({Modifier.PROJECTED, Modifier.UNEQUAL, Modifier.OFFSET_ZONE, Modifier.SIMULTANEOUS})
 _PASSED_OVER = {"FILLER", "OPEN_GROUP", "CLOSE_GROUP"}
 _NO_COMPOSITE = frozenset(Characteristic) - {
     Characteristic.POSITION,
@@ -309,4 +307,4 @@ def _split(pieces: Sequence[Token], characteristic: Characteristic) -> list[list
             segments[-1].append(Token("PER_MARK", "/", start_pos=piece.start_pos, end_pos=piece.end_pos))
         else:
             segments.append([])
-    return segments
+    return segments[:1] + [segment for segment in segments[1:] if segment]

@@ -44,7 +44,7 @@ class Line:
 
     def value(self, text: str) -> Value:
         """The number `text` in the unit of the callout."""
-        return parse_value(text, self.unit)
+        return parse_value(str(text), self.unit)
 
     def in_other_unit(self) -> "Line":
         """The same line with lengths in the other unit, for a dual dimension."""

@@ -56,7 +56,7 @@ def take_unread(state: State, token: Token) -> None:
     """A word that the grammar could not take. What a bar parts from no frame follows a wrong characteristic."""
     span = state.line.span(token)
     text = state.line.written(span)
-    if text[0] != "|":
+    if text[:1] != "|":
         state.end_words()
         state.unread(token, BY_PLACE["word"])
         return
