@@ -3,6 +3,7 @@
 import os
 import sys
 from collections.abc import Sequence
+from pathlib import Path
 
 from calloutlint import __version__
 from calloutlint.commands import check, demo, redline, rulebook, schema, symbols, transcribe
@@ -27,6 +28,10 @@ def main(arguments: Sequence[str] | None = None) -> int:
         return _fail("Interrupted.")
     except OSError as error:
         return _fail(f"{error.strerror or error}{f': {error.filename}' if error.filename else ''}.")
+    except Exception as fault:
+        if sys.flags.dev_mode:
+            raise
+        return _fail(_own_fault(fault))
     return status
 
 
@@ -47,6 +52,18 @@ def _fail(message: str) -> int:
     except OSError:
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stderr.fileno())
     return FAILED
+
+
+def _own_fault(fault: Exception) -> str:
+    """What is said of an error that no input should cause; `python -X dev` shows the whole traceback."""
+    place = fault.__traceback__
+    while place is not None and place.tb_next is not None:
+        place = place.tb_next
+    where = f"{Path(place.tb_frame.f_code.co_filename).name}, line {place.tb_lineno}" if place else "unknown"
+    return (
+        "This is a fault of calloutlint, not of what it was given. Please report it with the sheet: "
+        f"{type(fault).__name__}: {fault} ({where})."
+    )
 
 
 def _visible(line: str) -> str:

@@ -2,6 +2,7 @@
 
 import json
 import os
+import re
 import subprocess
 import sys
 from pathlib import Path
@@ -10,6 +11,7 @@ import pytest
 
 from calloutlint import __version__
 from calloutlint.cli import main
+from calloutlint.commands import symbols
 
 HEAD = """\
 drawing:    PW-20
@@ -279,6 +281,19 @@ def test_the_demo_has_findings_and_needs_no_argument(capsys: pytest.CaptureFixtu
     assert "no substitute" in capsys.readouterr().out
 
 
+def test_a_fault_of_the_program_itself_is_told_without_a_traceback(
+    monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
+) -> None:
+    def fail(_options: object) -> int:
+        raise KeyError("weir")
+
+    monkeypatch.setattr(symbols, "run", fail)
+    said = told(capsys, "symbols")
+    assert re.fullmatch(
+        r"calloutlint: This is a fault of calloutlint.* KeyError: 'weir' \(test_cli\.py, line \d+\)\.\n", said
+    )
+
+
 def test_every_spelling_is_listed(capsys: pytest.CaptureFixture[str]) -> None:
     assert run("symbols") == 0
     assert "TRUE POSITION" in capsys.readouterr().out
@@ -312,11 +327,14 @@ class TestProcess:
         assert (done.returncode, done.stderr) == (1, b"")
         assert b"| FLAT | .002 | A |" in done.stdout
 
-    def test_a_reader_that_leaves_early_is_no_error(self, folder: Path) -> None:
-        command = [sys.executable, "-m", "calloutlint", "check", str(folder / "faulty.txt")]
+    @pytest.mark.parametrize(("sheet", "status"), [("clean.txt", 0), ("faulty.txt", 1)])
+    def test_a_reader_that_leaves_early_changes_no_exit_status(
+        self, folder: Path, sheet: str, status: int
+    ) -> None:
+        command = [sys.executable, "-m", "calloutlint", "check", str(folder / sheet)]
         with subprocess.Popen(command, stdout=subprocess.PIPE, stderr=subprocess.PIPE) as started:
             assert started.stdout is not None
             assert started.stderr is not None
             started.stdout.close()
             assert started.stderr.read() == b""
-            assert started.wait() == 1
+            assert started.wait() == status

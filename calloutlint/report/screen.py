@@ -19,13 +19,21 @@ NARROWEST_TEXT = 20
 _COERCED = {"", "C.UTF-8", "C.utf8", "UTF-8"}
 
 
+class _Console(Console):
+    """A console that leaves it to the command what a closed pipe means."""
+
+    def on_broken_pipe(self) -> None:
+        """Pass the error on, where rich would end the process."""
+        raise BrokenPipeError
+
+
 class Screen:
     """Prints lines of text as they are: nothing in them is taken for markup."""
 
     def __init__(self, stream: TextIO, *, plain: bool = False, width: int | None = None) -> None:
         """Write to `stream`, `width` columns wide (None: as wide as the terminal, else 80)."""
         plain = plain or not draws_symbols(stream.encoding, os.environ)
-        self._console = Console(
+        self._console = _Console(
             file=stream,
             width=width,
             color_system=None if plain else "auto",
