@@ -1,11 +1,16 @@
 """Which holes the stated joints tie together: joints of the package, of its sheets, and of fastener notes."""
 
 from collections.abc import Iterator
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
+from calloutlint.facts.fastener import limits_of_pin
+from calloutlint.facts.feature import leading_size
 from calloutlint.model.callout import Callout, FastenerNote
 from calloutlint.model.drawing import Drawing, Package
-from calloutlint.model.fastener import HoleRef, Joint
+from calloutlint.model.fastener import Fastener, HoleRef, Joint
+from calloutlint.model.size import Deviations, Limits, PlusMinus, Size
+from calloutlint.model.values import Value
+from calloutlint.units import Unit, convert
 
 
 @dataclass(frozen=True, slots=True)
@@ -26,6 +31,11 @@ class StatedJoint:
     holes: tuple[Member, ...]
     mates: tuple[Member, ...]
 
+    @property
+    def members(self) -> tuple[Member, ...]:
+        """Every balloon that it names."""
+        return (*self.holes, *self.mates)
+
 
 class Assembly:
     """The stated joints of a package."""
@@ -39,7 +49,14 @@ class Assembly:
             for drawing in package.drawings
             for callout in reversed(drawing.callouts)
         }
-        self.joints = tuple(self._resolve(joint, home) for joint, home in _stated(package))
+        stated = [self._resolve(joint, home) for joint, home in _stated(package)]
+        named = {id(member.callout) for joint in stated for member in joint.members}
+        noted = [
+            self._resolve(_noted(callout, note), drawing)
+            for drawing, callout, note in _notes(package)
+            if id(callout) not in named
+        ]
+        self.joints = (*stated, *noted)
         self._clearance = {id(member.callout) for joint in self.joints for member in joint.holes}
         self._named = self._clearance | {id(member.callout) for joint in self.joints for member in joint.mates}
 
@@ -54,7 +71,9 @@ class Assembly:
     def _resolve(self, joint: Joint, home: Drawing | None) -> StatedJoint:
         holes = tuple(self._find(ref, home) for ref in joint.holes)
         mates = tuple(self._find(ref, home) for ref in joint.mates)
-        return StatedJoint(joint, home, holes, mates)
+        sheets = [member.drawing for member in (*holes, *mates) if member.drawing is not None]
+        first = sheets[0] if sheets else home
+        return StatedJoint(_in_unit(joint, first.unit if first else None), home, holes, mates)
 
     def _find(self, ref: HoleRef, home: Drawing | None) -> Member:
         if ref.drawing is None:
@@ -72,8 +91,66 @@ def _stated(package: Package) -> Iterator[tuple[Joint, Drawing | None]]:
     yield from ((joint, None) for joint in package.joints)
     for drawing in package.drawings:
         yield from ((joint, drawing) for joint in drawing.joints)
+
+
+def _notes(package: Package) -> Iterator[tuple[Drawing, Callout, FastenerNote]]:
+    for drawing in package.drawings:
         for callout in drawing.callouts:
-            for note in callout.parts:
-                if isinstance(note, FastenerNote):
-                    here = (HoleRef(None, callout.balloon),)
-                    yield Joint(f"balloon {callout.balloon}", here, note.fastener, note.hold), drawing
+            yield from ((drawing, callout, part) for part in callout.parts if isinstance(part, FastenerNote))
+
+
+def _noted(callout: Callout, note: FastenerNote) -> Joint:
+    """The joint that a note makes: of its own hole as a clearance hole, or as the one that fixes."""
+    here, name = (HoleRef(None, callout.balloon),), f"balloon {callout.balloon}"
+    if _holds(callout, note.fastener):
+        return Joint(name, (), note.fastener, note.hold, here)
+    return Joint(name, here, note.fastener, note.hold)
+
+
+def _holds(callout: Callout, fastener: Fastener) -> bool:
+    """Whether the hole that names a fastener fixes it: tapped, or not surely larger than a pin."""
+    if callout.threads:
+        return True
+    size = leading_size(callout)
+    if fastener.pin is None or size is None:
+        return False
+    hole, pin = limits_of_pin(size), limits_of_pin(fastener.pin)
+    largest = pin[1] if pin else (fastener.pin.nominal.amount if fastener.pin.nominal else None)
+    if hole is None or largest is None:
+        return True
+    unit, other = _unit_of(size), _unit_of(fastener.pin)
+    return hole[0] < (convert(largest, other, unit) if unit and other else largest)
+
+
+def _unit_of(size: Size) -> Unit | None:
+    return size.nominal.unit if size.nominal else None
+
+
+def _in_unit(joint: Joint, unit: Unit | None) -> Joint:
+    """The joint with `unit` for each length that states none: the projection, the thickness, a pin."""
+    pin = joint.fastener.pin
+    return replace(
+        joint,
+        projection=_stating(joint.projection, unit),
+        thickness=_stating(joint.thickness, unit),
+        fastener=replace(joint.fastener, pin=_pin_in(pin, unit)) if pin else joint.fastener,
+    )
+
+
+def _pin_in(pin: Size, unit: Unit | None) -> Size:
+    tolerance = pin.tolerance
+    match tolerance:
+        case PlusMinus(amount):
+            tolerance = PlusMinus(replace(amount, unit=amount.unit or unit))
+        case Deviations(upper, lower):
+            tolerance = Deviations(
+                replace(upper, unit=upper.unit or unit), replace(lower, unit=lower.unit or unit)
+            )
+        case Limits(first, second, named):
+            ends = replace(first, unit=first.unit or unit), replace(second, unit=second.unit or unit)
+            tolerance = Limits(*ends, named)
+    return replace(pin, nominal=_stating(pin.nominal, unit), tolerance=tolerance)
+
+
+def _stating(value: Value | None, unit: Unit | None) -> Value | None:
+    return value if value is None or value.unit is not None else replace(value, unit=unit)

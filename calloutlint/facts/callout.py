@@ -7,6 +7,7 @@ from decimal import Decimal
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.feature import FeatureView
+from calloutlint.facts.fitted import FitView, MatingView, mating_of
 from calloutlint.facts.frame import FrameView
 from calloutlint.facts.hole import HoleView
 from calloutlint.facts.marks import DefinitionView, GapView, SymbolView, TargetView, UnreadView, gaps, symbols
@@ -15,9 +16,11 @@ from calloutlint.facts.step import StepView
 from calloutlint.facts.thread import ThreadView
 from calloutlint.facts.view import View, fact
 from calloutlint.facts.writing import bare_points, uneven, zero_led
-from calloutlint.model.callout import Callout, Meaning
+from calloutlint.model.callout import Callout, Meaning, Part
 from calloutlint.model.drawing import Drawing
+from calloutlint.model.fastener import Fastener
 from calloutlint.model.frame import Frame
+from calloutlint.model.hole import HoleStep, StepKind
 from calloutlint.model.size import Depth, Size
 
 if TYPE_CHECKING:
@@ -174,6 +177,20 @@ class CalloutView(View):
         """Whether a stated joint names this callout at all."""
         return self._drawing.package.assembly.is_joined(self.part)
 
+    @property
+    def fasteners(self) -> Iterator[Fastener]:
+        """Fasteners of the stated joints that name this callout."""
+        joints = self._drawing.package.assembly.joints
+        return (j.joint.fastener for j in joints if any(m.callout is self.part for m in j.members))
+
+    def fit_of(self, size: Size) -> FitView | None:
+        """The view of a size's fit code; None where it has none."""
+        return FitView(size, self) if size.fit else None
+
+    def mating_of(self, size: Size) -> MatingView | None:
+        """The fit that a size makes, where words call it one and it can be told; else None."""
+        return mating_of(size, self)
+
     def fit_limits(self, size: Size) -> tuple[Decimal, Decimal] | None:
         """Limits of a size with a fit code, in the drawing's unit; None where ISO 286 has none."""
         return self._drawing.fit_limits(size)
@@ -192,9 +209,10 @@ def _frame_views(frames: tuple[Frame, ...], callout: CalloutView) -> Iterator[Fr
 
 
 def _size_views(callout: CalloutView) -> Iterator[SizeView]:
-    for part in callout.part.parts:
+    parts = callout.part.parts
+    for part, following in zip(parts, (*parts[1:], None), strict=True):
         if isinstance(part, Size):
-            yield SizeView(part, callout)
+            yield SizeView(part, callout, stock=_names_drill(part, following))
         inner = (
             (getattr(part, "size", None), Role.STEP),
             (getattr(part, "angle", None), Role.STEP_ANGLE),
@@ -205,3 +223,9 @@ def _size_views(callout: CalloutView) -> Iterator[SizeView]:
         extent = getattr(part, "extent", None)
         if isinstance(extent, Depth) and extent.size is not None:
             yield SizeView(extent.size, callout, Role.DEPTH)
+
+
+def _names_drill(size: Size, following: Part | None) -> bool:
+    """Whether a fraction right before DRILL names the drill: `27/64 DRILL`."""
+    drilled = isinstance(following, HoleStep) and following.kind is StepKind.DRILL and following.size is None
+    return drilled and size.nominal is not None and "/" in size.nominal.text

@@ -2,35 +2,59 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from decimal import Decimal
+from functools import cached_property
 
-from calloutlint.facts.size import bounds
+from calloutlint.facts.size import bounds, written_values
 from calloutlint.facts.view import Length, View, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing
 from calloutlint.model.fastener import Fastener, Head
 from calloutlint.model.size import Size
+from calloutlint.model.thread import Thread
+from calloutlint.model.values import Value
 from calloutlint.trade import iso286
 from calloutlint.trade.clearance import ClearanceSizes, clearance_sizes
 from calloutlint.trade.heads import HeadSize, room_for, seat_of
+from calloutlint.trade.inches import nominal_size
+from calloutlint.trade.pins import PinLimits, dowel_limits
 from calloutlint.trade.threads import series_has
 from calloutlint.units import Unit, convert
 
 COUNTERSUNK = {Head.SOCKET_COUNTERSUNK, Head.FLAT}
 
 
-def pin_limits(pin: Size) -> tuple[Decimal, Decimal] | None:
-    """Smallest and largest diameter of a pin, in the pin's own unit; None where it has no tolerance."""
+def limits_of_pin(pin: Size) -> tuple[Decimal, Decimal] | None:
+    """Smallest and largest diameter of a pin or of the hole for one, in its own unit; None without tolerance.
+
+    General tolerances are not looked at. Source of fit codes: ISO 286-1.
+    """
+    unit = unit_of(pin)
     if pin.tolerance is not None:
-        return bounds(pin, pin.nominal.unit if pin.nominal else None)
-    if pin.fit is None or pin.nominal is None or pin.nominal.unit not in {Unit.MM, Unit.INCH}:
+        return bounds(pin, unit)
+    if pin.fit is None or pin.nominal is None or unit not in {Unit.MM, Unit.INCH}:
         return None
-    nominal = convert(pin.nominal.amount, pin.nominal.unit, Unit.MM)
+    nominal = convert(pin.nominal.amount, unit, Unit.MM)
     found = iso286.limits(nominal, pin.fit)
     if found is None:
         return None
-    ends = (nominal + found.lower, nominal + found.upper)
-    return convert(ends[0], Unit.MM, pin.nominal.unit), convert(ends[1], Unit.MM, pin.nominal.unit)
+    lower, upper = nominal + found.lower, nominal + found.upper
+    return convert(lower, Unit.MM, unit), convert(upper, Unit.MM, unit)
+
+
+def unit_of(size: Size) -> Unit | None:
+    """The unit that a size is written in; None where its drawing states none."""
+    return next((value.unit for value in written_values(size)), None)
+
+
+def basic_major(thread: Thread) -> Value | None:
+    """Basic major diameter: of an inch size rounded to three places (`.312`), the exact one (`.3125`)."""
+    diameter = thread.diameter
+    if diameter is None or diameter.unit is not Unit.INCH:
+        return diameter
+    named = nominal_size(diameter.amount)
+    return replace(diameter, amount=named.diameter) if named else diameter
 
 
 class FastenerView(View):
@@ -65,22 +89,63 @@ class FastenerView(View):
         return self._clearance is not None and series_has(self.part.thread) is not False
 
     @fact
+    def pin(self) -> bool:
+        """Whether it is a pin or a plain bolt, without a thread where it passes."""
+        return self.part.thread is None and self.part.pin is not None
+
+    @cached_property
+    def largest(self) -> Value | None:
+        """Its largest size with the unit that it is known in."""
+        if self.part.thread is not None:
+            return basic_major(self.part.thread)
+        pin = self.part.pin
+        if pin is None:
+            return None
+        unit, limits = unit_of(pin) or self.unit, limits_of_pin(pin)
+        if limits is not None:
+            return Value(str(limits[1]), limits[1], unit)
+        if self._dowel is not None:
+            return Value(str(self._dowel.largest), self._dowel.largest, unit)
+        return Value(pin.nominal.text, pin.nominal.amount, unit) if pin.nominal else None
+
+    @cached_property
+    def _dowel(self) -> PinLimits | None:
+        """Limits of a dowel pin that states none, by its standard."""
+        pin = self.part.pin
+        if pin is None or pin.nominal is None or limits_of_pin(pin) is not None:
+            return None
+        unit = pin.nominal.unit or self.unit
+        if "DOWEL" not in self.part.text.upper() or unit not in {Unit.MM, Unit.INCH}:
+            return None
+        return dowel_limits(pin.nominal.amount, unit)
+
+    @fact
     def diameter(self) -> Length | None:
         """Its largest size: basic major diameter of a thread, largest diameter of a pin."""
-        thread, pin = self.part.thread, self.part.pin
-        if thread is not None and thread.diameter is not None:
-            return self._here(thread.diameter.amount, thread.diameter.unit)
-        if pin is None or pin.nominal is None:
-            return None
-        limits = pin_limits(pin)
-        return self._here(limits[1] if limits else pin.nominal.amount, pin.nominal.unit)
+        return self._here(self.largest.amount, self.largest.unit) if self.largest else None
 
-    @property
-    def _clearance(self) -> ClearanceSizes | None:
-        thread = self.part.thread
-        if thread is None or thread.diameter is None or thread.diameter.unit is None:
+    @fact
+    def smallest(self) -> Length | None:
+        """Smallest diameter of a pin; unknown for a screw, and for a pin without limits."""
+        pin = self.part.pin
+        if pin is None or self.part.thread is not None:
             return None
-        return clearance_sizes(thread.diameter.amount, thread.diameter.unit)
+        limits, unit = limits_of_pin(pin), unit_of(pin) or self.unit
+        if limits is None and self._dowel is not None:
+            return self._here(self._dowel.smallest, unit)
+        return self._here(limits[0], unit) if limits else None
+
+    @fact
+    def limits_from(self) -> str:
+        """The standard that the largest diameter of a pin without a tolerance is taken from; else empty."""
+        return self._dowel.source if self._dowel else ""
+
+    @cached_property
+    def _clearance(self) -> ClearanceSizes | None:
+        diameter = basic_major(self.part.thread) if self.part.thread else None
+        if diameter is None or diameter.unit is None:
+            return None
+        return clearance_sizes(diameter.amount, diameter.unit)
 
     @fact
     def close(self) -> Length | None:
@@ -93,11 +158,23 @@ class FastenerView(View):
         return self._here(self._clearance.loose, self._clearance.unit) if self._clearance else None
 
     @fact
+    def clearance_source(self) -> str:
+        """The published standard of its clearance holes; empty where no table has them."""
+        return self._clearance.source if self._clearance else ""
+
+    def admits(self, nominal: Decimal) -> bool | None:
+        """Whether a hole nominal, in this view's unit, is close to loose for it; None where no table has it."""
+        if self._clearance is None or self.unit is None:
+            return None
+        close, loose = self._clearance.span
+        return close <= convert(nominal, self.unit, self._clearance.unit) <= loose
+
+    @fact
     def head(self) -> Head | None:
         """Form of its head; unknown where it is not said."""
         return self.part.head
 
-    @property
+    @cached_property
     def _seat(self) -> HeadSize | None:
         return seat_of(self.part)
 
@@ -111,10 +188,21 @@ class FastenerView(View):
         """The published standard of its head or washer; empty where no table has it."""
         return self._seat.source if self._seat else ""
 
+    @property
+    def _bears_flat(self) -> bool:
+        return self.part.washer or self.part.head not in COUNTERSUNK
+
     @fact
     def seat_smallest(self) -> Length | None:
-        """Smallest bearing diameter of its head or washer by the standard; unknown for countersunk heads."""
-        if self._seat is None or self.part.head in COUNTERSUNK:
+        """Smallest diameter of its head or washer by the standard; unknown for countersunk heads."""
+        if self._seat is None or not self._bears_flat:
+            return None
+        return self._here(self._seat.smallest, self._seat.unit)
+
+    @fact
+    def bearing_smallest(self) -> Length | None:
+        """Smallest diameter of its bearing face by the standard; unknown for countersunk heads."""
+        if self._seat is None or not self._bears_flat:
             return None
         return self._here(self._seat.bearing, self._seat.unit)
 

@@ -5,11 +5,13 @@ from __future__ import annotations
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.fastener import FastenerView
+from calloutlint.facts.fastener import FastenerView, basic_major
+from calloutlint.facts.located import is_located, widest_position
 from calloutlint.facts.onward import PartView, amount_in
 from calloutlint.facts.size import bounds
 from calloutlint.facts.view import Length, fact
 from calloutlint.model.callout import Callout
+from calloutlint.model.fastener import Hold
 from calloutlint.model.frame import Modifier
 from calloutlint.model.size import Depth, Size
 from calloutlint.model.thread import Thread
@@ -20,29 +22,6 @@ if TYPE_CHECKING:
     from calloutlint.facts.callout import CalloutView
     from calloutlint.facts.frame import FrameView
     from calloutlint.facts.joint import JointView
-
-LOCATING = {"position", "line profile", "surface profile"}
-
-
-def widest_position(callout: CalloutView) -> FrameView | None:
-    """The position line with the largest ⌀ tolerance; None where no diametral position is stated."""
-    lines = (
-        frame for frame in callout.frames if frame.characteristic == "position" and not frame.part.doubtful
-    )
-    diametral = [
-        line for line in lines if line.tolerance.shape == "diameter" and line.tolerance.value is not None
-    ]
-    return max(diametral, key=lambda line: line.tolerance.value or Decimal(0), default=None)
-
-
-def is_located(callout: CalloutView) -> bool:
-    """Whether the callout states a position or profile tolerance."""
-    return any(frame.characteristic in LOCATING for frame in callout.frames)
-
-
-def position_lines(callout: CalloutView) -> int:
-    """How many position lines the callout has."""
-    return sum(frame.characteristic == "position" for frame in callout.frames)
 
 
 class FixingView(PartView):
@@ -61,6 +40,11 @@ class FixingView(PartView):
         return self._joint
 
     @fact
+    def hold(self) -> Hold | None:
+        """Floating or fixed; unknown where it is not said."""
+        return self._joint.hold
+
+    @fact
     def fastener(self) -> FastenerView:
         """The fastener that it fixes, in the unit of this hole's drawing."""
         return FastenerView(self._joint.part.joint.fastener, self.unit)
@@ -71,8 +55,8 @@ class FixingView(PartView):
         return widest_position(self._callout)
 
     @fact
-    def located(self) -> bool:
-        """Whether it has a position or profile tolerance."""
+    def located(self) -> bool | None:
+        """Whether something locates it; unknown where a general tolerance may."""
         return is_located(self._callout)
 
     @fact
@@ -80,9 +64,8 @@ class FixingView(PartView):
         """Whether its position has a projected zone; unknown without a position."""
         if self.position is None:
             return None
-        return any(
-            frame.part.zone and frame.part.zone.modifier(Modifier.PROJECTED) for frame in self._callout.frames
-        )
+        zones = (frame.part.zone for frame in self._callout.frames)
+        return any(zone is not None and zone.modifier(Modifier.PROJECTED) is not None for zone in zones)
 
     @fact
     def projected_height(self) -> Length | None:
@@ -91,9 +74,21 @@ class FixingView(PartView):
         return max(heights, default=None)
 
     @fact
+    def projected_line(self) -> FrameView | None:
+        """The frame line with its projected zone, the highest; unknown where none is written."""
+        lines = [f for f in self._callout.frames if f.tolerance.projected is not None]
+        return max(lines, key=lambda line: line.tolerance.projected or Decimal(0), default=None)
+
+    @fact
     def needed_height(self) -> Length | None:
-        """What the projected zone has to reach: the joint's projection, else the thickness of what is fastened."""
-        return amount_in(self._joint.reach, self.unit) if self._joint.reach else None
+        """What the projected zone has to reach: the projection, else the thickness of what is fastened."""
+        return amount_in(self._joint.reach, self.unit)
+
+    @fact
+    def tilt_spoils(self) -> bool:
+        """Whether the joint would fit with a projected zone here, and does not without one."""
+        passages = [passage for passage in self._joint.passages if passage.fixing is self]
+        return any(passage.tilt_spoils for passage in passages)
 
     @fact
     def full_thread(self) -> Length | None:
@@ -101,9 +96,9 @@ class FixingView(PartView):
         return self.full_thread_in(self.unit)
 
     def full_thread_in(self, unit: Unit | None) -> Decimal | None:
-        """That depth in a unit."""
+        """That depth in a unit. A depth without a tolerance is the least that is asked for."""
         extent = self._thread.extent if self._thread else self._bore_extent
-        if not isinstance(extent, Depth) or extent.size is None:
+        if not isinstance(extent, Depth) or extent.size is None or extent.size.doubtful:
             return None
         limits = bounds(extent.size, unit)
         return limits[0] if limits else amount_in(extent.size.nominal, unit)
@@ -124,6 +119,11 @@ class FixingView(PartView):
         return self._thread is not None
 
     @fact
+    def one_diameter(self) -> Length | None:
+        """Basic major diameter of its thread: the least usual engagement; unknown where there is none."""
+        return amount_in(basic_major(self._thread), self.unit) if self._thread else None
+
+    @fact
     def thread_as_called(self) -> str:
         """Its thread as written, without class; empty where there is none."""
         return _called(self._thread) if self._thread else ""
@@ -140,8 +140,18 @@ class FixingView(PartView):
         screw = self._joint.part.joint.fastener.thread
         return None if screw is None or self._thread is None else screws_into(screw, self._thread)
 
+    @fact
+    def pitch_open(self) -> bool:
+        """Whether screw and hole have one diameter, and an inch size without a pitch leaves the rest open."""
+        return (
+            self._joint.part.joint.fastener.thread is not None and self.tapped and self.thread_matches is None
+        )
+
 
 def _called(thread: Thread) -> str:
+    hand = " LH" if thread.left_hand else ""
     if thread.tpi is not None:
-        return f"{thread.size}-{thread.tpi.text} {thread.series}".rstrip()
-    return f"{thread.size}x{thread.pitch.text}" if thread.pitch else thread.size
+        return f"{thread.size}-{thread.tpi.text} {thread.series}".rstrip() + hand
+    if thread.pitch is not None:
+        return f"{thread.size}x{thread.pitch.text}{hand}"
+    return f"{thread.size} {thread.series if thread.series != 'M' else ''}".rstrip() + hand

@@ -7,14 +7,18 @@ from decimal import Decimal
 from calloutlint.facts.feature import leading_size
 from calloutlint.facts.onward import PartView, amount_in
 from calloutlint.facts.view import Length, fact
-from calloutlint.model.callout import Callout
+from calloutlint.model.callout import Callout, Meaning
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import Depth, Size, SizeForm, SizeStatus, Through
 from calloutlint.trade.clearance import assumed_range, is_published
+from calloutlint.trade.drills import drilled_tolerance, is_stock, next_larger_stock
 from calloutlint.units import Unit, convert
 
 NOT_CLEARANCE = {StepKind.REAM, StepKind.TAP}
+FINISHED = {StepKind.REAM, StepKind.TAP, StepKind.BORE}
+INCH_PLACES = 3
+SMALLEST_STEP = Decimal("0.00001")
 
 
 class HoleView(PartView):
@@ -89,9 +93,14 @@ class HoleView(PartView):
 
     @property
     def _presumed(self) -> list[Fastener]:
-        if not self.drawing_model.fasteners or not self._open_to_assumption or self.nominal is None:
+        nominal = self._middle if self.nominal is None else self.nominal
+        if not self.drawing_model.fasteners or not self._open_to_assumption or nominal is None:
             return []
-        return [f for f in self.drawing_model.fasteners if _admits(f, self.nominal, self.unit)]
+        return [f for f in self.drawing_model.fasteners if _admits(f, nominal, self.unit)]
+
+    @property
+    def _middle(self) -> Decimal | None:
+        return None if self.mmc is None or self.lmc is None else (self.mmc + self.lmc) / 2
 
     @property
     def thinnest_presumed(self) -> Fastener:
@@ -104,6 +113,44 @@ class HoleView(PartView):
         if not self._open_to_assumption or self.drawing_model.fasteners or self.nominal is None:
             return False
         return self.unit in {Unit.INCH, Unit.MM} and is_published(self.nominal, self.unit)
+
+    @fact
+    def drilled(self) -> bool | None:
+        """Whether a twist drill alone makes it: a plain diameter, no finer than drilled holes usually are."""
+        size = self._size
+        if size is None or size.status is not SizeStatus.TOLERANCED or size.extent is None or self.threaded:
+            return False
+        finished = any(step.kind in FINISHED for step in self.part.steps) or Meaning.BORE in self.part.meanings
+        if finished or size.fit is not None or self.part.datum_features or self.nominal is None:
+            return False
+        usual = drilled_tolerance(self.nominal, self.unit) if self.unit in {Unit.INCH, Unit.MM} else None
+        return None if usual is None or self.bonus is None else self.bonus >= usual.plus + usual.minus
+
+    @fact
+    def published_size(self) -> bool | None:
+        """Whether its nominal is a stock drill or a published clearance size; unknown without a nominal."""
+        if self.nominal is None or self.unit not in {Unit.INCH, Unit.MM}:
+            return None
+        return is_stock(self.nominal, self.unit) or is_published(self.nominal, self.unit)
+
+    @fact
+    def next_drill(self) -> Length | None:
+        """The next larger stock drill, as this drawing rounds it; unknown beyond stock."""
+        return None if self.nominal is None else self.next_stock(self.nominal)
+
+    def next_stock(self, least: Decimal) -> Decimal | None:
+        """The smallest stock drill that, rounded to the places of the hole's nominal, is not below `least`."""
+        nominal = self._size.nominal if self._size else None
+        if nominal is None or self.unit not in {Unit.INCH, Unit.MM}:
+            return None
+        place = Decimal(1).scaleb(-max(nominal.places, INCH_PLACES)) if self.unit is Unit.INCH else None
+        drill = next_larger_stock(least, self.unit)
+        while drill is not None:
+            rounded = drill.diameter if place is None else drill.diameter.quantize(place)
+            if rounded >= least:
+                return rounded
+            drill = next_larger_stock(drill.diameter + SMALLEST_STEP, self.unit)
+        return None
 
     @property
     def _open_to_assumption(self) -> bool:

@@ -2,13 +2,15 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterator
+from functools import cached_property
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.assembly import Member, StatedJoint
 from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.feature import leading_size
-from calloutlint.facts.fixing import FixingView, is_located
+from calloutlint.facts.feature import SURFACE_WORDS, leading_size, side_by_words
+from calloutlint.facts.fixing import FixingView
+from calloutlint.facts.located import is_located, positions
 from calloutlint.facts.onward import PartView
 from calloutlint.facts.passage import PassageView
 from calloutlint.facts.view import View, fact
@@ -22,6 +24,8 @@ if TYPE_CHECKING:
     from calloutlint.facts.callout import CalloutView
     from calloutlint.facts.package import PackageView
 
+OUTER_PARTS = 2
+
 
 class JointView(View):
     """A stated joint; it stands on its first clearance hole."""
@@ -32,8 +36,9 @@ class JointView(View):
     def __init__(self, part: StatedJoint, package: PackageView) -> None:
         self.part = part
         self._package = package
-        first = next((member for member in part.holes if member.callout is not None), None)
-        placed = first or next((member for member in part.holes if member.drawing is not None), None)
+        standing = part.holes or part.mates
+        first = next((member for member in standing if member.callout is not None), None)
+        placed = first or next((member for member in standing if member.drawing is not None), None)
         self.callout_model: Callout | None = first.callout if first else None
         self.drawing_model: Drawing | None = placed.drawing if placed else part.home
         self.unit = self.drawing_model.unit if self.drawing_model else None
@@ -46,7 +51,7 @@ class JointView(View):
     @fact
     def fastener(self) -> FastenerView:
         """Its fastener, in the unit of the first clearance hole's drawing."""
-        return FastenerView(self.part.joint.fastener, self.unit)
+        return FastenerView(self.part.joint.fastener, self.unit, self.drawing_model, self.callout_model)
 
     @fact
     def hold(self) -> Hold | None:
@@ -55,85 +60,105 @@ class JointView(View):
 
     @property
     def reach(self) -> Value | None:
-        """P: the projection, else the thickness, with the unit of the first hole's drawing where it has none."""
-        value = self.part.joint.projection or self.part.joint.thickness
-        if value is None or value.unit is not None:
-            return value
-        return Value(value.text, value.amount, self.unit)
+        """P: the projection, else the thickness of what is fastened."""
+        return self.part.joint.projection or self.part.joint.thickness
 
-    @property
+    @cached_property
     def passages(self) -> tuple[PassageView, ...]:
-        """Its clearance holes: those named first, and those it floats through."""
+        """Its clearance holes: those named first, and those it floats through; tapped ones left out."""
         mates = self.part.mates if self.hold is Hold.FLOATING else ()
-        views = self._views((*self.part.holes, *mates))
-        return tuple(PassageView(view, self.part.joint.fastener, self) for view in views)
+        clear = (
+            member for member in (*self.part.holes, *mates) if member.callout and not member.callout.threads
+        )
+        fastener = self.part.joint.fastener
+        return tuple(PassageView(self._view(member), fastener, self) for member in clear if _is_hole(member))
 
-    @property
+    @cached_property
     def fixings(self) -> tuple[FixingView, ...]:
         """The holes it is fixed in."""
-        mates = self.part.mates if self.hold is Hold.FIXED else ()
-        return tuple(FixingView(view, self) for view in self._views(mates))
+        mates = self.part.mates if self.hold is not Hold.FLOATING else ()
+        return tuple(FixingView(self._view(member), self) for member in mates if _fixes(member))
 
-    @property
+    @cached_property
     def members(self) -> tuple[MemberView, ...]:
         """Every hole of it that is at hand."""
-        views = self._views((*self.part.holes, *self.part.mates))
-        return tuple(MemberView(view, self) for view in views)
+        return tuple(MemberView(self._view(member), self) for member in self._at_hand)
 
-    def _views(self, members: Iterable[Member]) -> Iterator[CalloutView]:
-        return (self._package.view_of(member.callout) for member in members if member.callout is not None)
+    @property
+    def _at_hand(self) -> Iterator[Member]:
+        yield from (member for member in self.part.holes if _is_hole(member))
+        suits = _is_hole if self.hold is Hold.FLOATING else _fixes
+        yield from (member for member in self.part.mates if suits(member))
+
+    def _view(self, member: Member) -> CalloutView:
+        assert member.callout is not None
+        return self._package.view_of(member.callout)
+
+    def is_outermost(self, callout: Callout) -> bool:
+        """Whether a clearance hole is in the part under the head: the first named, or one of only two."""
+        clearance = (*self.part.holes, *(self.part.mates if self.hold is Hold.FLOATING else ()))
+        parts = list(dict.fromkeys(_part_name(member) for member in clearance))
+        outer = parts[:OUTER_PARTS] if self.hold is Hold.FLOATING and len(parts) == OUTER_PARTS else parts[:1]
+        return any(_part_name(member) in outer for member in clearance if member.callout is callout)
 
     @fact
     def missing(self) -> tuple[str, ...]:
         """Balloons it names that their drawing does not have, as the joint writes them."""
-        lost = (m for m in self._all if m.drawing is not None and m.callout is None)
+        lost = (m for m in self.part.members if m.drawing is not None and m.callout is None)
         return tuple(_written(member.ref) for member in lost)
 
     @fact
     def missing_drawings(self) -> tuple[str, ...]:
         """Drawings of clearance holes that are not in the package; the part that fixes may be bought."""
-        clearance = self.part.holes if self.hold is Hold.FIXED else self._all
+        clearance = self.part.members if self.hold is Hold.FLOATING else self.part.holes
         lost = {m.ref.drawing for m in clearance if m.drawing is None and m.ref.drawing is not None}
         return tuple(sorted(lost)) if self._package.assembled else ()
 
     @fact
     def no_holes(self) -> tuple[str, ...]:
         """Balloons it names whose callout is no hole, as the joint writes them."""
-        found = (m for m in self._all if m.callout is not None and not _may_be_hole(m.callout))
-        return tuple(_written(member.ref) for member in found)
-
-    @property
-    def _all(self) -> tuple[Member, ...]:
-        return (*self.part.holes, *self.part.mates)
+        held = self.hold is not Hold.FLOATING
+        lost = [member for member in self.part.holes if member.callout and not _is_hole(member)]
+        suits = _fixes if held else _is_hole
+        lost += [member for member in self.part.mates if member.callout and not suits(member)]
+        return tuple(_written(member.ref) for member in lost)
 
     @fact
     def fixing_at_hand(self) -> bool:
         """Whether a hole that fixes the fastener is named and at hand."""
         return bool(self.fixings)
 
+    @cached_property
+    def _sums(self) -> dict[str, int]:
+        """How many holes each member has: the holes of a drawing added up, the mates by themselves."""
+        sums: dict[tuple[str, str], int | None] = {}
+        known = {id(member) for member in self._at_hand}
+        for role, members in (("holes", self.part.holes), ("mates", self.part.mates)):
+            for member in members:
+                key = (_part_name(member), role)
+                before, more = sums.get(key, 0), _count(member) if id(member) in known else None
+                sums[key] = None if before is None or more is None else before + more
+        names = [name for name, _ in sums]
+        return {
+            f"{name} ({role})" if names.count(name) > 1 else name: number
+            for (name, role), number in sums.items()
+            if number is not None
+        }
+
     @fact
     def counts(self) -> tuple[int, ...]:
-        """How many holes each drawing has, balloons of one drawing added up; empty where one count is not stated."""
-        sums: dict[str, int] = {}
-        for member in self._all:
-            if member.callout is None or member.drawing is None:
-                return ()
-            count = member.callout.count
-            if count is not None and count.number is None:
-                return ()
-            sums[member.drawing.name] = sums.get(member.drawing.name, 0) + (count.number if count else 1)  # type: ignore[operator]
-        return tuple(sums.values())
+        """How many holes each member has, as far as counts are stated; balloons of one drawing add up."""
+        return tuple(self._sums.values())
 
     @fact
     def counts_by_drawing(self) -> tuple[str, ...]:
         """The same in words: `SG-1 has 4`."""
-        names = dict.fromkeys(member.drawing.name for member in self._all if member.drawing is not None)
-        return tuple(f"{name} has {count}" for name, count in zip(names, self.counts, strict=False))
+        return tuple(f"{name} has {number}" for name, number in self._sums.items())
 
     @fact
-    def counts_agree(self) -> bool | None:
-        """Whether every drawing has as many holes; unknown where one count is not stated."""
-        return len(set(self.counts)) == 1 if self.counts else None
+    def counts_agree(self) -> bool:
+        """Whether every member whose count is stated has as many holes."""
+        return len(set(self.counts)) <= 1
 
 
 class MemberView(PartView):
@@ -152,14 +177,14 @@ class MemberView(PartView):
         return self._joint
 
     @fact
-    def located(self) -> bool:
-        """Whether it has a position or profile tolerance."""
+    def located(self) -> bool | None:
+        """Whether something locates it; unknown where a general tolerance may."""
         return is_located(self._callout)
 
     @fact
     def frame_free_mates(self) -> tuple[str, ...]:
-        """Other parts' holes of the joint whose position has datums, where this one's has none; as balloons."""
-        if self._datums is None or self._datums:
+        """Other drawings' holes of the joint whose position has datums, where this has none; as balloons."""
+        if self._datums != 0 or self.part.datum_features:
             return ()
         others = (m for m in self._joint.members if m.drawing_model is not self.drawing_model)
         return tuple(f"{m.drawing_model.name}:{m.part.balloon}" for m in others if m._datums)
@@ -167,16 +192,42 @@ class MemberView(PartView):
     @property
     def _datums(self) -> int | None:
         """Most datum references of its position lines; None where it has no position."""
-        positions = [f for f in self._callout.frames if f.characteristic == "position"]
-        return max((len(frame.part.datums) for frame in positions), default=None)
+        return max((len(line.part.datums) for line in positions(self._callout)), default=None)
 
 
-def _may_be_hole(callout: Callout) -> bool:
-    """Whether a callout can be a hole: a diameter, thread or hole step, or nothing that says otherwise."""
+def _is_hole(member: Member) -> bool:
+    """Whether what a member names can be a hole: nothing says that it is outside material or a plain face."""
+    return (
+        member.callout is not None and side_by_words(member.callout) is not False and _has_width(member.callout)
+    )
+
+
+def _fixes(member: Member) -> bool:
+    """Whether what a member names can fix a fastener: a hole, or a stud or pin that is there already."""
+    return member.callout is not None and _has_width(member.callout)
+
+
+def _has_width(callout: Callout) -> bool:
+    """Whether a callout has a diameter, a thread, a step, or a width that is located or goes into depth."""
     if callout.threads or callout.steps or callout.unread:
         return True
     size = leading_size(callout)
-    return size is not None and size.form in {SizeForm.DIAMETER, SizeForm.LINEAR}
+    if size is None or callout.meanings & SURFACE_WORDS:
+        return False
+    if size.form is SizeForm.LINEAR:
+        located = any(segment.characteristic == "position" for segment in callout.segments)
+        deep = any(each.extent is not None for each in callout.sizes)
+        return located or deep or side_by_words(callout) is not None
+    return size.form is SizeForm.DIAMETER
+
+
+def _count(member: Member) -> int | None:
+    count = member.callout.count if member.callout else None
+    return count.number if count else 1
+
+
+def _part_name(member: Member) -> str:
+    return member.drawing.name if member.drawing else member.ref.drawing or ""
 
 
 def _written(ref: HoleRef) -> str:

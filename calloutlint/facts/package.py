@@ -57,10 +57,13 @@ class PackageView(View):
                 yield PassageView(view, view.hole.thinnest_presumed, None)
 
     def listed_fasteners(self) -> Iterator[FastenerView]:
-        """Fasteners of the parts lists."""
+        """Fasteners of joints, and those of the parts lists that no joint of their drawing uses."""
+        yield from (joint.fastener for joint in self.joints)
         for drawing in self.part.drawings:
+            used = {joint.fastener.part.text for joint in self.joints if joint.drawing_model is drawing}
             for fastener in drawing.fasteners:
-                yield FastenerView(fastener, drawing.unit, drawing)
+                if fastener.text not in used:
+                    yield FastenerView(fastener, drawing.unit, drawing)
 
     @cached_property
     def assembly(self) -> Assembly:

@@ -1,6 +1,7 @@
 """Facts about a clearance hole in a joint: whether the fastener goes through, in the worst case.
 
-The formulas are those of `facts.fastening`; their sources stand there.
+The formulas are those of `facts.fastening`; their sources stand there. What decides is computed in
+millimetres, into which inches convert without rounding, so that line to line stays exact across drawings.
 """
 
 from __future__ import annotations
@@ -11,14 +12,15 @@ from typing import TYPE_CHECKING
 from calloutlint.facts import fastening
 from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance, allowed, inner_boundary
 from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.fixing import FixingView, is_located, position_lines, widest_position
-from calloutlint.facts.onward import PartView, amount_in
+from calloutlint.facts.fixing import FixingView
+from calloutlint.facts.located import is_located, positions, tolerance_of, widest_position
+from calloutlint.facts.onward import amount_in
+from calloutlint.facts.seated import SeatedView
 from calloutlint.facts.view import Length, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.fastener import Fastener, Hold
 from calloutlint.model.frame import Modifier
-from calloutlint.model.hole import StepKind
-from calloutlint.trade.drills import next_larger_stock
+from calloutlint.units import Unit, convert
 
 if TYPE_CHECKING:
     from calloutlint.facts.callout import CalloutView
@@ -26,7 +28,7 @@ if TYPE_CHECKING:
     from calloutlint.facts.joint import JointView
 
 
-class PassageView(PartView):
+class PassageView(SeatedView):
     """A clearance hole that a fastener passes, by a stated joint or by assumption."""
 
     subject = "passage"
@@ -55,11 +57,16 @@ class PassageView(PartView):
     @fact
     def hold(self) -> Hold | None:
         """Floating or fixed; unknown where it is not said."""
-        return self._joint.part.joint.hold if self._joint else None
+        return self._joint.hold if self._joint else None
 
     @fact
-    def located(self) -> bool:
-        """Whether it has a position or profile tolerance."""
+    def under_head(self) -> bool:
+        """Whether the head, or the nut, bears on it: an outermost part, as far as the joint tells."""
+        return self._joint is None or self._joint.is_outermost(self.part)
+
+    @fact
+    def located(self) -> bool | None:
+        """Whether something locates it; unknown where a general tolerance may."""
         return is_located(self._callout)
 
     @fact
@@ -67,32 +74,15 @@ class PassageView(PartView):
         """The line with its largest ⌀ position tolerance; unknown where none is stated."""
         return widest_position(self._callout)
 
-    @fact
-    def several_lines(self) -> bool:
-        """Whether it has more than one position line, of which the largest counts."""
-        return position_lines(self._callout) > 1
-
-    @fact
-    def counts_datum_modifiers(self) -> bool:
-        """Whether its datum references carry Ⓜ or Ⓛ, whose datum shift is not counted."""
-        if self.position is None:
-            return False
-        uses = (use for datum in self.position.datums for use in datum.modifiers)
-        return any(use in {Modifier.MMC, Modifier.LMC} for use in uses)
-
     @property
-    def _size(self) -> FeatureOfSize | None:
-        hole = self._callout.hole
-        return None if hole.mmc is None or hole.lmc is None else FeatureOfSize(hole.mmc, hole.lmc)
+    def size(self) -> FeatureOfSize | None:
+        """The hole by its limits; None where they are not known, or in the wrong order."""
+        mmc, lmc = self._callout.hole.mmc, self._callout.hole.lmc
+        return None if mmc is None or lmc is None or mmc > lmc else FeatureOfSize(mmc, lmc)
 
     @property
     def _tolerance(self) -> GeometricTolerance | None:
-        if self.position is None or self.position.tolerance.value is None:
-            return None
-        kinds = self.position.tolerance.modifiers
-        modifier = next((kind for kind in kinds if kind in {Modifier.MMC, Modifier.LMC}), None)
-        maximum = amount_in(self.position.part.zone.maximum, self.unit) if self.position.part.zone else None
-        return GeometricTolerance(self.position.tolerance.value, modifier, maximum)
+        return tolerance_of(self.position, self.unit) if self.position else None
 
     @fact
     def tolerance(self) -> Length | None:
@@ -100,24 +90,50 @@ class PassageView(PartView):
         return self._tolerance.amount if self._tolerance else None
 
     @fact
+    def tolerance_at_mmc(self) -> Length | None:
+        """That tolerance at the hole's smallest size: as stated, but at Ⓛ with the whole bonus."""
+        return self._allowed(self.size.mmc) if self.size else None
+
+    @fact
     def tolerance_at_lmc(self) -> Length | None:
-        """That tolerance with its bonus at the hole's least material condition."""
-        if self._size is None or self._tolerance is None:
+        """That tolerance at the hole's largest size: at Ⓜ with the whole bonus."""
+        return self._allowed(self.size.lmc) if self.size else None
+
+    def _allowed(self, size: Decimal) -> Decimal | None:
+        if self.size is None or self._tolerance is None:
             return None
-        return allowed(self._size, self._tolerance, self._size.lmc)
+        return allowed(self.size, self._tolerance, size)
 
     @fact
     def inner_boundary(self) -> Length | None:
         """The room that is always free: the smallest of hole size less the position allowed at that size."""
-        if self._size is None or self._tolerance is None:
+        if self.size is None or self._tolerance is None:
             return None
-        return inner_boundary(self._size, self._tolerance)
+        return inner_boundary(self.size, self._tolerance)
+
+    @fact
+    def play(self) -> Length | None:
+        """Smallest hole less the fastener; negative: it cannot enter."""
+        return self._here(self._less_fastener(self.size.mmc if self.size else None))
 
     @fact
     def room(self) -> Length | None:
         """What the inner boundary leaves around the fastener; negative: they interfere."""
-        diameter = self.fastener.diameter
-        return None if self.inner_boundary is None or diameter is None else self.inner_boundary - diameter
+        return self._here(self._room)
+
+    @property
+    def _room(self) -> Decimal | None:
+        return self._less_fastener(self.inner_boundary)
+
+    def _less_fastener(self, length: Decimal | None) -> Decimal | None:
+        """A length of this drawing less the fastener's largest size, in mm."""
+        fastener = amount_in(self.fastener.largest, Unit.MM)
+        if length is None or fastener is None or self.unit not in {Unit.INCH, Unit.MM}:
+            return None
+        return convert(length, self.unit, Unit.MM) - fastener
+
+    def _here(self, millimetres: Decimal | None) -> Decimal | None:
+        return None if millimetres is None or self.unit is None else convert(millimetres, Unit.MM, self.unit)
 
     @fact
     def fixing(self) -> FixingView | None:
@@ -128,55 +144,75 @@ class PassageView(PartView):
         return max(fixings, key=lambda fixing: self._need(fixing) or Decimal(0), default=None)
 
     def _need(self, fixing: FixingView) -> Decimal | None:
-        tolerance = self._fixing_tolerance(fixing)
+        """What a fixing hole needs, in mm: its tolerance, with the tilt where that is known."""
+        tolerance = _stated(fixing)
+        reach, depth = self._reach, fixing.full_thread_in(Unit.MM)
         if tolerance is None:
             return None
-        reach, depth = self._reach_and_depth(fixing)
-        if fixing.is_projected or reach is None or depth is None:
+        if fixing.is_projected or reach is None or depth is None or depth <= 0:
             return tolerance
         return fastening.fixing_demand(tolerance, reach, depth)
 
-    def _fixing_tolerance(self, fixing: FixingView) -> Decimal | None:
-        zone = fixing.position.part.zone if fixing.position else None
-        return amount_in(zone.value, self.unit) if zone else None
-
-    def _reach_and_depth(self, fixing: FixingView) -> tuple[Decimal | None, Decimal | None]:
-        reach = amount_in(self._joint.reach, self.unit) if self._joint and self._joint.reach else None
-        return reach, fixing.full_thread_in(self.unit)
+    @property
+    def _reach(self) -> Decimal | None:
+        reach = amount_in(self._joint.reach, Unit.MM) if self._joint else None
+        return reach if reach is None or reach >= 0 else None
 
     @fact
     def fixing_tolerance(self) -> Length | None:
         """Position tolerance of that fixing hole, in this drawing's unit."""
-        return self._fixing_tolerance(self.fixing) if self.fixing else None
+        return self._here(_stated(self.fixing)) if self.fixing else None
 
     @fact
     def fixing_need(self) -> Length | None:
         """What that fixing hole needs: its tolerance, times 1 + 2P/D where it is not projected."""
-        return self._need(self.fixing) if self.fixing else None
+        return self._here(self._need(self.fixing)) if self.fixing else None
 
     @fact
     def reach(self) -> Length | None:
         """P: the projection, else the thickness of the clearance parts; unknown where neither is stated."""
-        return self._reach_and_depth(self.fixing)[0] if self.fixing else None
+        return self._here(self._reach)
 
     @fact
     def engagement(self) -> Length | None:
         """D: the smallest full thread or engagement depth of that fixing hole."""
-        return self._reach_and_depth(self.fixing)[1] if self.fixing else None
+        return self.fixing.full_thread_in(self.unit) if self.fixing else None
 
     @fact
     def tilts(self) -> bool:
         """Whether the fastener's tilt counts: the fixing hole is not projected, and P and D are known."""
-        return self.fixing_need is not None and self.fixing_need != self.fixing_tolerance
+        return self.fixing is not None and self._need(self.fixing) != _stated(self.fixing)
+
+    @fact
+    def tilt_spoils(self) -> bool:
+        """Whether it would fit if the fixing hole were projected, and does not because it is not."""
+        if self.fixing is None or self.room is None or self.spare is None or not self.tilts:
+            return False
+        return self.spare < 0 <= self.room - (self.fixing_tolerance or 0)
+
+    @fact
+    def tilt_unknown(self) -> bool:
+        """Whether the fixing hole is not projected, and P or D is not known, so that the tilt is left out."""
+        fixing = self.fixing
+        if fixing is None or fixing.is_projected:
+            return False
+        return self._reach is None or fixing.full_thread is None
 
     @fact
     def spare(self) -> Length | None:
-        """Clearance left over: the room less what the fixing hole needs, or all of it where the fastener floats."""
-        if self.room is None:
+        """Clearance left over: the room, less what the fixing hole needs where the fastener is fixed."""
+        if self._room is None:
             return None
         if self.hold is Hold.FLOATING:
             return self.room
-        return None if self.fixing_need is None else self.room - self.fixing_need
+        need = self._need(self.fixing) if self.fixing else None
+        return None if need is None else self._here(self._room - need)
+
+    @fact
+    def least_short(self) -> Length | None:
+        """What is lacking for certain, with as much of the joint as is known; unknown where nothing is."""
+        lacking = self.spare if self.spare is not None else self.room
+        return -lacking if lacking is not None and lacking < 0 else None
 
     @fact
     def stated_total(self) -> Length | None:
@@ -188,43 +224,71 @@ class PassageView(PartView):
     @fact
     def fitting_tolerance(self) -> Length | None:
         """The largest position tolerance of this hole that fits; unknown where none does."""
-        if self.tolerance is None or self.spare is None:
+        if self.tolerance is None or self.least_short is None:
             return None
-        largest = self.tolerance + self.spare
+        largest = self.tolerance - self.least_short
         return largest if largest >= 0 else None
 
     @fact
-    def fitting_hole(self) -> Length | None:
-        """The next stock drill size at which the hole would fit with its present tolerances; unknown beyond stock."""
-        nominal, short = self._callout.hole.nominal, self._short
-        if nominal is None or short is None or self.unit is None:
+    def fair_tolerance(self) -> Length | None:
+        """That tolerance where it is at least half of the present one; unknown where it is not."""
+        if self.fitting_tolerance is None or self.tolerance is None:
             return None
-        drill = next_larger_stock(nominal + short, self.unit)
-        return drill.diameter if drill else None
+        return self.fitting_tolerance if 2 * self.fitting_tolerance >= self.tolerance else None
+
+    @fact
+    def fitting_smallest(self) -> Length | None:
+        """The smallest hole that fits with the present tolerances: what the hole lacks, added to it."""
+        if self.size is None or self._lacks is None:
+            return None
+        return self.size.mmc + self._lacks
+
+    @fact
+    def fitting_hole(self) -> Length | None:
+        """The next stock drill, as this drawing rounds it, with which it fits; unknown beyond stock."""
+        if self._lacks is None or self._callout.hole.nominal is None:
+            return None
+        return self._callout.hole.next_stock(self._callout.hole.nominal + self._lacks)
 
     @property
-    def _short(self) -> Decimal | None:
-        lacking = self.spare if self.spare is not None else self.room
-        return None if lacking is None or lacking >= 0 else -lacking
+    def _lacks(self) -> Decimal | None:
+        if self.least_short is not None:
+            return self.least_short
+        return -self.play if self.play is not None and self.play < 0 else None
 
     @fact
-    def counterbore(self) -> Length | None:
-        """Smallest diameter of its counterbore; unknown where it has none."""
-        bores = [step for step in self._callout.steps if step.kind is StepKind.COUNTERBORE]
-        return bores[0].smallest if bores else None
+    def published(self) -> bool | None:
+        """Whether the hole's nominal lies from close to loose for the fastener; unknown where no table says."""
+        nominal = self._callout.hole.nominal
+        return None if nominal is None else self.fastener.admits(nominal)
 
     @fact
-    def head_shift(self) -> Length | None:
-        """How far the head may stand off the counterbore's centre, as a diameter: position at LMC or the play."""
-        diameter, lmc = self.fastener.diameter, self._callout.hole.lmc
-        if self.tolerance_at_lmc is None or diameter is None or lmc is None:
-            return None
-        return min(self.tolerance_at_lmc, lmc - diameter)
+    def remarks(self) -> str:
+        """What else a checker has to know of the arithmetic: one sentence each, a space before; or empty."""
+        lines = positions(self._callout)
+        said = [
+            (len(lines) > 1, "Of its position lines the largest ⌀ tolerance counts."),
+            (self._at(Modifier.LMC), "At Ⓛ the position is largest where the hole is smallest."),
+            (self._shifts, "The datum shift that material modifiers on the datums allow is not counted."),
+            (
+                bool(self.fastener.limits_from),
+                f"The pin states no limits; its largest diameter is that of {self.fastener.limits_from}.",
+            ),
+        ]
+        return "".join(f" {sentence}" for holds, sentence in said if holds)
 
-    @fact
-    def bearing_left(self) -> Length | None:
-        """What the smallest head still bears on one side when it is pushed to the other; negative: nothing."""
-        head, lmc, diameter = self.fastener.seat_smallest, self._callout.hole.lmc, self.fastener.diameter
-        if head is None or lmc is None or diameter is None:
-            return None
-        return fastening.bearing_left(head, lmc, diameter)
+    def _at(self, kind: Modifier) -> bool:
+        return self._tolerance is not None and self._tolerance.modifier is kind
+
+    @property
+    def _shifts(self) -> bool:
+        uses = {use for datum in self.position.datums for use in datum.modifiers} if self.position else set()
+        return bool(uses & {Modifier.MMC, Modifier.LMC})
+
+
+def _stated(fixing: FixingView) -> Decimal | None:
+    """Position tolerance of a fixing hole in mm; None where none is stated, or its drawing states no unit."""
+    zone = fixing.position.part.zone if fixing.position else None
+    if zone is None or zone.value is None or zone.value.unit not in {Unit.INCH, Unit.MM}:
+        return None
+    return amount_in(zone.value, Unit.MM)

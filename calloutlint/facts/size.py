@@ -16,6 +16,7 @@ from calloutlint.units import Unit
 
 if TYPE_CHECKING:
     from calloutlint.facts.callout import CalloutView
+    from calloutlint.facts.fitted import FitView, MatingView
 
 
 class Role(StrEnum):
@@ -148,6 +149,16 @@ class SizeView(PartView):
     @property
     def _fit_limits(self) -> tuple[Decimal, Decimal] | None:
         return self._callout.fit_limits(self.part) if self.part.fit else None
+
+    @fact
+    def fit(self) -> FitView | None:
+        """Its ISO 286 tolerance class; unknown where it has none."""
+        return self._callout.fit_of(self.part)
+
+    @fact
+    def mating(self) -> MatingView | None:
+        """The fit that it makes, where words call it one and what it goes with is known; else unknown."""
+        return self._callout.mating_of(self.part)
 
     @fact
     def upper(self) -> Length | None:

@@ -2,12 +2,29 @@
 
 from __future__ import annotations
 
+import re
+from collections.abc import Iterator
+from dataclasses import replace
+from decimal import Decimal
+
 from calloutlint.facts.feature import side_by_hole, side_by_words, side_of_thread
-from calloutlint.facts.onward import PartView
+from calloutlint.facts.onward import PartView, amount_in
+from calloutlint.facts.size import Role
 from calloutlint.facts.view import Length, Number, fact
-from calloutlint.model.size import Depth, Through
+from calloutlint.model.callout import Meaning, Words
+from calloutlint.model.hole import StepKind
+from calloutlint.model.size import Depth, SizeForm, Through
 from calloutlint.model.thread import Thread, ThreadSystem
-from calloutlint.trade.threads import series_has
+from calloutlint.model.values import Value
+from calloutlint.trade.drills import drill_diameter
+from calloutlint.trade.metric import pitches
+from calloutlint.trade.thread_form import ThreadLimits
+from calloutlint.trade.threads import limits_of, series_has
+from calloutlint.trade.unified_series import only_tpi
+from calloutlint.units import Unit
+
+STUD = re.compile(r"\b(?:STUDS?|SCREWS?|BOLTS?|ROD)\b", re.IGNORECASE)
+OTHER_CLASS = {"1A": "1B", "2A": "2B", "3A": "3B", "1B": "1A", "2B": "2A", "3B": "3A", "6g": "6H", "6H": "6g"}
 
 
 class ThreadView(PartView):
@@ -62,12 +79,77 @@ class ThreadView(PartView):
         return side_of_thread(self.part)
 
     @fact
+    def other_class(self) -> str | None:
+        """The like class of the other side, `2B` for `2A`, `6H` for `6g`; unknown for others."""
+        return OTHER_CLASS.get(self.class_name)
+
+    @fact
+    def series_pitch(self) -> str:
+        """Its size with the pitches that its series has for it, as `1/4-20 UNC`; empty where it has none."""
+        return _offered(self.part)
+
+    @property
+    def _limits(self) -> ThreadLimits | None:
+        limits = limits_of(self.part)
+        return limits if limits is not None and limits.internal else None
+
+    def _own(self, amount: Decimal | None) -> Decimal | None:
+        diameter = self.part.diameter
+        if amount is None or diameter is None:
+            return None
+        return amount_in(replace(diameter, amount=amount), self.unit)
+
+    @fact
+    def minor_smallest(self) -> Length | None:
+        """Smallest minor diameter of a tapped hole of its class; unknown without a class for tapped holes."""
+        return self._own(self._limits.minor_min) if self._limits else None
+
+    @fact
+    def minor_largest(self) -> Length | None:
+        """Largest minor diameter of a tapped hole of its class; unknown without a class for tapped holes."""
+        return self._own(self._limits.minor_max) if self._limits else None
+
+    @fact
+    def tap_drill(self) -> Length | None:
+        """The hole drilled for it: nominal of the diameter in its callout that is smaller than the thread.
+
+        Of several, one within the minor diameter limits. Unknown where none is stated.
+        """
+        drills = [drill for drill in self._drills if self.diameter is None or drill < self.diameter]
+        least, most = self.minor_smallest, self.minor_largest
+        if least is None or most is None:
+            return drills[0] if drills else None
+        return next((drill for drill in drills if least <= drill <= most), drills[0] if drills else None)
+
+    @property
+    def _drills(self) -> Iterator[Decimal]:
+        callout = self._callout
+        for view in callout.sizes:
+            if view.role is Role.FEATURE and view.form is SizeForm.DIAMETER and not view.part.doubtful:
+                middle = (view.smallest + view.largest) / 2 if view.smallest and view.largest else None
+                yield from (each for each in [view.nominal or middle] if each is not None)
+        for step in callout.part.steps:
+            if step.kind is not StepKind.DRILL or step.doubtful:
+                continue
+            named = drill_diameter(step.drill) if step.drill else None
+            amount = self._length(step.size.nominal) if step.size else None
+            inch = Value("", named, Unit.INCH) if named is not None else None
+            yield from (each for each in [amount_in(inch, self.unit) or amount] if each is not None)
+
+    @fact
+    def form_tapped(self) -> bool:
+        """Whether words say that a form tap makes it, which wants a larger hole."""
+        return Meaning.FORM_TAP in self._callout.part.meanings
+
+    @fact
     def tapped(self) -> bool | None:
         """Whether it is cut in a hole, by everything but its class: words, joint, drill, depth, through."""
         callout = self._callout
         said = side_by_words(callout.part)
         if said is not None:
             return said
+        if any(STUD.search(part.text) for part in callout.part.parts if isinstance(part, Words)):
+            return False
         if callout.in_any_joint or side_by_hole(callout.part):
             return True
         return True if isinstance(self.part.extent, Through | Depth) else None
@@ -77,3 +159,16 @@ class ThreadView(PartView):
         """Depth of full thread as stated; unknown where none is."""
         extent = self.part.extent
         return self._length(extent.size.nominal) if isinstance(extent, Depth) and extent.size else None
+
+
+def _offered(thread: Thread) -> str:
+    if thread.diameter is None:
+        return ""
+    if thread.system is ThreadSystem.UNIFIED:
+        tpi = only_tpi(thread.diameter.amount, thread.series)
+        return "" if tpi is None else f"{thread.size}-{tpi.normalize():f} {thread.series}"
+    listed = pitches().get(thread.diameter.amount) if thread.system is ThreadSystem.METRIC else None
+    if listed is None:
+        return ""
+    steps = (*([listed.coarse] if listed.coarse is not None else []), *listed.fine)
+    return ", ".join(f"{thread.size}x{step.normalize():f}" for step in steps)

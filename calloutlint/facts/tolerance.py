@@ -5,7 +5,8 @@ from __future__ import annotations
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.onward import PartView
-from calloutlint.facts.view import Length, fact
+from calloutlint.facts.process import percent, shares
+from calloutlint.facts.view import Length, Number, fact
 from calloutlint.model.frame import Modifier, ModifierUse, Zone, ZoneShape
 
 if TYPE_CHECKING:
@@ -76,3 +77,15 @@ class ToleranceView(PartView):
         """The tolerance with its whole bonus, at the hole's least material condition."""
         bonus = self._frame.hole.bonus
         return None if self.value is None or bonus is None else self.value + bonus
+
+    @fact
+    def accepted(self) -> Number | None:
+        """Percent of holes that pass regardless of size, by the spread that the sheet states; else unknown."""
+        found = shares(self, self._frame.hole)
+        return percent(found.without) if found else None
+
+    @fact
+    def accepted_at_mmc(self) -> Number | None:
+        """Percent of holes that pass with this tolerance at Ⓜ, by the same spread; else unknown."""
+        found = shares(self, self._frame.hole)
+        return percent(found.with_bonus) if found else None
