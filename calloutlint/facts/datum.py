@@ -98,7 +98,8 @@ class DatumView(PartView):
     @fact
     def redundant(self) -> bool:
         """Whether it takes no degree of freedom after those before it, however the datums stand."""
-        return any(ref is self.part for ref in redundant(self._frame.part, self._scheme))
+        later = self._place > 1
+        return later and any(ref is self.part for ref in redundant(self._frame.part, self._scheme))
 
     @fact
     def repeated_freedoms(self) -> tuple[str, ...]:

@@ -9,9 +9,9 @@ from calloutlint.facts.datums.chains import loop_use, loops
 from calloutlint.facts.datums.completeness import TargetFault, target_faults
 from calloutlint.facts.datums.conflicts import Conflict, boundary_conflicts, order_conflicts
 from calloutlint.facts.datums.control import Uncontrolled, uncontrolled
-from calloutlint.facts.datums.frames import Use
 from calloutlint.facts.datums.location import Unlocated, positions_of, unlocated
 from calloutlint.facts.datums.scheme import DatumScheme, scheme_of
+from calloutlint.facts.datums.uses import Use
 from calloutlint.model.callout import Callout, DatumTarget
 from calloutlint.model.drawing import Drawing
 from calloutlint.model.fastener import Joint
@@ -60,6 +60,8 @@ class DatumIndex:
 
     def unlocated(self, callout: Callout, segment: Segment) -> Unlocated | None:
         """Why a position line does not locate its feature; None where it does, or is no position."""
+        if len(segment.datums) > 1:
+            return None
         use = next((use for use in positions_of(callout) if use.segment is segment), None)
         return unlocated(use, self.scheme) if use else None
 

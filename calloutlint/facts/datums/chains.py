@@ -8,9 +8,9 @@ practice under both.
 
 from collections.abc import Iterator, Mapping
 
-from calloutlint.facts.datums.frames import Use, uses_of
 from calloutlint.facts.datums.kinds import letters_of
 from calloutlint.facts.datums.scheme import DatumScheme, Established
+from calloutlint.facts.datums.uses import Use
 from calloutlint.model.callout import Callout, DatumFeature
 from calloutlint.model.frame import DatumRef, Segment
 from calloutlint.model.hole import HoleStep
@@ -20,11 +20,12 @@ from calloutlint.model.thread import Thread
 
 def self_references(callout: Callout) -> tuple[tuple[Segment, DatumRef], ...]:
     """Frame lines that locate or orient a feature to the datum it establishes itself."""
-    if callout.datum_targets:
+    letters = dict.fromkeys(letters_of(callout))
+    if not letters or callout.datum_targets:
         return ()
     return tuple(
         (segment, ref)
-        for letter in dict.fromkeys(letters_of(callout))
+        for letter in letters
         for segment in _governing(callout, letter)
         for ref in segment.datums
         if _names(ref) == {letter}
@@ -49,7 +50,7 @@ def loop_use(ring: tuple[str, ...], scheme: DatumScheme) -> Use:
     """The frame line that closes a ring: of its callouts, the last one in the drawing."""
     uses = [
         use
-        for use in uses_of(scheme)
+        for use in scheme.uses
         for letter in letters_of(use.callout)
         if letter in ring and any(_names(ref) & (set(ring) - {letter}) for ref in use.segment.datums)
     ]

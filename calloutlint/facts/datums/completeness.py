@@ -6,7 +6,6 @@ is counted as one contact, a line as two.
 
 from dataclasses import dataclass
 
-from calloutlint.facts.datums.frames import uses_of
 from calloutlint.facts.datums.kinds import DatumKind
 from calloutlint.facts.datums.scheme import DatumScheme, Established
 from calloutlint.facts.datums.targets import missing_numbers
@@ -32,7 +31,7 @@ class TargetFault:
 
 def target_faults(scheme: DatumScheme) -> tuple[TargetFault, ...]:
     """Letters whose datum targets have a gap, or are too few for a primary plane."""
-    primary = {ref.name for ref in (use.segment.datums[0] for use in uses_of(scheme))}
+    primary = {use.order[0] for use in scheme.uses}
     faults = []
     for feature in scheme.features.values():
         if not feature.targets or any(callout.unread for callout, _ in feature.targets):

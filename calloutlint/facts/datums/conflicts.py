@@ -10,8 +10,9 @@ from collections import Counter
 from collections.abc import Callable, Hashable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 
-from calloutlint.facts.datums.frames import Use, may_be_tied, uses_of
+from calloutlint.facts.datums.frames import may_be_tied
 from calloutlint.facts.datums.scheme import DatumScheme
+from calloutlint.facts.datums.uses import Use
 from calloutlint.model.fastener import Joint
 from calloutlint.model.frame import Characteristic
 
@@ -34,7 +35,7 @@ def order_conflicts(scheme: DatumScheme, joints: Sequence[Joint] = ()) -> tuple[
     `joints` are those of the package, beside the drawing's own. A conflict inside one joint names
     it, and the callout is not reported again for the rest of the drawing.
     """
-    uses = list(uses_of(scheme))
+    uses = scheme.uses
     found: dict[int, Conflict] = {}
     own = [joint for sheet in scheme.sheets for joint in sheet.joints]
     for joint in (*own, *joints):
@@ -48,7 +49,7 @@ def order_conflicts(scheme: DatumScheme, joints: Sequence[Joint] = ()) -> tuple[
 
 def boundary_conflicts(scheme: DatumScheme) -> tuple[Conflict, ...]:
     """Positions with the same datums in the same order, but other material boundaries, that nothing parts."""
-    positions = (u for u in uses_of(scheme) if u.segment.characteristic is Characteristic.POSITION)
+    positions = (u for u in scheme.uses if u.segment.characteristic is Characteristic.POSITION)
     uses = filter(may_be_tied, positions)
     return tuple(Conflict(use, other) for use, other in _deviating(uses, _order, _boundaries))
 
@@ -89,23 +90,26 @@ def _deviating(
     for use in uses:
         groups.setdefault(group(use), []).append(use)
     for members in groups.values():
-        yield from _against_prevailing(members, variant)
+        if len(set(map(variant, members))) > 1:
+            yield from _against_prevailing(members, variant)
 
 
 def _against_prevailing(members: list[Use], variant: Callable[[Use], Hashable]) -> Iterator[tuple[Use, Use]]:
-    by_callout: dict[int, list[Use]] = {}
+    by_callout: dict[int, dict[Hashable, Use]] = {}
     for use in members:
-        by_callout.setdefault(id(use.callout), []).append(use)
-    votes = Counter(key for uses in by_callout.values() for key in dict.fromkeys(map(variant, uses)))
+        by_callout.setdefault(id(use.callout), {}).setdefault(variant(use), use)
+    votes = Counter(key for variants in by_callout.values() for key in variants)
     prevailing = max(votes, key=lambda key: votes[key])
-    model = next(use for use in members if variant(use) == prevailing)
-    early: list[Use] = []
-    for uses in by_callout.values():
-        if any(variant(use) == prevailing for use in uses):
-            continue
-        if members.index(uses[0]) < members.index(model):
-            early.append(uses[0])
-        else:
-            yield uses[0], model
-    if early:
-        yield model, early[-1]
+    model: Use | None = None
+    early: Use | None = None
+    for variants in by_callout.values():
+        own = variants.get(prevailing)
+        first = next(iter(variants.values()))
+        if model is None and own is not None:
+            model = own
+            if early is not None:
+                yield model, early
+        elif own is None and model is not None:
+            yield first, model
+        elif own is None:
+            early = first

@@ -6,7 +6,6 @@ higher precedence).
 
 from dataclasses import dataclass
 
-from calloutlint.facts.datums.frames import uses_of
 from calloutlint.facts.datums.scheme import DatumScheme, Established
 from calloutlint.model.frame import Characteristic, DatumRef, Segment
 from calloutlint.model.size import SizeStatus
@@ -57,8 +56,8 @@ class Uncontrolled:
 def uncontrolled(scheme: DatumScheme) -> tuple[Uncontrolled, ...]:
     """Primary features without size or form control, and secondary ones not related to their primary."""
     found: dict[tuple[str, str | None], Uncontrolled] = {}
-    for use in uses_of(scheme):
-        refs = use.segment.datums
+    leading = {use.order[:2]: use.segment.datums for use in scheme.uses}
+    for refs in leading.values():
         for feature in _features(refs[0], scheme):
             if lacks_form(feature):
                 found.setdefault((feature.letter, None), Uncontrolled(feature, None))

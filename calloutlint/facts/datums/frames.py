@@ -4,37 +4,14 @@ Source: ASME Y14.5 (datum reference frames, simultaneous requirements), ISO 5459
 ISO 5458 (simultaneous requirement only where SIM is written).
 """
 
-from collections.abc import Iterable, Iterator
 from dataclasses import dataclass
 
 from calloutlint.facts.datums.scheme import DatumScheme
-from calloutlint.model.callout import Callout, Meaning
-from calloutlint.model.frame import Characteristic, DatumRef, Frame, Modifier, ModifierUse, Segment
+from calloutlint.facts.datums.uses import Use
+from calloutlint.model.callout import Meaning
+from calloutlint.model.frame import Characteristic, DatumRef, Modifier
 
 _LOCATING = {Characteristic.POSITION, Characteristic.SURFACE_PROFILE, Characteristic.LINE_PROFILE}
-_BOUNDARY = {Modifier.MMC: "M", Modifier.LMC: "L"}
-
-Boundaries = tuple[tuple[str, str], ...]
-
-
-@dataclass(frozen=True, slots=True)
-class Use:
-    """One line of a frame where it stands. `lower` is a line of a composite frame below the first."""
-
-    callout: Callout
-    frame: Frame
-    segment: Segment
-    lower: bool
-
-    @property
-    def order(self) -> tuple[str, ...]:
-        """Names of the datums in order of precedence; a common datum is the same whichever letter is first."""
-        return tuple(_name(ref) for ref in self.segment.datums)
-
-    @property
-    def boundaries(self) -> tuple[Boundaries, ...]:
-        """The material boundary modifiers of each reference, letter by letter."""
-        return tuple(_boundaries(ref) for ref in self.segment.datums)
 
 
 @dataclass(frozen=True, slots=True)
@@ -51,19 +28,10 @@ class FrameInForce:
     simultaneous: tuple[Use, ...]
 
 
-def uses_of(scheme: DatumScheme) -> Iterator[Use]:
-    """Every frame line with datum references, in the order of the drawing; doubtful ones left out."""
-    for callout in scheme.callouts:
-        for frame in callout.frames:
-            for number, segment in enumerate(frame.segments):
-                if segment.datums and not segment.doubtful:
-                    yield Use(callout, frame, segment, lower=number > 0)
-
-
 def frames_in_force(scheme: DatumScheme) -> tuple[FrameInForce, ...]:
     """The datum reference frames of a drawing in the order they first appear."""
     groups: dict[object, list[Use]] = {}
-    for use in uses_of(scheme):
+    for use in scheme.uses:
         names = tuple(ref.freedoms for ref in use.segment.datums)
         groups.setdefault((use.order, use.boundaries, names), []).append(use)
     return tuple(
@@ -84,19 +52,13 @@ def may_be_tied(use: Use) -> bool:
     return locates and Meaning.SEPARATE_REQUIREMENT not in use.callout.meanings
 
 
+def is_tied(use: Use, scheme: DatumScheme) -> bool:
+    """Whether a simultaneous requirement makes a pattern of this line's feature and those of other callouts."""
+    like = (other for other in scheme.uses if other.order == use.order and other.boundaries == use.boundaries)
+    return any(other.segment is use.segment for other in _simultaneous(list(like), scheme))
+
+
 def _says_so(use: Use) -> bool:
     zone = use.segment.zone
     written = zone is not None and zone.modifier(Modifier.SIMULTANEOUS) is not None
     return written or Meaning.SIMULTANEOUS_REQUIREMENT in use.callout.meanings
-
-
-def _name(ref: DatumRef) -> str:
-    return "-".join(sorted(letter.letter for letter in ref.letters))
-
-
-def _boundaries(ref: DatumRef) -> Boundaries:
-    return tuple(sorted((m.letter, _signs((*ref.modifiers, *m.modifiers))) for m in ref.letters))
-
-
-def _signs(uses: Iterable[ModifierUse]) -> str:
-    return "".join(_BOUNDARY[use.kind] for use in uses if use.kind in _BOUNDARY)

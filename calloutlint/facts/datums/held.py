@@ -10,7 +10,7 @@ from itertools import takewhile
 from calloutlint.facts.datums.arrangement import Reference, holds_all, takes_nothing, usual
 from calloutlint.facts.datums.kinds import DatumKind
 from calloutlint.facts.datums.motion import FREEDOMS, Freedom
-from calloutlint.facts.datums.relations import Link, Relation
+from calloutlint.facts.datums.relations import Relation
 from calloutlint.facts.datums.scheme import DatumScheme
 from calloutlint.model.frame import DatumRef, Segment
 
@@ -59,12 +59,26 @@ def redundant(segment: Segment, scheme: DatumScheme) -> tuple[DatumRef, ...]:
 
     Frames with named degrees of freedom are left out: there the names say what each one holds.
     """
+    datums = segment.datums
+    if len(datums) < 2:
+        return ()
+    key = tuple(map(_key, datums))
+    if key not in scheme.idle:
+        scheme.idle[key] = _idle(segment, scheme)
+    return tuple(datums[place] for place in scheme.idle[key])
+
+
+def _key(ref: DatumRef) -> object:
+    """The letter of a bare reference, else the whole of it: letters are told apart far quicker."""
+    bare = len(ref.letters) == 1 and not (ref.modifiers or ref.freedoms or ref.letters[0].modifiers)
+    return ref.letters[0].letter if bare else ref
+
+
+def _idle(segment: Segment, scheme: DatumScheme) -> tuple[int, ...]:
     if any(ref.freedoms for ref in segment.datums):
         return ()
     references = scheme.references(segment)
-    return tuple(
-        ref for order, ref in enumerate(segment.datums) if order and _adds_nothing(references, order, scheme)
-    )
+    return tuple(place for place in range(1, len(references)) if _adds_nothing(references, place, scheme))
 
 
 def _adds_nothing(references: tuple[Reference | None, ...], order: int, scheme: DatumScheme) -> bool:
@@ -100,9 +114,9 @@ def _assumed(references: tuple[Reference | None, ...], order: int, scheme: Datum
     said = [f"{letter} {geometry.assumed}" for letter, geometry in reference.members if geometry.assumed]
     letters = list(dict.fromkeys(letter for letter, _ in reference.members))
     before = [letter for r in _present(references[:order]) for letter, _ in r.members]
-    if len(letters) > 1 and not _told(letters, letters, scheme):
+    if len(letters) > 1 and not scheme.relations.tell(letters, letters):
         said.append(f"{' and '.join(letters)} taken as standing in one line or plane")
-    if before and _has_direction(reference) and not _told(letters, before, scheme):
+    if before and _has_direction(reference) and not scheme.relations.tell(letters, before):
         others = " and ".join(dict.fromkeys(before))
         said.append(f"{'-'.join(letters)} taken in its usual direction to {others}")
     return "; ".join(said) or None
@@ -110,16 +124,3 @@ def _assumed(references: tuple[Reference | None, ...], order: int, scheme: Datum
 
 def _has_direction(reference: Reference) -> bool:
     return any(geometry.kind is not DatumKind.POINT for _, geometry in reference.members)
-
-
-def _told(some: list[str], others: list[str], scheme: DatumScheme) -> bool:
-    """Whether a callout says how one of these features stands to one of the others."""
-    return any(
-        relation.link is not Link.OBLIQUE
-        and (
-            (relation.letter in some and relation.to in others)
-            or (relation.letter in others and relation.to in some)
-        )
-        for relation in scheme.relations.known
-        if relation.letter != relation.to
-    )

@@ -6,11 +6,12 @@ tolerance whose datums leave it free to move controls orientation only.
 
 from enum import StrEnum
 
-from calloutlint.facts.datums.frames import FrameInForce, Use, frames_in_force
+from calloutlint.facts.datums.frames import is_tied
 from calloutlint.facts.datums.kinds import DatumKind
 from calloutlint.facts.datums.scheme import DatumScheme
+from calloutlint.facts.datums.uses import Use, uses_in
 from calloutlint.model.callout import Callout
-from calloutlint.model.frame import Characteristic, DatumRef, Segment, ZoneShape
+from calloutlint.model.frame import Characteristic, DatumRef, ZoneShape
 from calloutlint.model.size import SizeForm
 
 
@@ -28,13 +29,13 @@ def unlocated(use: Use, scheme: DatumScheme) -> Unlocated | None:
     other positions or profiles share the frame (one setting of the part ties them together), and for a
     width positioned to one plane, which locates it.
     """
-    if not _is_lone(use):
-        return None
     datums = use.segment.datums
+    if len(datums) > 1 or not _is_lone(use):
+        return None
     if not datums:
         return Unlocated.NO_DATUM
     round_zone = use.segment.zone is not None and use.segment.zone.shape is not ZoneShape.WIDTH
-    if len(datums) > 1 or not round_zone or not _is_flat(datums[0], scheme) or _is_tied(use, scheme):
+    if not round_zone or not _is_flat(datums[0], scheme) or is_tied(use, scheme):
         return None
     return Unlocated.ONE_PLANE
 
@@ -49,12 +50,7 @@ def positions_have_datums(callout: Callout) -> bool | None:
 
 def positions_of(callout: Callout) -> tuple[Use, ...]:
     """Position lines of a callout, with and without datums."""
-    return tuple(
-        Use(callout, frame, segment, lower=number > 0)
-        for frame in callout.frames
-        for number, segment in enumerate(frame.segments)
-        if segment.characteristic is Characteristic.POSITION
-    )
+    return tuple(use for use in uses_in([callout]) if use.segment.characteristic is Characteristic.POSITION)
 
 
 def _is_lone(use: Use) -> bool:
@@ -72,12 +68,3 @@ def _is_lone(use: Use) -> bool:
 def _is_flat(ref: DatumRef, scheme: DatumScheme) -> bool:
     planes = (DatumKind.PLANE, DatumKind.CENTRE_PLANE)
     return len(ref.letters) == 1 and scheme.kind(ref) in planes
-
-
-def _is_tied(use: Use, scheme: DatumScheme) -> bool:
-    """Whether a simultaneous requirement makes a pattern of this feature and others."""
-    return any(_holds(frame, use.segment) for frame in frames_in_force(scheme))
-
-
-def _holds(frame: FrameInForce, segment: Segment) -> bool:
-    return any(other.segment is segment for other in frame.simultaneous)

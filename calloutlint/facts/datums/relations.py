@@ -6,9 +6,10 @@ angles; a hole perpendicular to a face has the direction of the face.
 Source: ASME Y14.5 and ISO 1101, what the orientation, location and runout tolerances are defined by.
 """
 
-from collections.abc import Iterable, Iterator, Mapping
+from collections.abc import Collection, Iterable, Iterator, Mapping
 from dataclasses import dataclass
 from enum import Enum
+from itertools import combinations
 
 from calloutlint.facts.datums.kinds import DatumGeometry, DatumKind
 from calloutlint.facts.datums.motion import Vector, cross, dot
@@ -111,42 +112,53 @@ def _around(
                 yield Relation(letter, to, Link.AROUND)
 
 
-@dataclass(frozen=True, slots=True)
 class Relations:
-    """All that is known of the directions of a drawing's datum features."""
+    """All that is known of the directions of a drawing's datum features, and what follows from it."""
 
-    known: frozenset[Relation]
-
-    @classmethod
-    def closed(cls, relations: Iterable[Relation]) -> "Relations":
-        """With what follows: what has the direction of a third feature has its links too."""
-        known = set(relations)
-        while True:
-            new = {c for a in known for b in known if (c := _follows(a, b)) is not None} - known
-            if not new:
-                return cls(frozenset(known))
-            known |= new
+    def __init__(self, known: Iterable[Relation]) -> None:
+        self._known = frozenset(relation for relation in known if relation.letter != relation.to)
+        self._direction = _joined(self._known, (Link.SAME_DIRECTION, Link.COAXIAL))
+        self._axis = _joined(self._known, (Link.COAXIAL,))
+        self._of_the_pair = [r for r in self._known if r.link in _OF_THE_PAIR]
+        self._square = {
+            frozenset((self._direction.get(r.letter, r.letter), self._direction.get(r.to, r.to)))
+            for r in self._known
+            if r.link is Link.RIGHT_ANGLE
+        }
 
     def among(self, letters: Iterable[str]) -> tuple[Relation, ...]:
         """The relations between these letters, in a fixed order."""
-        chosen = set(letters)
-        found = (r for r in self.known if r.letter in chosen and r.to in chosen and r.letter != r.to)
+        chosen = sorted(set(letters))
+        found = [Relation(a, b, link) for a, b in combinations(chosen, 2) for link in self._between(a, b)]
+        found += [r for r in self._of_the_pair if r.letter in chosen and r.to in chosen]
         return tuple(sorted(found, key=lambda r: (r.letter, r.to, r.link.value)))
 
+    def tell(self, some: Iterable[str], others: Iterable[str]) -> bool:
+        """Whether the callouts say how one of these features stands to one of the others."""
+        return any(True for a in some for b in others if a != b for _ in self._between(a, b))
 
-_PARALLEL = (Link.SAME_DIRECTION, Link.COAXIAL)
+    def _between(self, a: str, b: str) -> Iterator[Link]:
+        """What follows for two features: what has the direction of a third is square to what that is."""
+        one, other = self._direction.get(a, a), self._direction.get(b, b)
+        if one == other:
+            yield Link.COAXIAL if self._axis.get(a, a) == self._axis.get(b, b) else Link.SAME_DIRECTION
+        if frozenset((one, other)) in self._square:
+            yield Link.RIGHT_ANGLE
 
 
-def _follows(a: Relation, b: Relation) -> Relation | None:
-    """From `a`, same direction as its partner, and `b` about that partner: a relation of the other two."""
-    if a.link not in _PARALLEL or b.link not in (*_PARALLEL, Link.RIGHT_ANGLE):
-        return None
-    same = a.link is Link.SAME_DIRECTION and b.link is Link.COAXIAL
-    for start, shared in ((a.letter, a.to), (a.to, a.letter)):
-        for near, far in ((b.letter, b.to), (b.to, b.letter)):
-            if shared == near and start != far:
-                return Relation(start, far, Link.SAME_DIRECTION if same else b.link)
-    return None
+_OF_THE_PAIR = (Link.OBLIQUE, Link.AROUND, Link.SIDE_BY_SIDE)
+
+
+def _joined(relations: Iterable[Relation], links: Collection[Link]) -> dict[str, str]:
+    """Letters with one that stands for all that these links join it with, directly or through others."""
+    roots: dict[str, str] = {}
+    for relation in relations:
+        if relation.link in links:
+            old, new = roots.get(relation.to, relation.to), roots.get(relation.letter, relation.letter)
+            roots.setdefault(relation.letter, new)
+            roots.setdefault(relation.to, old)
+            roots.update({letter: new for letter, root in roots.items() if root == old})
+    return roots
 
 
 def agrees(relation: Relation, own: Placement, other: Placement) -> bool:

@@ -3,15 +3,17 @@
 A drawing may have several sheets; they share one scheme.
 """
 
-from collections.abc import Mapping, Sequence
+from collections.abc import Iterable, Mapping
 from dataclasses import dataclass, replace
+from functools import cached_property
 
 from calloutlint.facts.datums.arrangement import Reference
-from calloutlint.facts.datums.kinds import DatumGeometry, DatumKind, geometry_of, letters_of
+from calloutlint.facts.datums.kinds import DatumGeometry, DatumKind, geometry_of
 from calloutlint.facts.datums.motion import FREEDOMS, Freedom
 from calloutlint.facts.datums.relations import Relations, relations_of
 from calloutlint.facts.datums.targets import contacts_of
-from calloutlint.model.callout import Callout, DatumTarget
+from calloutlint.facts.datums.uses import Use, uses_in
+from calloutlint.model.callout import Callout, DatumFeature, DatumTarget
 from calloutlint.model.drawing import Drawing, Package, System
 from calloutlint.model.frame import DatumRef, Modifier, Segment
 
@@ -31,7 +33,7 @@ class Established:
     geometry: DatumGeometry | None
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True, eq=False)
 class DatumScheme:
     """All datum features of a drawing by letter, in the order they are established, and their relations."""
 
@@ -39,10 +41,20 @@ class DatumScheme:
     features: Mapping[str, Established]
     relations: Relations
 
-    @property
+    @cached_property
     def callouts(self) -> tuple[Callout, ...]:
         """The callouts of all sheets in order."""
         return tuple(callout for sheet in self.sheets for callout in sheet.callouts)
+
+    @cached_property
+    def uses(self) -> tuple[Use, ...]:
+        """Every frame line with datum references, in the order of the drawing; doubtful ones left out."""
+        return tuple(u for u in uses_in(self.callouts) if u.segment.datums and not u.segment.doubtful)
+
+    @cached_property
+    def idle(self) -> dict[object, tuple[int, ...]]:
+        """Places of references that add nothing, by the references of a line, as far as worked out."""
+        return {}
 
     @property
     def iso(self) -> bool:
@@ -95,21 +107,15 @@ def _reduced(kinds: set[DatumKind], uses: set[Modifier]) -> bool:
 
 def scheme_of(*sheets: Drawing) -> DatumScheme:
     """The datum scheme of a drawing, of all its sheets together."""
-    callouts = [callout for sheet in sheets for callout in sheet.callouts]
-    letters = dict.fromkeys(
-        letter
-        for callout in callouts
-        for letter in (*letters_of(callout), *(target.letter for target in callout.datum_targets))
-    )
-    features = {letter: _established(letter, callouts) for letter in letters}
+    features = _features([callout for sheet in sheets for callout in sheet.callouts])
     geometries = {letter: feature.geometry for letter, feature in features.items()}
     relations = (
         relation
         for feature in features.values()
-        for callout in feature.callouts
-        for relation in relations_of(feature.letter, callout, geometries)
+        if len(feature.callouts) == 1
+        for relation in relations_of(feature.letter, feature.callouts[0], geometries)
     )
-    return DatumScheme(sheets, features, Relations.closed(relations))
+    return DatumScheme(sheets, features, Relations(relations))
 
 
 def schemes_of(package: Package) -> tuple[DatumScheme, ...]:
@@ -121,15 +127,26 @@ def schemes_of(package: Package) -> tuple[DatumScheme, ...]:
     return tuple(scheme_of(*sheets) for sheets in drawings.values())
 
 
-def _established(letter: str, callouts: Sequence[Callout]) -> Established:
-    carriers = tuple(callout for callout in callouts if letter in letters_of(callout))
-    targets = tuple(
-        (callout, target)
-        for callout in callouts
-        for target in callout.datum_targets
-        if target.letter == letter
-    )
-    return Established(letter, carriers, targets, _geometry(carriers, targets))
+def _features(callouts: Iterable[Callout]) -> dict[str, Established]:
+    """The datum features that callouts establish, in the order of their letters on the drawing."""
+    carriers: dict[str, list[Callout]] = {}
+    targets: dict[str, list[tuple[Callout, DatumTarget]]] = {}
+    for callout in callouts:
+        for part in callout.parts:
+            if isinstance(part, DatumFeature):
+                on = carriers.setdefault(part.letter, [])
+                on += [callout] if not on or on[-1] is not callout else []
+            elif isinstance(part, DatumTarget):
+                carriers.setdefault(part.letter, [])
+                targets.setdefault(part.letter, []).append((callout, part))
+    return {letter: _established(letter, on, targets.get(letter, ())) for letter, on in carriers.items()}
+
+
+def _established(
+    letter: str, callouts: Iterable[Callout], targets: Iterable[tuple[Callout, DatumTarget]]
+) -> Established:
+    carriers, touched = tuple(callouts), tuple(targets)
+    return Established(letter, carriers, touched, _geometry(carriers, touched))
 
 
 def _geometry(
