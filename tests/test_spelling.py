@@ -107,8 +107,11 @@ def test_a_size_a_thread_or_a_hole_opens_a_feature(line: str) -> None:
         "-.002",
         "SEE NOTE 3",
         "",
-    ]
-    + ["CLEARANCE FOR M6", "SURFACE FLATNESS|.003 -A-", "REMOVE BURRS", "ALL AROUND"],
+        "CLEARANCE FOR M6",
+        "SURFACE FLATNESS|.003 -A-",
+        "REMOVE BURRS",
+        "ALL AROUND",
+    ],
 )
 def test_what_speaks_of_a_feature_above_opens_none(line: str) -> None:
     assert not opens_feature(line)

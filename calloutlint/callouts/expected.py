@@ -23,6 +23,7 @@ _WORDS = {
     "LETTERS": "a datum letter",
     "DATUM_FEATURE": "a datum feature",
 }
+_MOST = 4
 BY_PLACE = {
     "zone": ("a tolerance", "a modifier such as Ⓜ", "a compartment bar"),
     "datum": ("a datum letter", "a modifier such as Ⓜ", "a compartment bar"),
@@ -40,6 +41,6 @@ BY_PLACE = {
 
 
 def expected_words(terminals: Iterable[str]) -> tuple[str, ...]:
-    """What the named terminals are, without repetition, in the order of the table above."""
+    """What the named terminals are, without repetition, the likeliest first."""
     names = set(terminals)
-    return tuple(dict.fromkeys(words for name, words in _WORDS.items() if name in names))
+    return tuple(dict.fromkeys(words for name, words in _WORDS.items() if name in names))[:_MOST]

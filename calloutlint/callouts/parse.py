@@ -4,12 +4,12 @@ import re
 from collections.abc import Collection, Mapping, Sequence
 from functools import cache, lru_cache
 
-from lark import Lark, Token, Tree, UnexpectedInput
+from lark import Lark, Token, Tree, UnexpectedInput, UnexpectedToken
 
 from calloutlint.callouts.build import build
+from calloutlint.callouts.build.line import Line, Node
 from calloutlint.callouts.expected import expected_words
 from calloutlint.callouts.grammar import load_grammar
-from calloutlint.callouts.build.line import Line, Node
 from calloutlint.callouts.note import find_note
 from calloutlint.callouts.spelling import Normal, normalise
 from calloutlint.model.callout import Part, Unread
@@ -18,6 +18,7 @@ from calloutlint.units import Unit
 
 FRAGMENTS = ("terminals", "size", "thread", "frame", "datum")
 LONGEST_LINE = 2000
+_MOST_ERRORS = 12
 _WORD = re.compile(r"[^\s|\[\]\uFFFD]+|[|\[\]]")
 _LOWER = re.compile(
     r"\s*(?:\||S?⌀?\s*-?(?:\d+\.?\d*|\.\d+)\s*(?:\||(?:/[\d.×Xx]+|[ⓂⓁⓈⓅⓉⒻ]|\s+\.?\d*\.?\d+)*\s*(?:\||(?:\s[A-Z]{1,2}(?:-[A-Z])?\s*[ⓂⓁ]?)+\s*$)))"
@@ -67,17 +68,23 @@ def _parse_line(index: int, normal: Normal, unit: Unit | None, framed: bool) -> 
 
 @lru_cache(maxsize=8192)
 def _items(text: str, start: str) -> tuple[tuple[Node, ...], Mapping[int, tuple[str, ...]]]:
-    """The parse of one line; on an error the whole word is set aside and the line parsed again."""
+    """The parse of one line; on an error the whole word is set aside and the line parsed again.
+
+    The second result says for the column of each word set aside what should have stood there.
+    """
     expected: dict[int, tuple[str, ...]] = {}
-    while True:
+    while len(expected) <= _MOST_ERRORS:
         try:
             tree = grammar().parse(text, start=start)
         except UnexpectedInput as error:
             begin, end = _word_at(text, error)
             expected[begin] = expected_words(_accepted(error))
+            if len(expected) == _MOST_ERRORS:
+                begin, end = 0, len(text)
             text = text[:begin] + "\ufffd" * (end - begin) + text[end:]
         else:
             return (tree,) if start == "lower" else tuple(tree.children), expected
+    return (Token("UNREAD", text, start_pos=0, end_pos=len(text)),), expected
 
 
 def _without_note(text: str) -> str:
@@ -90,16 +97,15 @@ def _without_note(text: str) -> str:
 
 
 def _accepted(error: UnexpectedInput) -> Collection[str]:
-    accepted: Collection[str] | None = getattr(error, "accepts", None) or getattr(error, "expected", None)
-    return accepted or getattr(error, "allowed", None) or ()
+    if isinstance(error, UnexpectedToken):
+        return error.expected
+    return getattr(error, "allowed", None) or ()
 
 
 def _word_at(text: str, error: UnexpectedInput) -> tuple[int, int]:
-    """The word at the error, or the last before it; a bar outside a frame takes the rest of the line with it."""
-    at = error.pos_in_stream
-    token = getattr(error, "token", None)
-    if at is None or (isinstance(token, Token) and token.type == "$END"):
-        at = len(text)
+    """The word at the error, or the last before it; a bar outside a frame takes the rest of the line along."""
+    at_end = isinstance(error, UnexpectedToken) and error.token.type == "$END"
+    at = len(text) if at_end else error.pos_in_stream or 0
     words = [match.span() for match in _WORD.finditer(text)]
     begin, end = next((span for span in words if span[1] > at), words[-1] if words else (0, len(text)))
     return (begin, len(text)) if text[begin] == "|" else (begin, end)

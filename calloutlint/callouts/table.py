@@ -131,7 +131,7 @@ MODIFIERS = _rows(
         "STATISTICAL TOL",
     ),
     ("⟨CF⟩", "<CF>", "continuous feature", "(CF)", "〈CF〉", "‹CF›", "CONTINUOUS FEATURE"),
-    ("▷", "(TRANS)", "translation", "▻", "▹", "(>)", "TRANSLATION"),
+    ("▷", "(TRANS)", "translation", "▻", "▹", "(>)"),
     ("△", "(DYN)", "dynamic profile", "∆", "DYNAMIC PROFILE"),
 )
 

@@ -4,6 +4,7 @@ import re
 from decimal import Decimal
 from fractions import Fraction
 
+from calloutlint.model.size import Size
 from calloutlint.model.values import Value
 from calloutlint.units import Unit
 
@@ -36,6 +37,20 @@ def parse_value(text: str, unit: Unit | None) -> Value:
         return _angle(match)
     digits = match["sign2"] + match["decimal"].removesuffix(".")
     return Value(digits, Decimal(digits), _stated_unit(match["unit"], unit))
+
+
+def parse_size(text: str, unit: Unit | None) -> Size:
+    """The one size that `text` states, such as `⌀6.6 +0.15/0`.
+
+    Raises:
+        ValueError: `text` is something else, or more than one size.
+    """
+    from calloutlint.callouts.parse import parse_callout  # reads its numbers with this module
+
+    parts = parse_callout([text], unit)
+    if len(parts) != 1 or not isinstance(parts[0], Size):
+        raise ValueError(f"'{text.strip()}' is not one size. Expected one like ⌀.281 +.007 -.002 or 25 H7.")
+    return parts[0]
 
 
 def _fraction(match: re.Match[str], unit: Unit | None) -> Value:

@@ -2,7 +2,6 @@
 
 from collections.abc import Iterator, Sequence
 
-
 from calloutlint.callouts.note import names_fastener
 from calloutlint.callouts.spelling import normalise
 from calloutlint.callouts.write_frame import write_frame, write_scope, write_segment
@@ -108,12 +107,12 @@ def _joins(parts: Sequence[Part], at: int) -> bool:
     if isinstance(part, Unread | Words) and isinstance(before, Unread):
         return before.in_frame or isinstance(part, Words)
     if isinstance(part, Unread):
-        return getattr(before, "doubtful", False) or isinstance(before, Frame) and part.in_frame
+        return getattr(before, "doubtful", False) or (isinstance(before, Frame) and part.in_frame)
     if isinstance(before, Unread):
         return getattr(part, "doubtful", False)
     if isinstance(part, Words):
         tapped = isinstance(before, Thread) and part.text == "TAP"
-        return tapped or isinstance(before, Size | Thread | HoleStep) and _trails(part, following)
+        return tapped or (isinstance(before, Size | Thread | HoleStep) and _trails(part, following))
     return isinstance(before, Words) and isinstance(part, Size | Thread) and _leads(before)
 
 

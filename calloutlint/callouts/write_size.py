@@ -1,6 +1,8 @@
 """Canonical text of sizes, threads and hole steps."""
 
-from calloutlint.callouts.build.frames import MODIFIER_OF
+from decimal import Decimal
+
+from calloutlint.callouts.build.modifiers import MODIFIER_OF
 from calloutlint.callouts.build.sizes import FORMS
 from calloutlint.callouts.writing import Writing
 from calloutlint.model.hole import HoleStep, StepKind
@@ -120,8 +122,8 @@ def _metric(thread: Thread) -> str:
 
 
 def _lead(thread: Thread) -> str:
-    lead = thread.pitch.amount * thread.starts if thread.pitch else 0
-    return f"{lead.normalize():f}" if lead else "0"
+    lead = thread.pitch.amount * thread.starts if thread.pitch is not None else Decimal(0)
+    return f"{lead.normalize():f}"
 
 
 def _shows_lead(thread: Thread) -> bool:

@@ -64,6 +64,7 @@ class SizeDraft:
         )
 
     def finish(self) -> Size:
+        """The size as the model has it."""
         return Size(
             self.form,
             self.nominal,
@@ -87,6 +88,7 @@ class DepthDraft:
     size: SizeDraft | None = None
 
     def finish(self) -> Depth:
+        """The depth as the model has it."""
         return Depth(None if self.size is None else self.size.finish(), self.span)
 
 
@@ -109,6 +111,7 @@ class ThreadDraft:
     doubtful: bool = False
 
     def finish(self) -> Thread:
+        """The thread as the model has it."""
         extent = self.extent.finish() if isinstance(self.extent, DepthDraft) else self.extent
         return Thread(
             self.system,
@@ -141,6 +144,7 @@ class StepDraft:
     doubtful: bool = False
 
     def finish(self) -> HoleStep:
+        """The step as the model has it."""
         extent = self.extent.finish() if isinstance(self.extent, DepthDraft) else self.extent
         return HoleStep(
             self.kind,
@@ -165,6 +169,7 @@ class SegmentDraft:
     doubtful: bool = False
 
     def finish(self) -> Segment:
+        """The segment as the model has it."""
         return Segment(self.characteristic, self.zone, tuple(self.datums), self.span, self.doubtful)
 
 
@@ -177,6 +182,7 @@ class FrameDraft:
     count: Count | None = None
 
     def finish(self) -> Frame:
+        """The frame as the model has it."""
         return Frame(tuple(segment.finish() for segment in self.segments), self.scope, self.count)
 
 
@@ -192,5 +198,6 @@ class TargetDraft:
     movable: bool = False
 
     def finish(self) -> DatumTarget:
+        """The target as the model has it."""
         kind = self.kind or (TargetKind.AREA if self.sizes else TargetKind.POINT)
         return DatumTarget(self.letter, self.number, kind, tuple(self.sizes), self.movable, self.span)

@@ -27,13 +27,16 @@ SIZE_MODIFIERS = {
     "CF": SizeModifier.CONTINUOUS_FEATURE,
     "ST": SizeModifier.STATISTICAL,
 }
-_NUMBER = r"(?:(?:\d+[ -])?\d+/\d+(?!\d)|\d+\.?\d*|\.\d+)\s*(?:\"|mm|MM|[iI][nN]\.?)?(?:°(?:\s*\d+\.?\d*\s*')?(?:\s*\d+\.?\d*\s*\")?|')?"
+_UNIT = r"(?:\"|mm|MM|[iI][nN]\.?)"
+_ANGLE_PARTS = r"°(?:\s*\d+\.?\d*\s*')?(?:\s*\d+\.?\d*\s*\")?"
+_NUMBER = rf"(?:(?:\d+[ -])?\d+/\d+(?!\d)|\d+\.?\d*|\.\d+)\s*{_UNIT}?(?:{_ANGLE_PARTS}|')?"
 _LIMIT = r"(?:\d+\.?\d*|\.\d+)\s*(?:\"|mm|MM|[iI][nN]\.?|°)?"
 _PAIR = re.compile(rf"\s*([+-]?\s*{_NUMBER})\s*[/,]?\s*([+-]?\s*{_NUMBER})\s*").fullmatch
 _LIMITS = re.compile(rf"\s*({_LIMIT})(?:-|\s+-\s+|\s*/\s*|\s+)⌀?({_LIMIT}|{_NUMBER})\s*").fullmatch
 _COUNTED = re.compile(r"(\d+)").search
 _WIDEST_LIMITS = 10  # `30-0.1` is neither: a deviation needs a space before its sign
-_NUMBER_WORDS = "ONE TWO THREE FOUR FIVE SIX SEVEN EIGHT NINE TEN ELEVEN TWELVE".split()
+_WORDS = "ONE TWO THREE FOUR FIVE SIX SEVEN EIGHT NINE TEN ELEVEN TWELVE"
+_NUMBER_WORDS = _WORDS.split()
 
 
 def size_form(token: str) -> SizeForm:

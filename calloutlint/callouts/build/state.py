@@ -106,7 +106,7 @@ class State:
         self, token: Token, expected: tuple[str, ...], nearest: str | None = None, *, in_frame: bool = False
     ) -> None:
         """Adds text that cannot be read."""
-        if token.type == "UNREAD":
+        if token.type == "UNREAD" and not in_frame:
             expected = self.line.expected.get(token.start_pos or 0) or expected
         self.unread_span(self.line.span(token), expected, nearest, in_frame=in_frame)
 

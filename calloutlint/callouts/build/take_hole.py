@@ -62,7 +62,7 @@ def take_starts(state: State, token: Token) -> None:
 def take_step(state: State, token: Token) -> None:
     """A counterbore, countersink, spotface, drill, ream or tap."""
     kind = _STEPS[token]
-    if kind is StepKind.TAP and _is_plain_tap(state):
+    if (kind is StepKind.TAP and _is_plain_tap(state)) or _is_plain_word(state, kind):
         as_word(state, token)
         return
     state.end_words()
@@ -85,6 +85,13 @@ def _is_plain_tap(state: State) -> bool:
     if state.words:
         return state.words[-1].upper().endswith("FORM")
     return isinstance(state.last, ThreadDraft)
+
+
+def _is_plain_word(state: State, kind: StepKind) -> bool:
+    """Whether DRILL or REAM has nothing to drill: `DRILL JIG`, the first word of `DRILL AND REAM ⌀.250`."""
+    before = state.parts[-1] if state.parts else None
+    named = state.drill is not None or isinstance(before, SizeDraft | ThreadDraft)
+    return kind in SPEAKS_OF_SIZE_BEFORE and state.follows("WORD") and not named
 
 
 def _stands_after_number(state: State) -> bool:

@@ -3,7 +3,7 @@
 from lark import Token, Tree
 
 from calloutlint.callouts.build.drafts import DepthDraft, SizeDraft, TargetDraft
-from calloutlint.callouts.build.line import tokens
+from calloutlint.callouts.build.line import joined, tokens
 from calloutlint.callouts.build.sizes import SIZE_MODIFIERS, add_tolerance, read_size, size_form
 from calloutlint.callouts.build.state import State
 from calloutlint.callouts.build.take_hole import fits_step, place_depth, place_extent, put_in_step
@@ -54,7 +54,7 @@ def _belongs_elsewhere(state: State, draft: SizeDraft) -> bool:
     if state.target is not None and draft.nominal is not None:
         state.target.sizes.append(draft.nominal)
     elif state.depth is not None and state.depth.size is None:
-        state.depth.size = draft
+        state.depth.size, state.depth.span = draft, joined((state.depth.span, draft.span))
         place_extent(state, state.depth)
     elif state.drill is not None and state.box is SizeStatus.REFERENCE:
         state.drill_size = draft
@@ -129,7 +129,7 @@ def _complete(size: SizeDraft, nil: Value) -> bool:
 def _near(one: Value, other: Value) -> bool:
     """Whether two numbers can be limits of one size: neither is twice the other."""
     smaller, larger = sorted((one.amount, other.amount))
-    return 0 < smaller and larger < 2 * smaller
+    return smaller > 0 and larger < 2 * smaller
 
 
 def take_stacked(state: State, tree: Tree[Token]) -> None:

@@ -11,6 +11,7 @@ from calloutlint.callouts.value import parse_value
 from calloutlint.model.source import Span
 from calloutlint.model.thread import ThreadSystem
 from calloutlint.model.values import Value
+from calloutlint.trade.inches import number_diameter
 from calloutlint.units import Unit
 
 _UNIFIED = re.compile(
@@ -19,10 +20,10 @@ _UNIFIED = re.compile(
 _METRIC = re.compile(r"(MJ?)\s?([\d.]+)(?:\s?[xX×]\s?(?:[Pp][Hh]\s?([\d.]+)\s?P\s?)?([\d.]+))?").fullmatch
 _TRAPEZOIDAL = re.compile(r"[Tt][Rr]\s?([\d.]+)\s?[xX×]\s?([\d.]+)(?:\s?\(?P\s?([\d.]+)\)?)?").fullmatch
 _PIPE = re.compile(
-    r"(?P<size>(?:\d+[ -])?\d+/\d+|[\d.]+)(?:\s?-\s?(?P<tpi>\d+(?:\.5|\s1/2)?))?\s*-?\s*(?P<series>[A-Z][A-Z\d-]+)"
+    r"(?P<size>(?:\d+[ -])?\d+/\d+|[\d.]+)(?:\s?-\s?(?P<tpi>\d+(?:\.5|\s1/2)?))?"
+    r"\s*-?\s*(?P<series>[A-Z][A-Z\d-]+)"
 ).fullmatch
 _PARALLEL_PIPE = re.compile(r"(G|R[cp])\s?([\d /-]+?)\s?([AB]?)", re.IGNORECASE).fullmatch
-_SMALLEST_NUMBER, _STEP = Decimal("0.060"), Decimal("0.013")
 _LAST_NUMBER, _NUMBER_SIZES_FROM = 12, 24  # `10-32` is #10, `2-12` is two inches: no number size is coarser
 
 
@@ -43,12 +44,12 @@ def read_thread(tree: Tree[Token], line: Line) -> ThreadDraft:
     return draft
 
 
-def inch_diameter(size: str) -> Value:
-    """Basic major diameter of an inch thread size: `.250`, `1/4`, or a number size by ASME B1.1 (`#10` is .190)."""
-    if size.startswith("#"):
-        amount = _SMALLEST_NUMBER + _STEP * int(size[1:])
-        return Value(format(amount, "f").removeprefix("0"), amount, Unit.INCH)
-    return parse_value(size, Unit.INCH)
+def _inch_diameter(size: str) -> Value | None:
+    """Basic major diameter of an inch thread size: `.250`, `1/4`, `#10`; None for a number that is no size."""
+    if not size.startswith("#"):
+        return parse_value(size, Unit.INCH)
+    amount = number_diameter(int(size[1:]))
+    return None if amount is None else Value(f"{amount:f}".removeprefix("0"), amount, Unit.INCH)
 
 
 def _unified(text: str, span: Span) -> ThreadDraft:
@@ -59,7 +60,7 @@ def _unified(text: str, span: Span) -> ThreadDraft:
     size = _inch_size(match["size"])
     if size.isdigit() and int(size) <= _LAST_NUMBER and tpi.amount >= _NUMBER_SIZES_FROM:
         size = f"#{size}"
-    return ThreadDraft(ThreadSystem.UNIFIED, size, inch_diameter(size), "", span, tpi=tpi)
+    return ThreadDraft(ThreadSystem.UNIFIED, size, _inch_diameter(size), "", span, tpi=tpi)
 
 
 def _inch_size(text: str) -> str:

@@ -1,0 +1,428 @@
+"""What a callout is read as, and what is said of text that cannot be read."""
+
+from collections.abc import Iterator
+from dataclasses import fields, is_dataclass
+from decimal import Decimal
+from pathlib import Path
+
+import pytest
+
+from calloutlint.callouts.parse import parse_callout
+from calloutlint.callouts.value import parse_size, parse_value
+from calloutlint.model.callout import FastenerNote, Meaning, Part, Unread, Words
+from calloutlint.model.fastener import Hold
+from calloutlint.model.frame import Frame, Modifier, ZoneShape
+from calloutlint.model.hole import HoleStep
+from calloutlint.model.size import Depth, Deviations, FitCode, Limits, PlusMinus, Size, SizeForm, Through
+from calloutlint.model.source import Span
+from calloutlint.model.thread import Thread
+from calloutlint.model.values import Value
+from calloutlint.units import Unit
+
+GOLDEN = sorted((Path(__file__).parent / "cases" / "golden").glob("*.txt"))
+
+
+def read(*lines: str, unit: Unit = Unit.INCH) -> tuple[Part, ...]:
+    return parse_callout(lines, unit)
+
+
+@pytest.mark.parametrize("path", GOLDEN, ids=lambda path: path.stem)
+def test_a_callout_has_its_golden_tree(path: Path) -> None:
+    """The whole model with its spans, compared with what has been read over by eye."""
+    text, _, tree = path.read_text("utf-8").partition("----\n")
+    unit = Unit.MM if path.stem.endswith("-mm") else Unit.INCH
+    parts = parse_callout(text.splitlines(), unit)
+    assert "\n".join(line for part in parts for line in _tree(part)) + "\n" == tree
+
+
+def _tree(node: object, name: str = "", depth: int = 0) -> Iterator[str]:
+    """A model as indented lines; fields at their defaults are left out, spans stand beside their part."""
+    head = "  " * depth + (f"{name}: " if name else "")
+    if isinstance(node, Value):
+        yield f"{head}{node.text} = {node.amount} {node.unit or 'of no unit'}"
+    elif is_dataclass(node):
+        span = getattr(node, "span", None)
+        at = f"  [{span.line}:{span.start}-{span.end}]" if isinstance(span, Span) else ""
+        yield f"{head}{type(node).__name__}{at}"
+        for field in fields(node):
+            value = getattr(node, field.name)
+            if field.name != "span" and value != field.default and value != ():
+                yield from _tree(value, field.name, depth + 1)
+    elif isinstance(node, tuple):
+        for item in node:
+            yield from _tree(item, name, depth)
+    else:
+        yield f"{head}{node}"
+
+
+ENCODINGS = [
+    "⌖ | ⌀.014 Ⓜ | A | B Ⓜ | C",
+    "⌖|⌀.014Ⓜ|A|BⓂ|C",
+    "POS | DIA .014 (M) | A | B(M) | C",
+    "POSITION DIA .014 MMC A B MMC C",
+    "TRUE POSITION .014 DIA AT MMC A B AT MMC C",
+    "position dia .014 mmc A B mmc C",
+    "POSITION DIA .014 M A B M C",
+    "POS|%%c.014 (M)|A|B (M)|C",
+    r"{\Fgdt;j}%%v{\Fgdt;n}.014{\Fgdt;m}%%vA%%vB{\Fgdt;m}%%vC",
+    "[⌖|⌀.014Ⓜ|A|BⓂ|C]",
+    "[POS][DIA .014 (M)][A][B (M)][C]",
+    "[⌖][⌀.014 Ⓜ][A][B Ⓜ][C]",
+    "| ⌖ | Ø.014 Ⓜ | A | B Ⓜ | C |",
+    "│⌖│⌀.014 Ⓜ│A│B Ⓜ│C│",
+    "⌖ ⌀.014 Ⓜ A B Ⓜ C",
+    "⌖ | ⌀.014 <M> | A, B <M>, C",
+    "⌖ | ⌀.014 | A | B Ⓜ | C".replace(".014", ".014 ⓜ"),
+]
+
+
+@pytest.mark.parametrize("written", ENCODINGS)
+def test_a_frame_is_the_same_in_every_encoding(written: str) -> None:
+    assert read(written) == read(ENCODINGS[0])
+
+
+def test_a_frame_is_taken_apart() -> None:
+    (frame,) = read("⌓ | .012 Ⓤ .003 | A-B[x,y] | C Ⓜ ▷")
+    assert isinstance(frame, Frame)
+    (segment,) = frame.segments
+    assert segment.zone is not None
+    assert (segment.zone.shape, segment.zone.value) == (
+        ZoneShape.WIDTH,
+        Value(".012", Decimal(".012"), Unit.INCH),
+    )
+    (unequal,) = segment.zone.modifiers
+    assert (unequal.kind, unequal.value) == (Modifier.UNEQUAL, Value(".003", Decimal(".003"), Unit.INCH))
+    assert [datum.name for datum in segment.datums] == ["A-B", "C"]
+    assert segment.datums[0].freedoms == ("x", "y")
+    assert [use.kind for use in segment.datums[1].modifiers] == [Modifier.MMC, Modifier.TRANSLATION]
+
+
+@pytest.mark.parametrize(
+    ("written", "lower"),
+    [
+        (("⌖ | ⌀.014 | A | B", "| ⌀.006 | A"), 2),
+        (("⌖ | ⌀.014 | A | B", "⌀.006 | A"), 2),
+        (("⌖ ⌀.014 A B", "⌀.006 A"), 2),
+        (("⌖ ⌀.014 A B / ⌀.006 A",), 2),
+        (("⌖ | ⌀.014 | A | B", "| ⌀.006 | A", "| ⌀.002"), 3),
+        (("⌖ | ⌀.014 | A | B", "⌖ | ⌀.006 | A"), 1),
+        (("⌖ | ⌀.014 | A | B", "⌀.006 ±.001 THRU"), 1),
+        (("⌖ | ⌀.014 | A | B", "⌀.500 THRU"), 1),
+    ],
+)
+def test_lower_segments_are_told_from_new_frames_and_sizes(written: tuple[str, ...], lower: int) -> None:
+    frame = read(*written)[0]
+    assert isinstance(frame, Frame)
+    assert len(frame.segments) == lower
+
+
+def _limits(first: str, second: str, unit: Unit = Unit.INCH, *, named: bool = False) -> Limits:
+    return Limits(Value(first, Decimal(first), unit), Value(second, Decimal(second), unit), named)
+
+
+@pytest.mark.parametrize(
+    "written",
+    [(".288-.279",), (".288 - .279",), (".288/.279",), (".288 / .279",), (".288 .279",), (".288", ".279")],
+)
+def test_limits_are_read_in_every_layout(written: tuple[str, ...]) -> None:
+    assert read(*written) == (Size(SizeForm.LINEAR, None, _limits(".288", ".279")),)
+
+
+@pytest.mark.parametrize(
+    "written",
+    [
+        (".288 MAX .279 MIN",),
+        (".279 MIN .288 MAX",),
+        ("MAX .288 MIN .279",),
+        (".288 MAX / .279 MIN",),
+        (".288 MAX", ".279 MIN"),
+    ],
+)
+def test_named_limits_say_which_is_which(written: tuple[str, ...]) -> None:
+    assert read(*written) == (Size(SizeForm.LINEAR, None, _limits(".288", ".279", named=True)),)
+
+
+def test_two_numbers_far_apart_are_two_sizes() -> None:
+    assert len(read("1.500", ".250")) == 2
+
+
+@pytest.mark.parametrize(
+    ("written", "upper", "lower"),
+    [
+        ("+.002 -.001", "+.002", "-.001"),
+        ("+.002/-.001", "+.002", "-.001"),
+        ("+.002-.001", "+.002", "-.001"),
+        ("+0.021/0", "+0.021", "0"),
+        ("+0.2 0", "+0.2", "0"),
+        ("0/-0.02", "0", "-0.02"),
+        ("0 -0.02", "0", "-0.02"),
+        ("-0.1 -0.3", "-0.1", "-0.3"),
+        ("+.0010 -.0000", "+.0010", "-.0000"),
+        ("(+0.15 0)", "+0.15", "0"),
+    ],
+)
+def test_deviations_are_read_in_every_layout(written: str, upper: str, lower: str) -> None:
+    (size,) = read(f"⌀30 {written}")
+    assert isinstance(size, Size)
+    assert isinstance(size.tolerance, Deviations)
+    assert (size.tolerance.upper.text, size.tolerance.lower.text) == (upper, lower)
+
+
+def test_stacked_deviations_belong_to_the_size_above() -> None:
+    assert read("⌀.281 +.007", "-.002 THRU") == read("⌀.281 +.007 -.002 THRU")
+    assert read("⌀30 +0.2", "0", unit=Unit.MM) == read("⌀30 +0.2 0", unit=Unit.MM)
+
+
+@pytest.mark.parametrize(
+    ("written", "code"), [("25 H7", "H7"), ("25H7", "H7"), ("25 js6", "js6"), ("25 M6", "M6"), ("25 R7", "R7")]
+)
+def test_a_fit_class_outranks_a_thread_and_a_radius(written: str, code: str) -> None:
+    (size,) = read(written, unit=Unit.MM)
+    assert isinstance(size, Size)
+    assert str(size.fit) == code
+
+
+def test_limits_beside_a_fit_code_are_its_tolerance() -> None:
+    expected = _limits("24.980", "24.993", Unit.MM)
+    for written in ("25 g6 (24.980-24.993)", "24.980-24.993 (25 g6)"):
+        (size,) = read(written, unit=Unit.MM)
+        assert isinstance(size, Size)
+        assert (size.fit, size.tolerance) == (FitCode("g", "6"), expected)
+
+
+def test_angles_keep_minutes_and_seconds() -> None:
+    (size,) = read("30°15'36\" ±0°30'")
+    assert isinstance(size, Size)
+    assert isinstance(size.tolerance, PlusMinus)
+    assert size.nominal == Value("30°15'36\"", Decimal("30.26"), Unit.DEGREE)
+    assert size.tolerance.amount.amount == Decimal("0.5")
+
+
+@pytest.mark.parametrize(
+    ("text", "amount"),
+    [
+        ("1/4", ".25"),
+        ("1 1/4", "1.25"),
+        ("1-1/4", "1.25"),
+        ("-3/8", "-.375"),
+        (".2500", ".2500"),
+        ("+.002", ".002"),
+    ],
+)
+def test_numbers_are_exact(text: str, amount: str) -> None:
+    assert parse_value(text, Unit.INCH).amount == Decimal(amount)
+
+
+@pytest.mark.parametrize("text", ["", "A", "..250", "1/0", "1,5", "1.2.3", "±.1"])
+def test_what_is_no_number_is_refused_in_words(text: str) -> None:
+    with pytest.raises(ValueError, match=r"not a number|divides by zero"):
+        parse_value(text, Unit.INCH)
+
+
+def test_one_size_can_be_read_alone() -> None:
+    size = parse_size("⌀6.6 +0.15/0", Unit.MM)
+    assert size.form is SizeForm.DIAMETER
+    assert isinstance(size.tolerance, Deviations)
+    with pytest.raises(ValueError, match=r"'M6' is not one size\."):
+        parse_size("M6", Unit.MM)
+
+
+def test_a_dual_dimension_is_in_the_other_unit() -> None:
+    (size,) = read("⌀.500 +.002 -.000 [12.7 +0.05 0]")
+    assert isinstance(size, Size)
+    assert size.dual is not None
+    assert size.dual.nominal == Value("12.7", Decimal("12.7"), Unit.MM)
+    assert size.dual.form is SizeForm.DIAMETER
+
+
+def test_the_decimal_comma_is_read_where_the_sheet_has_it() -> None:
+    with_comma = parse_callout(["⌀25,4 +0,1 0"], Unit.MM, decimal_comma=True)
+    assert with_comma == parse_callout(["⌀25.4 +0.1 0"], Unit.MM)
+    assert isinstance(parse_callout(["⌀25,4"], Unit.MM)[0], Unread)
+
+
+def test_a_depth_belongs_to_the_hole_before_it() -> None:
+    size, step, thread = read("⌀.281 THRU ⌴ ⌀.438 ↧ .25", ".250-20 UNC-2B", "↧ .50")
+    assert isinstance(size, Size)
+    assert isinstance(step, HoleStep)
+    assert isinstance(thread, Thread)
+    assert isinstance(size.extent, Through)
+    for extent, depth in ((step.extent, ".25"), (thread.extent, ".50")):
+        assert isinstance(extent, Depth)
+        assert extent.size is not None
+        assert extent.size.nominal is not None
+        assert extent.size.nominal.text == depth
+
+
+@pytest.mark.parametrize(
+    "written",
+    [
+        "4X ⌀.281 THRU",
+        "4 X ⌀.281 THRU",
+        "4x ⌀.281 THRU",
+        "(4X) ⌀.281 THRU",
+        "⌀.281 THRU 4X",
+    ],
+)
+def test_a_count_is_read_before_and_after(written: str) -> None:
+    assert read(written) == read("4X ⌀.281 THRU")
+
+
+@pytest.mark.parametrize(
+    "count", ["4 PLACES", "4 PL", "(4) PLACES", "4 PLCS", "4 REQD", "FOUR PLACES", "FOUR (4) PLACES"]
+)
+def test_counts_in_words_come_to_one_spelling(count: str) -> None:
+    assert read(f"{count} ⌀.281") == read(f"⌀.281 {count}") == read("4 PL ⌀.281")
+
+
+def test_a_count_of_holes_says_what_they_are() -> None:
+    (size,) = read("FOUR HOLES ⌀.281")
+    assert isinstance(size, Size)
+    assert size.count is not None
+    assert (size.count.number, size.count.written, size.count.in_words) == (4, "4 HOLES", True)
+
+
+# -- text that cannot be read --
+
+
+@pytest.mark.parametrize(
+    ("written", "wrong"),
+    [
+        ("⌀.25O THRU", "⌀.25O"),
+        ("⌀..250 THRU", "⌀..250"),
+        ("⌀.500 ..250", "..250"),
+        ("1.2.3", "1.2.3"),
+        ("⌀ THRU", "⌀"),
+        (".250 ±", "±"),
+        ("⌖ | ⌀.0I4 | A", "⌀.0I4"),
+        ("⌖ | ⌀.014 | A | BBQ", "BBQ"),
+        ("⌖ | ⌀.014 FOO | A", "FOO"),
+        ("⌖ | ⌀.014 .020 | A", ".020"),
+        (".250-20 UNX", "UNX"),
+        ("30-0.1", "30-0.1"),
+        (".250 | .003", "| .003"),
+    ],
+)
+def test_unreadable_text_is_kept_with_its_place(written: str, wrong: str) -> None:
+    (unread,) = [part for part in read(written) if isinstance(part, Unread)]
+    assert unread.text == wrong
+    assert written[unread.span.start : unread.span.end] == wrong
+    assert unread.expected
+
+
+@pytest.mark.parametrize(
+    ("written", "meant"),
+    [
+        ("POSITON | ⌀.014 | A", "POSITION"),
+        ("FLATNES .003", "FLATNESS"),
+        ("PERPENDICULARTY | .002 | A", "PERPENDICULARITY"),
+        ("COUNTERBROE ⌀.438", "COUNTERBORE"),
+        ("SPOTFCAE ⌀.75", "SPOTFACE"),
+        ("⌀.5 THUR", "THRU"),
+        ("⌀.5 TYPCIAL", "TYPICAL"),
+    ],
+)
+def test_a_slip_is_told_with_the_nearest_spelling(written: str, meant: str) -> None:
+    unread = next(part for part in read(written) if isinstance(part, Unread))
+    assert unread.nearest == meant
+
+
+def test_what_stands_right_beside_unreadable_text_is_doubtful() -> None:
+    parts = read("4X ⌀.281 THRU FLATNES", "⌴ ⌀.438 ↧ .25O")
+    assert [getattr(part, "doubtful", None) for part in parts if not isinstance(part, Unread)] == [False, True]
+    (thread, _) = read(".250-20 UNX")
+    assert isinstance(thread, Thread)
+    assert thread.doubtful
+    frame = read("⌖ | ⌀.014 FOO | A", "⟂ | .002 | A")[0]
+    assert isinstance(frame, Frame)
+    assert frame.segments[0].doubtful
+
+
+def test_one_broken_line_leaves_the_others_whole() -> None:
+    parts = read("⌀.5 @@.1@@ THRU", "⌖ | ⌀.014 | A", "DATUM B")
+    assert parts[-2:] == read("⌖ | ⌀.014 | A", "DATUM B")
+
+
+@pytest.mark.parametrize("frame", ["⌖ | ⌀ | A", "⌖ | Ⓜ | A"])
+def test_a_frame_without_its_tolerance_says_so(frame: str) -> None:
+    (part,) = read(frame)
+    assert isinstance(part, Frame)
+    assert part.segments[0].zone is not None
+    assert part.segments[0].zone.value is None
+
+
+def test_symbols_without_their_number_say_so() -> None:
+    (frame,) = read("⌖ | A | B")
+    (size,) = read("⌀.5 ↧")
+    (step,) = read("⌴ ↧ .25")
+    assert isinstance(frame, Frame)
+    assert isinstance(size, Size)
+    assert isinstance(step, HoleStep)
+    assert frame.segments[0].zone is None
+    assert size.extent == Depth(None)
+    assert step.size is None
+
+
+ORDINARY = """\
+BEARING BORE|DEBURR|NEAR SIDE|FAR SIDE|BOTH SIDES|AS SHOWN|EQ SP|EQUALLY SPACED|ON ⌀3.000 BC|POLISH|STAMP
+REMOVE BURRS|BREAK ALL SHARP EDGES|BLACK OXIDE|MASK BEFORE PLATING|PLATES|PLANES|SPACES|TREAD|TROUGH|TURN
+TRANSITION|POSITIVE STOP|PROTECTED|PROFILED|REFER TO NOTE 2|SEE NOTE 3|SEE DETAIL A1|SECTION A-A|VIEW B
+ITEM 5|ZONE C4|GRIND|WELD|HEAT TREAT TO 58-62 HRC|63 RMS|RA 1.6|FINISH 32|MATERIAL 6061-T6|17-4PH|AISI 304
+PER ASME B46.1|MIL-A-8625 TYPE II|TORQUE TO 25 IN-LB|PARALLEL TO DATUM A|SQUARE|SYMMETRICAL ABOUT CL
+ROUGH MACHINE|THREAD RELIEF|UNDERCUT|FULL R|HELICOIL|KNURL|CHAMFER|FLAT HEAD|CAPPED|TAPPET|RADIAL
+INDEPENDENTLY|FOR REFERENCE ONLY|CLEARANCE FOR WRENCH|DEPTH OF THREAD|THRU BOTH WALLS|MAX WIDTH|STOCK
+CONCENTRIC|COAXIAL|CIRCULAR|STRAIGHT|PERPENDICULAR|ANGULAR|LOCATION|DIMENSION|DIAMETRAL|TANGENTIAL|CASTING
+FORGING|MOLDED|BRASS BUSHING|O-RING GROOVE|OIL HOLE|INSPECT|IDENTIFY|ENGRAVE|ANODIZE|PASSIVATE|PAINT
+LEFT SIDE|TOP|BOTTOM|CENTER|INSIDE|OUTSIDE|UPPER|LOWER|MATING PART|MATCHED SET|DRILL JIG|ASSEMBLY|SPRING
+SEAL|GASKET|DOWEL|KEYSEAT|SPLINE|GEAR|SHOULDER|COUNTERWEIGHT|COUNTERSHAFT|HARDEN|TEMPER|STRESS RELIEVE
+SHOT PEEN|LAP|HONE|BURNISH"""
+
+
+@pytest.mark.parametrize("words", ORDINARY.replace("\n", "|").split("|"))
+def test_ordinary_words_of_drawings_are_words(words: str) -> None:
+    assert all(isinstance(part, Words) for part in read(words))
+    beside = read(f"⌀.500 ±.002 {words}")
+    assert not any(isinstance(part, Unread) for part in beside)
+
+
+@pytest.mark.parametrize(
+    ("written", "meaning"),
+    [
+        ("RUNNING FIT", Meaning.CLEARANCE_FIT),
+        ("SLIP-FIT", Meaning.CLEARANCE_FIT),
+        ("PRESS FIT", Meaning.INTERFERENCE_FIT),
+        ("SHRINK FIT", Meaning.INTERFERENCE_FIT),
+        ("TRANSITION FIT", Meaning.TRANSITION_FIT),
+        ("KEYWAY", Meaning.SLOT),
+        ("BEARING BORE", Meaning.BORE),
+        ("BOSSES", Meaning.BOSS),
+        ("FORM TAP", Meaning.FORM_TAP),
+        ("SEP REQT", Meaning.SEPARATE_REQUIREMENT),
+    ],
+)
+def test_words_that_rules_can_use_are_understood(written: str, meaning: Meaning) -> None:
+    (words,) = read(written)
+    assert isinstance(words, Words)
+    assert words.meanings == (meaning,)
+
+
+@pytest.mark.parametrize(
+    ("written", "hold"),
+    [
+        ("FOR .250-20 UNC SCREW", None),
+        ("CLEARANCE FOR M6 FLOATING", Hold.FLOATING),
+        ("CLR FOR #10", None),
+        ("CLEAR FOR 1/4 BOLT FIXED", Hold.FIXED),
+        ("FOR ⌀6 m6 DOWEL PIN", None),
+    ],
+)
+def test_a_fastener_named_in_a_callout_is_found(written: str, hold: Hold | None) -> None:
+    (note,) = read(written)
+    assert isinstance(note, FastenerNote)
+    assert note.fastener.thread or note.fastener.pin
+    assert note.hold is hold
+
+
+@pytest.mark.parametrize("written", ["⌀.500 FOR 2.00 LENGTH", "⌀5 FOR M6 TAP", "FOR REFERENCE ONLY"])
+def test_other_things_that_a_callout_is_for_are_no_fasteners(written: str) -> None:
+    assert not any(isinstance(part, FastenerNote) for part in read(written))
