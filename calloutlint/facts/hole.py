@@ -140,10 +140,11 @@ class HoleView(PartView):
 
     def next_stock(self, least: Decimal) -> Decimal | None:
         """The smallest stock drill that, rounded to the places of the hole's nominal, is not below `least`."""
-        nominal = self._size.nominal if self._size else None
-        if nominal is None or self.unit not in {Unit.INCH, Unit.MM}:
+        if self.unit not in {Unit.INCH, Unit.MM}:
             return None
-        place = Decimal(1).scaleb(-max(nominal.places, INCH_PLACES)) if self.unit is Unit.INCH else None
+        nominal = self._size.nominal if self._size else None
+        places = max(nominal.places if nominal else 0, INCH_PLACES)
+        place = Decimal(1).scaleb(-places) if self.unit is Unit.INCH else None
         drill = next_larger_stock(least, self.unit)
         while drill is not None:
             rounded = drill.diameter if place is None else drill.diameter.quantize(place)

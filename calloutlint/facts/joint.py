@@ -16,7 +16,7 @@ from calloutlint.facts.passage import PassageView
 from calloutlint.facts.view import View, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing
-from calloutlint.model.fastener import Hold, HoleRef
+from calloutlint.model.fastener import Fastener, Hold, HoleRef
 from calloutlint.model.size import SizeForm
 from calloutlint.model.values import Value
 
@@ -82,7 +82,8 @@ class JointView(View):
     @cached_property
     def members(self) -> tuple[MemberView, ...]:
         """Every hole of it that is at hand."""
-        return tuple(MemberView(self._view(member), self) for member in self._at_hand)
+        fastener = self.part.joint.fastener
+        return tuple(MemberView(self._view(member), fastener, self) for member in self._at_hand)
 
     @property
     def _at_hand(self) -> Iterator[Member]:
@@ -162,19 +163,25 @@ class JointView(View):
 
 
 class MemberView(PartView):
-    """A hole of a stated joint, clearance or fixing."""
+    """A hole of a stated joint, clearance or fixing, or one taken for a clearance hole."""
 
     subject = "member"
     part: Callout
 
-    def __init__(self, callout: CalloutView, joint: JointView) -> None:
+    def __init__(self, callout: CalloutView, fastener: Fastener, joint: JointView | None) -> None:
         super().__init__(callout.part, callout)
+        self._fastener = fastener
         self._joint = joint
 
     @fact
-    def joint(self) -> JointView:
-        """The joint."""
+    def joint(self) -> JointView | None:
+        """The stated joint; unknown where the hole is only taken for a clearance hole."""
         return self._joint
+
+    @fact
+    def fastener(self) -> FastenerView:
+        """The fastener that goes through it, or is fixed in it."""
+        return FastenerView(self._fastener, self.unit)
 
     @fact
     def located(self) -> bool | None:
@@ -184,7 +191,7 @@ class MemberView(PartView):
     @fact
     def frame_free_mates(self) -> tuple[str, ...]:
         """Other drawings' holes of the joint whose position has datums, where this has none; as balloons."""
-        if self._datums != 0 or self.part.datum_features:
+        if self._joint is None or self._datums != 0 or self.part.datum_features:
             return ()
         others = (m for m in self._joint.members if m.drawing_model is not self.drawing_model)
         return tuple(f"{m.drawing_model.name}:{m.part.balloon}" for m in others if m._datums)

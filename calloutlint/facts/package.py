@@ -10,7 +10,7 @@ from calloutlint.facts.callout import CalloutView
 from calloutlint.facts.datum_index import DatumIndex
 from calloutlint.facts.drawing import DrawingView
 from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.joint import JointView
+from calloutlint.facts.joint import JointView, MemberView
 from calloutlint.facts.passage import PassageView
 from calloutlint.facts.view import View, fact
 from calloutlint.model.callout import Callout
@@ -50,10 +50,11 @@ class PackageView(View):
         """The stated joints of the package."""
         return tuple(JointView(joint, self) for joint in self.assembly.joints)
 
-    def presumed_passages(self) -> Iterator[PassageView]:
+    def presumed_passages(self) -> Iterator[MemberView | PassageView]:
         """Holes taken for clearance holes of a fastener in their drawing's parts list."""
         for view in self._views.values():
             if view.part.sizes and view.hole.presumed:
+                yield MemberView(view, view.hole.thinnest_presumed, None)
                 yield PassageView(view, view.hole.thinnest_presumed, None)
 
     def listed_fasteners(self) -> Iterator[FastenerView]:

@@ -246,9 +246,11 @@ class PassageView(SeatedView):
     @fact
     def fitting_hole(self) -> Length | None:
         """The next stock drill, as this drawing rounds it, with which it fits; unknown beyond stock."""
-        if self._lacks is None or self._callout.hole.nominal is None:
+        hole = self._callout.hole
+        if self._lacks is None or self.fitting_smallest is None:
             return None
-        return self._callout.hole.next_stock(self._callout.hole.nominal + self._lacks)
+        least = self.fitting_smallest if hole.nominal is None else hole.nominal + self._lacks
+        return hole.next_stock(least)
 
     @property
     def _lacks(self) -> Decimal | None:
@@ -267,8 +269,10 @@ class PassageView(SeatedView):
         """What else a checker has to know of the arithmetic: one sentence each, a space before; or empty."""
         lines = positions(self._callout)
         said = [
+            (self.hold is None, "How the joint is held is not said: so much is needed either way."),
             (len(lines) > 1, "Of its position lines the largest ⌀ tolerance counts."),
             (self._at(Modifier.LMC), "At Ⓛ the position is largest where the hole is smallest."),
+            (self.tilt_unknown, "The fixing hole is not projected; its tilt is left out, for want of P or D."),
             (self._shifts, "The datum shift that material modifiers on the datums allow is not counted."),
             (
                 bool(self.fastener.limits_from),

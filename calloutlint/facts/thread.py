@@ -54,6 +54,14 @@ class ThreadView(PartView):
         return self.part.class_ or ""
 
     @fact
+    def as_called(self) -> str:
+        """The thread as written: `1/4-20 UNC-2B`, `M8x1-6H`."""
+        part = self.part
+        pitch = f"-{part.tpi.text}" if part.tpi else f"x{part.pitch.text}" if part.pitch else ""
+        series = f" {part.series}" if part.series and part.system is not ThreadSystem.METRIC else ""
+        return f"{part.size}{pitch}{series}" + (f"-{part.class_}" if part.class_ else "")
+
+    @fact
     def diameter(self) -> Length | None:
         """Basic major diameter; unknown for pipe threads."""
         return self._length(self.part.diameter)

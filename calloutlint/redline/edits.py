@@ -1,6 +1,6 @@
 """What each word of a rule sheet's redline does to a callout."""
 
-from collections.abc import Callable, Iterable
+from collections.abc import Callable, Iterable, Mapping
 from dataclasses import replace
 from decimal import Decimal
 from typing import Any
@@ -30,14 +30,32 @@ class UndeterminedError(Exception):
 
 
 def corrected(callout: Callout, edits: Iterable[Edit], unit: Unit | None) -> Callout:
-    """The callout with every edit applied; raises UndeterminedError where one cannot be."""
+    """The callout with every edit applied; raises UndeterminedError where one cannot be.
+
+    Edits of one part follow each other: each changes what the one before it left.
+    """
+    moved: dict[int, object] = {}
     for edit in edits:
-        changes = _changes(edit, unit)
+        changes = _changes(_onto(edit, moved), unit)
+        moved |= _steps(edit, changes, moved)
         whole = changes.pop(id(callout), callout)
         if not isinstance(whole, Callout):
             raise UndeterminedError
         callout = substitute(whole, changes)
     return callout
+
+
+def _onto(edit: Edit, moved: Mapping[int, object]) -> Edit:
+    """The edit with its targets as earlier edits left them."""
+    if isinstance(edit.target, tuple):
+        return replace(edit, target=tuple(moved.get(id(target), target) for target in edit.target))
+    return replace(edit, target=moved.get(id(edit.target), edit.target))
+
+
+def _steps(edit: Edit, changes: Mapping[int, object], moved: Mapping[int, object]) -> dict[int, object]:
+    """What the edit's targets, as the finding names them, have now become."""
+    targets = edit.target if isinstance(edit.target, tuple) else (edit.target,)
+    return {id(target): changes[id(moved.get(id(target), target))] for target in targets}
 
 
 def _changes(edit: Edit, unit: Unit | None) -> dict[int, object]:
@@ -75,14 +93,29 @@ def _replace(target: Any, edit: Edit, unit: Unit | None) -> object:
         return replace(target, value=_number(edit, unit, target.value))
     if isinstance(target, Zone) and edit.word == "projected":
         return replace(target, modifiers=_with_height(target.modifiers, _number(edit, unit, target.value)))
-    if isinstance(target, Size) and edit.word == "nominal":
-        return replace(target, nominal=_number(edit, unit, target.nominal))
+    if isinstance(target, Size):
+        return _resized(target, edit, unit)
     if isinstance(target, Callout) and edit.word == "count":
         return plain_count(target)
     if isinstance(target, Thread) and edit.word == "class_name":
         return replace(target, class_=str(edit.value))
     if isinstance(target, Segment) and edit.word == "characteristic":
         return replace(target, characteristic=type(target.characteristic)(str(edit.value)))
+    raise UndeterminedError
+
+
+def _resized(size: Size, edit: Edit, unit: Unit | None) -> Size:
+    match edit.word, size.tolerance:
+        case "nominal", _:
+            return replace(size, nominal=_number(edit, unit, size.nominal))
+        case "upper", Deviations(upper, lower):
+            return replace(size, tolerance=Deviations(_deviation(edit, unit, upper), lower))
+        case "lower", Deviations(upper, lower):
+            return replace(size, tolerance=Deviations(upper, _deviation(edit, unit, lower)))
+        case "largest" | "smallest", Limits(first, second, named):
+            if (edit.word == "largest") is (second.amount > first.amount):
+                return replace(size, tolerance=Limits(first, _number(edit, unit, second), named))
+            return replace(size, tolerance=Limits(_number(edit, unit, first), second, named))
     raise UndeterminedError
 
 
@@ -118,6 +151,15 @@ def _number(edit: Edit, unit: Unit | None, like: Value | None) -> Value:
     return written(edit.value, unit, like)
 
 
+def _deviation(edit: Edit, unit: Unit | None, like: Value) -> Value:
+    """A deviation with its sign; nil in mm is a plain 0."""
+    number = _number(edit, unit, like)
+    if number.signed or (number.amount == 0 and unit is not Unit.INCH):
+        return number
+    sign = "+" if number.amount or not like.signed else like.text[0]
+    return replace(number, text=sign + number.text)
+
+
 def _modifier(edit: Edit) -> Modifier:
     try:
         return Modifier(edit.word or "")
@@ -135,4 +177,7 @@ def _rank(kind: Modifier) -> int:
 
 
 def _with_height(uses: tuple[ModifierUse, ...], height: Value) -> tuple[ModifierUse, ...]:
+    """The modifiers with a projected zone of this height, added where there is none."""
+    if all(use.kind is not Modifier.PROJECTED for use in uses):
+        return _in_order((*uses, ModifierUse(Modifier.PROJECTED, height)))
     return tuple(replace(use, value=height) if use.kind is Modifier.PROJECTED else use for use in uses)
