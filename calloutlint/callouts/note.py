@@ -33,7 +33,7 @@ def find_note(text: str) -> tuple[int, int] | None:
     if named is None:
         return None
     what = _STOPS.sub("", named["what"]).rstrip()
-    sized = _DESIGNATION(what) or (named["clear"] and re.match(r"⌀?\s*\.?\d", what))
+    sized = _DESIGNATION(what) or (named["clear"] and re.match(r"‹?⌀?›?\s*\.?\d", what))
     if _OTHER(what) or not (_NOUN(what) or sized):
         return None
     return named.start(), named.start("what") + len(what)

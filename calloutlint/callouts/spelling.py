@@ -59,6 +59,8 @@ def normalise(line: str, *, decimal_comma: bool = False) -> Normal:
         normal = _NORMAL[_SPACES.sub(" ", written).upper()]
         if normal[0].isdigit() and match.start() and exchanged[match.start() - 1].isdigit():
             normal = " " + normal
+        elif normal in _FORMS and written[0].isalpha() and _stands_between_numbers(exchanged, *match.span()):
+            normal = f"‹{normal}›"
         if len(normal) != len(written):
             shifts.append((match.start() + drift, match.start()))
             drift += len(normal) - len(written)
@@ -71,11 +73,12 @@ def normalise(line: str, *, decimal_comma: bool = False) -> Normal:
 
 def opens_feature(line: str) -> bool:
     """Whether a line opens a size, a thread or a hole, so that an untagged sheet starts a callout there."""
-    text = normalise(line).text
+    text = normalise(line[:_LONGEST_OPENING]).text
     head = _FEATURE_ENDS.split(text, maxsplit=1)[0]
     return _OPENS(head) is not None and _JOINS(head) is None
 
 
+_LONGEST_OPENING = 200
 _FEATURE_ENDS = re.compile(r"[⏤⏥○⌭⌒⌓∠⟂∥⌖◎⌯↗⌰▲]|(?<!\S)-[A-Z]-")
 _OPENS = re.compile(
     r"\s*(?:[^\W\d_][\w'./&-]*\s+|\d+\s?[Xx×](?!\w)\s*)*(?:S?⌀|□|‹[CS]?R›|[\[(]?\.?\d|#\s?\d|MJ?\d|Tr\s?\d|G\s?\d)"
@@ -83,6 +86,16 @@ _OPENS = re.compile(
 _JOINS = re.compile(
     r"\s*(?:[|⌴⌵↧+]|-\s?\.?\d|‹(?:SF|DRILL|REAM|TAP)›|(?i:[\w ]*\b(?:notes?|for|see|per)\s))"
 ).match
+
+
+def _stands_between_numbers(text: str, start: int, end: int) -> bool:
+    """Whether a word such as DIA ends one number before another begins: `.500 DIA .25 DEEP`, not `A1 DIA .25`."""
+    before = _NUMBER_BEFORE.search(text, max(0, start - 12), start)
+    return before is not None and _NUMBER_AFTER.match(text, end) is not None
+
+
+_NUMBER_BEFORE = re.compile(r"(?<![A-Za-z\d])\d*\.?\d+\"?\s*$")
+_NUMBER_AFTER = re.compile(r"\s*\.?\d")
 
 
 def _spelled() -> dict[str, str]:
@@ -106,10 +119,11 @@ _NORMAL = {
     spelling: normal for spelling, normal in _spelled().items() if spelling.translate(_EXCHANGED) == spelling
 }
 _SPACES = re.compile(r"\s+")
+_FORMS = {"⌀", "S⌀", "□"}
 _COMMA = re.compile(r"(?<=\d),(?=\d)|(?<![\w,]),(?=\d)")
 
 _FRAME_WORDS = {s.upper() for row in CHARACTERISTICS for s in row.every if s[0].isalpha() or s in {"—", "//"}}
-_FRAME_FOLLOWS = r"(?=\s*[\]|]|[\s:=]*(?:[S]?[⌀]|%%[cC]|S?DIA\b|dia\b|-?\.?\d)%s)"
+_FRAME_FOLLOWS = r"(?=\s*[\]|]|[\s:=]*(?:(?i:within|tol(?:erance)?)\s+)?(?:S?⌀|%%[cC]|S?DIA\b|dia\b|-?\.?\d)%s)"
 _LONG_FOLLOWS = r"|\s+[A-Z](?![A-Za-z0-9.])"
 _NUMBER_FOLLOWS = r"(?=\s*[(\[]?\s*\.?\d)"
 _RADIUS_FOLLOWS = rf"(?:(?<!\d\sR)(?<!\dR){_NUMBER_FOLLOWS}|(?=\s*\d*\.\d|\s*[(\[]\s*\.?\d))"

@@ -36,6 +36,9 @@ _FIND = [
     (meaning, re.compile(rf"(?<![\w-])(?:{pattern})(?!\w)", re.IGNORECASE).search)
     for meaning, pattern in _MEANINGS
 ]
+# `DOWEL PIN HOLE` is a hole.
+_INTERNAL = {Meaning.HOLE, Meaning.SLOT, Meaning.GROOVE, Meaning.BORE}
+_EXTERNAL = {Meaning.PIN, Meaning.SHAFT, Meaning.BOSS, Meaning.TAB}
 _KNOWN = sorted(
     {
         spelling.upper()
@@ -52,6 +55,8 @@ _LEAST_FOR_ONE_SLIP, _LEAST_FOR_TWO_SLIPS = 6, 9
 def meanings_of(text: str) -> tuple[Meaning, ...]:
     """What the words say that rules can use, in the order of `Meaning`."""
     found = {meaning for meaning, search in _FIND if search(text)}
+    if found & _INTERNAL:
+        found -= _EXTERNAL
     return tuple(meaning for meaning in Meaning if meaning in found)
 
 

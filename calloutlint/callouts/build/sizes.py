@@ -136,6 +136,6 @@ def _canonical_count(text: str, number: int | None) -> str:
     noun = text.strip("()").split()[-1]
     if "‹PL›" in text:
         return f"{number} PL"
-    if noun[-1] in "X×":
+    if noun[-1] in "X×-":
         return f"{number}X"
     return f"{number} {noun}"

@@ -1,6 +1,7 @@
 """Second pass: frames, what applies to them, datum features and datum targets."""
 
 import re
+from dataclasses import replace
 
 from lark import Token, Tree
 
@@ -11,7 +12,7 @@ from calloutlint.callouts.build.state import State
 from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.words import slip_of
 from calloutlint.model.callout import DatumFeature
-from calloutlint.model.frame import Scope, ScopeKind
+from calloutlint.model.frame import Modifier, ModifierUse, Scope, ScopeKind
 from calloutlint.model.source import Span
 
 _REFERRING = {"TO", "FROM", "WITH", "OF", "BY", "ON", "IN", "AT", "WRT", "AND", "&", "OR", "ABOUT", "NORMAL"}
@@ -48,6 +49,19 @@ def _end_frame(state: State, read: FrameRead) -> None:
             state.words.append(token)
 
 
+def take_projected_height(state: State, token: Token) -> None:
+    """The height of a projected zone in a box under its frame, as editions before 1994 draw it."""
+    frame = state.last_of(FrameDraft)
+    zone = frame.segments[0].zone if isinstance(frame, FrameDraft) else None
+    if not isinstance(frame, FrameDraft) or zone is None:
+        state.unread(token, BY_PLACE["frame"])
+        return
+    height = state.line.value(token.replace("Ⓟ", "").replace("‹MIN›", "").strip())
+    use = ModifierUse(Modifier.PROJECTED, height, state.line.span(token))
+    others = tuple(other for other in zone.modifiers if other.kind is not Modifier.PROJECTED)
+    frame.segments[0].zone = replace(zone, modifiers=(*others, use))
+
+
 def take_scope(state: State, token: Token) -> None:
     """ALL AROUND, between …: of the frame before it that has none, else of the next one."""
     scope = _scope(token, state.line.span(token))
@@ -74,7 +88,7 @@ def take_datum_feature(state: State, token: Token) -> None:
         state.words.append(token)
         return
     state.end_words()
-    state.parts.append(DatumFeature(token.strip("▲-[] "), state.line.span(token)))
+    state.parts.append(DatumFeature(token.strip("▲-[]| "), state.line.span(token)))
 
 
 def take_target(state: State, tree: Tree[Token]) -> None:

@@ -76,7 +76,10 @@ def take_step(state: State, token: Token) -> None:
         _claim(state, draft, last)
     state.parts.append(draft)
     state.give_count(draft)
-    state.step = None if of_size_before and isinstance(last, SizeDraft) else draft
+    state.step = draft
+    if of_size_before and isinstance(last, SizeDraft):
+        last.form = SizeForm.DIAMETER if last.form is SizeForm.LINEAR else last.form
+        state.step = None
     state.size = None
 
 

@@ -186,6 +186,10 @@ def take_boxed_form(state: State, token: Token) -> None:
     state.form = size_form(token)
 
 
+def take_angle_sign(state: State, token: Token) -> None:
+    """`∠` before an angle says nothing that its degree sign does not."""
+
+
 def open_box(state: State, token: Token) -> None:
     """`[`: a dual dimension right after a size, else a basic one."""
     behind = isinstance(state.previous, Token) and state.previous.type in {*_STATUSES, "THRU"}
