@@ -11,6 +11,7 @@ from calloutlint.facts.datums.named import NamedFault, named_faults
 from calloutlint.facts.datums.scheme import DatumScheme
 from calloutlint.facts.datums.words import in_words
 from calloutlint.facts.onward import PartView
+from calloutlint.facts.symbol_names import drawn
 from calloutlint.facts.view import fact
 from calloutlint.model.frame import DatumRef, Modifier
 
@@ -59,6 +60,11 @@ class DatumView(PartView):
         """Its modifiers, those of single letters of a common datum included."""
         own = (use.kind for letter in self.part.letters for use in letter.modifiers)
         return (*own, *(use.kind for use in self.part.modifiers))
+
+    @fact
+    def symbols(self) -> tuple[str, ...]:
+        """Its modifiers as drawn."""
+        return tuple(drawn(kind) for kind in self.modifiers)
 
     @fact
     def freedoms(self) -> tuple[str, ...]:

@@ -168,6 +168,31 @@ class FrameView(PartView):
         return self.whole.scope.kind if self.whole.scope else None
 
     @fact
+    def repeat(self) -> DatumView | None:
+        """The first of its datum compartments with a letter that stands before it, or twice in it."""
+        for place, datum in enumerate(self.datums):
+            seen = {letter for other in self.datums[:place] for letter in other.letters}
+            if seen & set(datum.letters) or len(set(datum.letters)) < len(datum.letters):
+                return datum
+        return None
+
+    @fact
+    def surplus(self) -> tuple[DatumView, ...]:
+        """Its datum compartments beyond the third."""
+        return self.datums[3:]
+
+    @fact
+    def at_odds(self) -> tuple[DatumView, ...]:
+        """Its datum compartments that carry Ⓜ and Ⓛ at once."""
+        both = {Modifier.MMC, Modifier.LMC}
+        return tuple(datum for datum in self.datums if both <= set(datum.modifiers))
+
+    @fact
+    def primary(self) -> DatumView | None:
+        """Its primary datum compartment; unknown without datums."""
+        return self.datums[0] if self.datums else None
+
+    @fact
     def repeated_letters(self) -> tuple[str, ...]:
         """Letters that stand in two of its datum compartments."""
         compartments = Counter(letter for datum in self.datums for letter in set(datum.letters))

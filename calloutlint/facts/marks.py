@@ -8,6 +8,7 @@ from typing import TYPE_CHECKING, Any
 from calloutlint.facts.datums.completeness import TargetFault
 from calloutlint.facts.datums.control import Uncontrolled
 from calloutlint.facts.onward import PartView
+from calloutlint.facts.symbol_names import drawn
 from calloutlint.facts.view import fact
 from calloutlint.model.callout import DatumFeature, DatumTarget, TargetKind, Unread
 from calloutlint.model.frame import Modifier, ModifierUse, Scope, ScopeKind
@@ -18,12 +19,8 @@ if TYPE_CHECKING:
     from calloutlint.facts.frame import FrameView
     from calloutlint.facts.size import SizeView
 
-LABELS = {
-    Modifier.CONTINUOUS_FEATURE: "⟨CF⟩",
-    Modifier.STATISTICAL: "⟨ST⟩",
-    Modifier.TRANSLATION: "▷",
-    Modifier.DYNAMIC: "△",
-}
+
+MOST_EXPECTED = 2
 
 
 class SymbolView(PartView):
@@ -71,7 +68,7 @@ class SymbolView(PartView):
         """The symbol as drawn, or what it is called where it is no letter."""
         if self._kind is None:
             return "the from-to symbol" if self.from_to else "naming degrees of freedom"
-        return LABELS.get(self._kind, _circled(self._kind.value))
+        return drawn(self._kind)
 
     @fact
     def on_datum(self) -> bool:
@@ -110,11 +107,6 @@ def _datum_symbols(frame: FrameView, callout: CalloutView) -> Iterator[SymbolVie
             yield SymbolView(use, callout, use.kind, frame, on_datum=True)
         if ref.freedoms:
             yield SymbolView(ref, callout, None, frame, on_datum=True)
-
-
-def _circled(letters: str) -> str:
-    """A single letter in a circle; anything longer as it is."""
-    return chr(ord("Ⓐ") + ord(letters) - ord("A")) if len(letters) == 1 else letters
 
 
 class GapView(PartView):
@@ -162,6 +154,14 @@ class UnreadView(PartView):
     def expected(self) -> tuple[str, ...]:
         """What could have stood there, in the trade's words."""
         return self.part.expected
+
+    @fact
+    def narrowed(self) -> str | None:
+        """What could have stood there, in words; unknown where almost anything could."""
+        *others, last = self.part.expected or ("",)
+        if not last or len(others) > MOST_EXPECTED:
+            return None
+        return f"{', '.join(others)} or {last}" if others else last
 
     @fact
     def nearest(self) -> str | None:

@@ -81,6 +81,19 @@ def written_values(size: Size) -> tuple[Value, ...]:
     return more if size.nominal is None else (size.nominal, *more)
 
 
+def spelled(size: Size) -> str:
+    """A size with its tolerance as the drawing writes it: `⌀.281 ±.01`, `25-25.4`."""
+    nominal = SIGNS.get(size.form, "") + size.nominal.text if size.nominal else ""
+    match size.tolerance:
+        case PlusMinus(amount):
+            return f"{nominal} ±{amount.text}"
+        case Deviations(upper, lower):
+            return f"{nominal} {upper.text} {lower.text}"
+        case Limits(first, second, named):
+            return f"{first.text} MAX {second.text} MIN" if named else f"{first.text}-{second.text}"
+    return nominal
+
+
 class SizeView(PartView):
     """A size, a depth, or the diameter or angle of a hole step."""
 
@@ -230,10 +243,10 @@ class SizeView(PartView):
 
     @fact
     def dual_agrees(self) -> bool | None:
-        """Whether the bracketed size is the same size in the other unit, within rounding.
+        """Whether the bracketed size is the same size in the other unit, within the rounding of the brackets.
 
-        The nominal has to agree to half a unit in the last place of either writing; limits, which may be
-        rounded inward, to less than one unit.
+        The nominal has to agree to half a unit in the last place of the bracketed one; limits and deviations,
+        which may be rounded inward, to one unit.
         """
         dual = self.part.dual
         if dual is None or self.unit not in {Unit.INCH, Unit.MM}:
@@ -269,11 +282,8 @@ def _agrees(size: Size, dual: Size, unit: Unit) -> bool:
 
 
 def _same(one: Value, other: Value, share: Decimal) -> bool:
-    there, back = amount_in(one, other.unit), amount_in(other, one.unit)
-    if there is None or back is None:
-        return True
-    close = abs(there - other.amount) <= share * _last_place(other)
-    return close or abs(back - one.amount) <= share * _last_place(one)
+    there = amount_in(one, other.unit)
+    return there is None or abs(there - other.amount) <= share * _last_place(other)
 
 
 def _last_place(value: Value) -> Decimal:

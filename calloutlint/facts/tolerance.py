@@ -6,12 +6,14 @@ from typing import TYPE_CHECKING
 
 from calloutlint.facts.onward import PartView
 from calloutlint.facts.process import percent, shares
+from calloutlint.facts.symbol_names import drawn
 from calloutlint.facts.view import Length, Number, fact
 from calloutlint.model.frame import Modifier, ModifierUse, Zone, ZoneShape
 
 if TYPE_CHECKING:
     from calloutlint.facts.frame import FrameView
 
+ZONE_SIGNS = {ZoneShape.WIDTH: "", ZoneShape.DIAMETER: "⌀", ZoneShape.SPHERE: "S⌀"}
 MATERIAL = (Modifier.MMC, Modifier.LMC, Modifier.RFS)
 
 
@@ -36,6 +38,11 @@ class ToleranceView(PartView):
         return self.part.value.text if self.part and self.part.value else ""
 
     @fact
+    def label(self) -> str:
+        """The tolerance as written, its zone symbol included: `⌀.014`."""
+        return ZONE_SIGNS[self.part.shape] + self.written if self.part else ""
+
+    @fact
     def shape(self) -> ZoneShape | None:
         """Width, diameter or sphere; unknown where no tolerance is written."""
         return self.part.shape if self.part else None
@@ -44,6 +51,11 @@ class ToleranceView(PartView):
     def modifiers(self) -> tuple[Modifier, ...]:
         """The modifiers in the order written."""
         return tuple(use.kind for use in self._uses)
+
+    @fact
+    def symbols(self) -> tuple[str, ...]:
+        """The modifiers as drawn, in the order written."""
+        return tuple(drawn(use.kind) for use in self._uses)
 
     @fact
     def projected(self) -> Length | None:

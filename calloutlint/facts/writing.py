@@ -6,12 +6,16 @@ ASME Y14.5, the subjects of millimetre and decimal inch dimensioning and of the 
 from collections.abc import Iterator
 from decimal import Decimal
 
-from calloutlint.facts.size import written_values
+from calloutlint.facts.size import spelled, written_values
 from calloutlint.model.callout import Callout
-from calloutlint.model.size import Depth, Deviations, Limits, PlusMinus, Size, SizeForm, SizeStatus
+from calloutlint.model.size import Depth, Deviations, Limits, Size, SizeForm, SizeStatus
 from calloutlint.model.thread import Thread
 from calloutlint.model.values import Value
 from calloutlint.units import Unit
+
+UNEQUAL = "unequal decimal places"
+NEEDLESS = "a needless zero"
+SIGNED_NIL = "a sign on its nil deviation"
 
 
 def sizes_of(callout: Callout) -> Iterator[Size]:
@@ -49,40 +53,40 @@ def zero_led(callout: Callout) -> tuple[str, ...]:
 
 
 def uneven(callout: Callout, unit: Unit | None) -> tuple[str, ...]:
-    """Sizes whose decimal places or zeros break the rule for the drawing's unit, each as it is written."""
-    check = {Unit.INCH: _uneven_inch, Unit.MM: _uneven_mm}.get(unit) if unit else None
-    if check is None:
+    """What breaks the rule for places and zeros in the drawing's unit: `12.0 ±0.1 has a needless zero`."""
+    fault_of = {Unit.INCH: _inch_fault, Unit.MM: _mm_fault}.get(unit) if unit else None
+    if fault_of is None:
         return ()
     own = (size for size in sizes_of(callout) if _in_unit(size, unit) and size.form is not SizeForm.ANGLE)
-    return tuple(" ".join(value.text for value in written_values(size)) for size in own if check(size))
+    faults = ((size, fault_of(size)) for size in own)
+    return tuple(f"{spelled(size)} has {fault}" for size, fault in faults if fault)
 
 
 def _in_unit(size: Size, unit: Unit | None) -> bool:
     return all(value.unit is unit and "/" not in value.text for value in written_values(size))
 
 
-def _uneven_inch(size: Size) -> bool:
+def _inch_fault(size: Size) -> str | None:
     if size.status in {SizeStatus.BASIC, SizeStatus.REFERENCE} or size.fit:
-        return False
-    return len({value.places for value in written_values(size)}) > 1
+        return None
+    return UNEQUAL if len({value.places for value in written_values(size)}) > 1 else None
 
 
-def _uneven_mm(size: Size) -> bool:
+def _mm_fault(size: Size) -> str | None:
     match size.tolerance:
         case Limits(first, second):
-            return first.places != second.places or (_needless_zero(first) and _needless_zero(second))
-        case Deviations(upper, lower):
-            pair = _uneven_pair(upper, lower)
-        case PlusMinus() | None:
-            pair = False
-    return pair or (size.nominal is not None and _needless_zero(size.nominal))
+            needless = _needless_zero(first) and _needless_zero(second)
+            return UNEQUAL if first.places != second.places else NEEDLESS if needless else None
+        case Deviations(upper, lower) if fault := _pair_fault(upper, lower):
+            return fault
+    return NEEDLESS if size.nominal is not None and _needless_zero(size.nominal) else None
 
 
-def _uneven_pair(upper: Value, lower: Value) -> bool:
+def _pair_fault(upper: Value, lower: Value) -> str | None:
     nil = [value for value in (upper, lower) if value.amount == 0]
     if any(value.signed for value in nil):
-        return True
-    return not nil and upper.places != lower.places
+        return SIGNED_NIL
+    return UNEQUAL if not nil and upper.places != lower.places else None
 
 
 def _needless_zero(value: Value) -> bool:
