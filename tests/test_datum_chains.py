@@ -44,6 +44,7 @@ def test_a_feature_controlled_to_itself(callout: str, found: str) -> None:
         (["⌀9 k6; ⌰ | 0.1 | A-B; DATUM A", "⌀9 k6; ⌰ | 0.1 | A-B; DATUM B"], [], []),
         (["⌓ | 1 | A | B; A1; A2; A3; DATUM A", "⌓ | 1 | A | B; B1; B2; DATUM B"], [], []),
         (["⟂ | 0.1 | A; DATUM A", "⟂ | 0.1 | A; DATUM B"], [], []),
+        (["⏥ | 0.1; DATUM A", "⟂ | 0.1 | A; DATUM B", "⟂ | 0.1 | B; DATUM A"], [], []),
     ],
 )
 def test_rings_of_control(callouts: list[str], rings: list[str], stands_on: list[str]) -> None:

@@ -51,6 +51,7 @@ def boundary(found: DatumScheme) -> list[tuple[str, str]]:
         (["A | B | C", "A[z,u,v] | B[x,y] | C[w]"], []),
         (["A | B Ⓜ | C", "A | B | C"], []),
         (["B-C | A", "C-B | A"], []),
+        (["A | B", "SURFACE\n↗ | 0.1 | B | A"], []),
         (["A | B | C", "4X ⌀5 THRU\n⌖ | ⌀0.3 | A | B | C\n⌖ | ⌀0.1 | A | C | B"], []),
     ],
 )

@@ -84,8 +84,8 @@ def _kind(geometry: DatumGeometry | None) -> str:
         return "kind not known"
     if geometry.kind is not DatumKind.PATTERN or geometry.member is None:
         return geometry.kind.value
-    plural = {DatumKind.AXIS: "axes", DatumKind.POINT: "points", DatumKind.CENTRE_PLANE: "centre planes"}
-    return f"pattern of {geometry.count} {plural[geometry.member]}"
+    plural = "axes" if geometry.member is DatumKind.AXIS else f"{geometry.member}s"
+    return f"pattern of {geometry.count} {plural}"
 
 
 def _undefined(frames: tuple[FrameInForce, ...], scheme: DatumScheme) -> Iterator[FeatureLine]:

@@ -9,7 +9,8 @@ from itertools import permutations
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from calloutlint.facts.datums.arrangement import Reference, constraints, holds_all, takes_nothing, usual
+from calloutlint.facts.datums.arrangement import Reference, constraints
+from calloutlint.facts.datums.claims import holds_all, takes_nothing, usual
 from calloutlint.facts.datums.kinds import DatumGeometry, DatumKind
 from calloutlint.facts.datums.motion import FREEDOMS, ORIGIN, Constraints, Freedom, Vector, cross, dot
 from calloutlint.facts.datums.placement import Layout, Placement, placements

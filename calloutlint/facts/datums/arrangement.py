@@ -1,8 +1,4 @@
-"""The ways in which the datum features of a frame may stand together, and what each reference takes.
-
-Text says little of directions. The usual arrangement is the mutually perpendicular one that a reader would
-draw from the callouts; a claim about a drawing is made only if it holds in every arrangement that agrees
-with what the callouts say.
+"""The ways in which the datum features of a frame may stand together, as far as their callouts tell.
 
 Source: ASME Y14.5 (datum precedence, constraint of degrees of freedom), ISO 5459 (datum systems).
 """
@@ -10,9 +6,8 @@ Source: ASME Y14.5 (datum precedence, constraint of degrees of freedom), ISO 545
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from functools import lru_cache
-from itertools import product
 
-from calloutlint.facts.datums.kinds import DatumGeometry, DatumKind
+from calloutlint.facts.datums.kinds import DatumGeometry
 from calloutlint.facts.datums.motion import Constraints, Freedom, Row, Z
 from calloutlint.facts.datums.placement import Placement, placements
 from calloutlint.facts.datums.relations import Link, Relation, agrees
@@ -30,102 +25,7 @@ class Reference:
     orients_only: bool = False
 
 
-@dataclass(frozen=True, slots=True)
-class Taken:
-    """What one reference does in an arrangement: `alone` if it stood first, `new` after those before it."""
-
-    alone: tuple[Freedom, ...]
-    new: tuple[Freedom, ...]
-
-
 Arrangement = dict[str, Placement]
-
-
-@lru_cache(maxsize=4096)
-def usual(references: tuple[Reference, ...], relations: tuple[Relation, ...]) -> tuple[Taken, ...] | None:
-    """What each reference takes in the usual arrangement; None where the callouts contradict each other.
-
-    Each reference in turn stands at the first usual place where it takes away anything at all. Where some
-    freedoms are named, the names settle which axis is which.
-    """
-    if any(reference.named for reference in references):
-        return _as_named(references, relations)
-    placed: Arrangement = {}
-    before = Constraints()
-    taken: list[Taken] = []
-    for reference in references:
-        choices = list(_extensions(placed, reference, relations))
-        if not choices:
-            return None
-        placed = _first_that_holds(choices, reference, before)
-        after = _after(before, reference, placed)
-        taken.append(Taken(_after(Constraints(), reference, placed).held, after.held[before.rank :]))
-        before = after
-    return tuple(taken)
-
-
-def _first_that_holds(choices: list[Arrangement], reference: Reference, before: Constraints) -> Arrangement:
-    """The first choice that takes anything away.
-
-    Of a common datum after others, the one that takes most; of a plane, one that stops a slide if any does.
-    """
-    news = [_after(before, reference, choice).held[before.rank :] for choice in choices]
-    most = max(map(len, news))
-    enough = most if before.rank and len(reference.members) > 1 else min(most, 1)
-    good = [(choice, new) for choice, new in zip(choices, news, strict=True) if len(new) >= enough]
-    if reference.members[0][1].kind is DatumKind.PLANE:
-        good.sort(key=lambda each: all(freedom.turns for freedom in each[1]))
-    return good[0][0]
-
-
-def _as_named(references: tuple[Reference, ...], relations: tuple[Relation, ...]) -> tuple[Taken, ...] | None:
-    """What each reference takes in the first arrangement in which all can hold what is named behind them."""
-    for placed in arrangements(references, relations, turned=True):
-        orders = range(len(references))
-        if not any(out_of_reach(references[: order + 1], placed) for order in orders):
-            befores = [constraints(references[:order], placed) for order in orders]
-            return tuple(
-                Taken(
-                    _after(Constraints(), reference, placed).held,
-                    _after(before, reference, placed).held[before.rank :],
-                )
-                for before, reference in zip(befores, references, strict=True)
-            )
-    return None
-
-
-def out_of_reach(references: Sequence[Reference], placed: Arrangement) -> tuple[Freedom, ...]:
-    """Names of the last reference that its datum does not hold, standing so behind those before it."""
-    *earlier, last = references
-    reach = constraints(earlier, placed).and_also(own(last, placed).rows)
-    return tuple(name for name in last.named if not reach.forbids(name))
-
-
-@lru_cache(maxsize=4096)
-def takes_nothing(references: tuple[Reference, ...], relations: tuple[Relation, ...]) -> bool:
-    """Whether the last reference takes no freedom away in any arrangement. False where there is none."""
-    *earlier, last = references
-    found = False
-    for placed in arrangements(earlier, relations):
-        before = constraints(earlier, placed)
-        for whole in _extensions(placed, last, relations):
-            found = True
-            if before.rank == 6:
-                break
-            if _after(before, last, whole).rank > before.rank:
-                return False
-    return found
-
-
-@lru_cache(maxsize=4096)
-def holds_all(references: tuple[Reference, ...], relations: tuple[Relation, ...]) -> bool:
-    """Whether all six freedoms are gone in every arrangement. False where there is no arrangement."""
-    found = False
-    for placed in arrangements(references, relations):
-        found = True
-        if constraints(references, placed).rank < 6:
-            return False
-    return found
 
 
 def arrangements(
@@ -140,7 +40,7 @@ def arrangements(
         if not rest:
             yield placed
             return
-        for wider in _extensions(placed, rest[0], relations, turned=turned):
+        for wider in extensions(placed, rest[0], relations, turned=turned):
             yield from extend(wider, rest[1:])
 
     return extend({}, references)
@@ -150,11 +50,12 @@ def constraints(references: Sequence[Reference], placed: Arrangement) -> Constra
     """All that the references hold together."""
     held = Constraints()
     for reference in references:
-        held = _after(held, reference, placed)
+        held = after(held, reference, placed)
     return held
 
 
-def _after(before: Constraints, reference: Reference, placed: Arrangement) -> Constraints:
+def after(before: Constraints, reference: Reference, placed: Arrangement) -> Constraints:
+    """The constraints with those of one reference more: of its datum, or of the freedoms named behind it."""
     if reference.named:
         return before.and_also(freedom.row for freedom in reference.named)
     return before.and_also(own(reference, placed).rows)
@@ -172,18 +73,24 @@ def _forbidden(place: Placement) -> tuple[Row, ...]:
     return place.constraints()
 
 
-def _extensions(
+def extensions(
     placed: Arrangement, reference: Reference, relations: tuple[Relation, ...], *, turned: bool = False
 ) -> Iterator[Arrangement]:
     """The arrangements with one reference more, the most usual first."""
-    new = [(letter, geometry) for letter, geometry in reference.members if letter not in placed]
-    options = [list(_options(letter, geometry, relations)) for letter, geometry in new]
-    if not placed and not turned:
-        options[0] = [place for place in options[0] if place.direction == Z and not any(place.point)]
-    for choice in product(*options):
-        wider = placed | {letter: place for (letter, _), place in zip(new, choice, strict=True)}
-        if _agrees(wider, relations) and _together(reference, wider, relations):
-            yield wider
+
+    def extend(placed: Arrangement, members: Sequence[tuple[str, DatumGeometry]]) -> Iterator[Arrangement]:
+        if not members:
+            yield placed
+            return
+        (letter, geometry), *rest = members
+        for place in _options(letter, geometry, relations):
+            if not placed and not turned and (place.direction != Z or any(place.point)):
+                continue
+            wider = placed | {letter: place}
+            if _agrees(letter, wider, relations) and _together(letter, reference, wider, relations):
+                yield from extend(wider, rest)
+
+    return extend(placed, [member for member in reference.members if member[0] not in placed])
 
 
 def _options(letter: str, geometry: DatumGeometry, relations: tuple[Relation, ...]) -> Iterator[Placement]:
@@ -191,20 +98,23 @@ def _options(letter: str, geometry: DatumGeometry, relations: tuple[Relation, ..
     return placements(geometry, oblique=oblique)
 
 
-def _agrees(placed: Arrangement, relations: tuple[Relation, ...]) -> bool:
+def _agrees(letter: str, placed: Arrangement, relations: tuple[Relation, ...]) -> bool:
+    """Whether the feature placed last stands as the callouts say to those placed before."""
     return all(
         agrees(relation, placed[relation.letter], placed[relation.to])
         for relation in relations
-        if relation.letter in placed and relation.to in placed
+        if letter in (relation.letter, relation.to) and relation.letter in placed and relation.to in placed
     )
 
 
-def _together(reference: Reference, placed: Arrangement, relations: tuple[Relation, ...]) -> bool:
-    """Whether the members of a common datum stand as such members do: of one kind, in one direction."""
-    members = [placed[letter] for letter, _ in reference.members]
-    told = {frozenset((relation.letter, relation.to)) for relation in relations}
-    letters = frozenset(letter for letter, _ in reference.members)
-    if len(members) < 2 or any(pair <= letters for pair in told):
-        return True
-    alike = {member.geometry.kind for member in members}
-    return len(alike) > 1 or DatumKind.POINT in alike or len({member.direction for member in members}) == 1
+def _together(
+    letter: str, reference: Reference, placed: Arrangement, relations: tuple[Relation, ...]
+) -> bool:
+    """Whether members of a common datum of one kind stand in one direction, unless callouts say otherwise."""
+    place = placed[letter]
+    told = {other for r in relations if letter in (r.letter, r.to) for other in (r.letter, r.to)}
+    return all(
+        placed[other].direction == place.direction
+        for other, geometry in reference.members
+        if other in placed and other not in told and geometry.kind is place.geometry.kind
+    )

@@ -52,9 +52,13 @@ def loop_use(ring: tuple[str, ...], scheme: DatumScheme) -> Use:
         use
         for use in scheme.uses
         for letter in letters_of(use.callout)
-        if letter in ring and any(_names(ref) & (set(ring) - {letter}) for ref in use.segment.datums)
+        if letter in ring and any(letter not in names and names & set(ring) for names in _named(use.segment))
     ]
     return uses[-1]
+
+
+def _named(segment: Segment) -> list[set[str]]:
+    return [_names(ref) for ref in segment.datums]
 
 
 def _names(ref: DatumRef) -> set[str]:
@@ -83,15 +87,14 @@ def _opens(part: object) -> bool:
 
 
 def _controlled_to(feature: Established, scheme: DatumScheme) -> tuple[str, ...]:
-    """Letters of other datum features that a feature's own frames refer to; none where targets establish it."""
-    if feature.targets:
+    """Letters of other datum features that a feature's own frames refer to.
+
+    None where targets establish it, or where its letter stands on two features and so may be a slip.
+    """
+    if feature.targets or len(feature.callouts) != 1:
         return ()
-    named = [
-        _names(ref)
-        for callout in feature.callouts
-        for segment in _governing(callout, feature.letter)
-        for ref in segment.datums
-    ]
+    lines = _governing(feature.callouts[0], feature.letter)
+    named = [names for segment in lines for names in _named(segment)]
     found = {letter for names in named if feature.letter not in names for letter in names}
     return tuple(letter for letter in scheme.features if letter in found)
 

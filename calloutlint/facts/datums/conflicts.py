@@ -16,6 +16,8 @@ from calloutlint.facts.datums.uses import Use
 from calloutlint.model.fastener import Joint
 from calloutlint.model.frame import Characteristic
 
+RUNOUT = {Characteristic.CIRCULAR_RUNOUT, Characteristic.TOTAL_RUNOUT}
+
 
 @dataclass(frozen=True, slots=True)
 class Conflict:
@@ -67,7 +69,8 @@ def _members(joint: Joint, scheme: DatumScheme) -> set[int]:
 
 
 def _letters(use: Use) -> Hashable:
-    return tuple(sorted(use.order))
+    """What two lines must have in common to be compared: a runout has its axis first by its nature."""
+    return use.segment.characteristic in RUNOUT, tuple(sorted(use.order))
 
 
 def _order(use: Use) -> Hashable:

@@ -7,7 +7,8 @@ ISO 5459 (datum systems).
 from dataclasses import dataclass
 from itertools import takewhile
 
-from calloutlint.facts.datums.arrangement import Reference, holds_all, takes_nothing, usual
+from calloutlint.facts.datums.arrangement import Reference
+from calloutlint.facts.datums.claims import holds_all, takes_nothing, usual
 from calloutlint.facts.datums.kinds import DatumKind
 from calloutlint.facts.datums.motion import FREEDOMS, Freedom
 from calloutlint.facts.datums.relations import Relation
@@ -115,11 +116,19 @@ def _assumed(references: tuple[Reference | None, ...], order: int, scheme: Datum
     letters = list(dict.fromkeys(letter for letter, _ in reference.members))
     before = [letter for r in _present(references[:order]) for letter, _ in r.members]
     if len(letters) > 1 and not scheme.relations.tell(letters, letters):
-        said.append(f"{' and '.join(letters)} taken as standing in one line or plane")
+        said.append(f"{' and '.join(letters)} taken as {_usual_union(reference)}")
     if before and _has_direction(reference) and not scheme.relations.tell(letters, before):
         others = " and ".join(dict.fromkeys(before))
         said.append(f"{'-'.join(letters)} taken in its usual direction to {others}")
     return "; ".join(said) or None
+
+
+def _usual_union(reference: Reference) -> str:
+    kinds = {geometry.kind for _, geometry in reference.members}
+    if kinds == {DatumKind.AXIS}:
+        return "coaxial"
+    flat = kinds <= {DatumKind.PLANE, DatumKind.CENTRE_PLANE}
+    return "one plane" if flat else "standing in their usual directions"
 
 
 def _has_direction(reference: Reference) -> bool:

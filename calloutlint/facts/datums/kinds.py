@@ -135,11 +135,11 @@ def _several(callout: Callout, single: DatumGeometry, number: int) -> DatumGeome
     """Several features under one datum letter: a pattern where a tolerance locates them to each other."""
     characteristics = {segment.characteristic for segment in callout.segments}
     if single.kind is DatumKind.PLANE:
-        return DatumGeometry(DatumKind.PLANE, assumed=f"{number} surfaces taken as coplanar")
+        return DatumGeometry(DatumKind.PLANE, assumed=f"with its {number} surfaces taken as one plane")
     if characteristics & _LOCATES:
         return DatumGeometry(DatumKind.PATTERN, member=single.kind, count=number)
     if single.kind is DatumKind.AXIS and characteristics & _COAXIAL:
-        return DatumGeometry(DatumKind.AXIS, assumed=f"{number} features taken as coaxial")
+        return DatumGeometry(DatumKind.AXIS, assumed=f"with its {number} features taken as coaxial")
     return None
 
 

@@ -10,7 +10,8 @@ Source: ASME Y14.5, customized datum reference frames.
 from dataclasses import dataclass
 from functools import lru_cache
 
-from calloutlint.facts.datums.arrangement import Reference, arrangements, out_of_reach
+from calloutlint.facts.datums.arrangement import Reference, arrangements
+from calloutlint.facts.datums.claims import out_of_reach, too_many
 from calloutlint.facts.datums.motion import Freedom
 from calloutlint.facts.datums.relations import Relation
 from calloutlint.facts.datums.scheme import DatumScheme, freedom_named
@@ -59,6 +60,8 @@ def _beyond(segment: Segment, order: int, scheme: DatumScheme) -> tuple[Freedom,
 @lru_cache(maxsize=4096)
 def least_beyond(references: tuple[Reference, ...], relations: tuple[Relation, ...]) -> tuple[Freedom, ...]:
     """Names of the last reference that it cannot hold, in the arrangement that leaves the fewest."""
+    if too_many(references):
+        return ()
     fewest: tuple[Freedom, ...] | None = None
     for placed in arrangements(references, relations, turned=True):
         faults = [out_of_reach(references[: order + 1], placed) for order in range(len(references))]

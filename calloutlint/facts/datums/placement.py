@@ -53,8 +53,6 @@ class Placement:
         kind = self.geometry.kind
         if kind is DatumKind.PATTERN:
             return self._pattern()
-        if kind is DatumKind.CONE:
-            return (*line(self.direction, self.point), *point(self.point))
         if self.geometry.contacts is not None and kind is DatumKind.PLANE:
             return tuple(self._contacts(self.geometry.contacts))
         return _element(kind, self.direction, self.point)
@@ -92,6 +90,8 @@ class Placement:
 def _element(kind: DatumKind, direction: Vector, at: Vector) -> tuple[Row, ...]:
     if kind is DatumKind.POINT:
         return point(at)
+    if kind is DatumKind.CONE:
+        return (*line(direction, at), *point(at))
     return line(direction, at) if kind is DatumKind.AXIS else plane(direction, at)
 
 

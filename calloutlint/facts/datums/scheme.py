@@ -68,8 +68,12 @@ class DatumScheme:
         return kinds.pop() if len(kinds) == 1 else None
 
     def reference(self, ref: DatumRef) -> Reference | None:
-        """A reference ready to be computed; None where one of its features is not known."""
-        members = [(letter.letter, self._geometry(letter.letter)) for letter in ref.letters]
+        """A reference ready to be computed; None where one of its features is not known.
+
+        Of a common datum the first four members stand for all: as a rule one more of them adds nothing.
+        """
+        letters = list(dict.fromkeys(letter.letter for letter in ref.letters))[:_MOST_MEMBERS]
+        members = [(letter, self._geometry(letter)) for letter in letters]
         known = tuple((letter, geometry) for letter, geometry in members if geometry is not None)
         uses = _modifiers(ref)
         if not known or len(known) < len(members) or _reduced({g.kind for _, g in known}, uses):
@@ -86,6 +90,7 @@ class DatumScheme:
         return feature.geometry if feature else None
 
 
+_MOST_MEMBERS = 4
 _SECTIONS = {Modifier.ANY_CROSS_SECTION, Modifier.SPECIFIED_CROSS_SECTION, Modifier.ANY_LONGITUDINAL_SECTION}
 _SITUATIONS = {
     Modifier.POINT: DatumKind.POINT,
