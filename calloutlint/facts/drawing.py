@@ -4,12 +4,11 @@ from __future__ import annotations
 
 import re
 from decimal import Decimal
-from functools import cached_property
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.callout import CalloutView
 from calloutlint.facts.datum_index import DatumIndex
-from calloutlint.facts.view import View, fact
+from calloutlint.facts.view import View, fact, kept
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, SheetLine, Standard, System
 from calloutlint.model.size import Size
@@ -202,7 +201,7 @@ class DrawingView(View):
         """Whether an earlier drawing of the package has the same number, revision and sheet."""
         return self.package.is_duplicate(self.part)
 
-    @cached_property
+    @kept
     def datums(self) -> DatumIndex:
         """The datums of the drawing, its other sheets in the package included."""
         return self.package.datum_index(self.part)

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from calloutlint.facts.onward import PartView
-from calloutlint.facts.view import fact
+from calloutlint.facts.view import fact, kept
 from calloutlint.model.callout import Callout, Meaning
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import Depth, Size, SizeForm, Through
@@ -74,7 +74,7 @@ class FeatureView(PartView):
         """Whether it is a shaft, tab or other external feature."""
         return None if self._side is None else not self._side
 
-    @property
+    @kept
     def _side(self) -> bool | None:
         said = side_by_words(self.part)
         if said is not None:

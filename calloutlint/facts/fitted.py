@@ -205,14 +205,12 @@ def paired(size: Size, callout: CalloutView) -> FitCode | None:
 
 def mating_of(size: Size, callout: CalloutView) -> MatingView | None:
     """The fit of a callout's leading size; None where no words call it any, or its partner is not known."""
-    called = {kind for meaning, kind in CALLED.items() if meaning in callout.part.meanings}
+    meanings = callout.part.meanings
+    called = {kind for meaning, kind in CALLED.items() if meaning in meanings}
+    if len(called) != 1 or size is not leading_size(callout.part):
+        return None
     own = callout.view_of(size)
-    if (
-        len(called) != 1
-        or size is not leading_size(callout.part)
-        or own.smallest is None
-        or own.largest is None
-    ):
+    if own.smallest is None or own.largest is None:
         return None
     found = _together(size, callout, own.smallest, own.largest)
     if found is None:

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from collections import Counter
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.datum import DatumView
@@ -195,8 +194,8 @@ class FrameView(PartView):
     @fact
     def repeated_letters(self) -> tuple[str, ...]:
         """Letters that stand in two of its datum compartments."""
-        compartments = Counter(letter for datum in self.datums for letter in set(datum.letters))
-        return tuple(sorted(letter for letter, number in compartments.items() if number > 1))
+        letters = [letter for datum in self.datums for letter in set(datum.letters)]
+        return tuple(sorted({letter for letter in letters if letters.count(letter) > 1}))
 
     @fact
     def doubled_letters(self) -> tuple[str, ...]:

@@ -6,7 +6,7 @@ from decimal import Decimal
 
 from calloutlint.facts.feature import leading_size
 from calloutlint.facts.onward import PartView, amount_in
-from calloutlint.facts.view import Length, fact
+from calloutlint.facts.view import Length, fact, kept
 from calloutlint.model.callout import Callout, Meaning
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.hole import StepKind
@@ -27,7 +27,7 @@ class HoleView(PartView):
     subject = "hole"
     part: Callout
 
-    @property
+    @kept
     def _size(self) -> Size | None:
         size = leading_size(self.part)
         return size if size is not None and size.form is SizeForm.DIAMETER and not size.doubtful else None

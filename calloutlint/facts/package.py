@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from functools import cached_property
 
 from calloutlint.facts.assembly import Assembly
 from calloutlint.facts.callout import CalloutView
@@ -12,7 +11,7 @@ from calloutlint.facts.drawing import DrawingView
 from calloutlint.facts.fastener import FastenerView
 from calloutlint.facts.joint import JointView, MemberView
 from calloutlint.facts.passage import PassageView
-from calloutlint.facts.view import View, fact
+from calloutlint.facts.view import View, fact, kept
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, Package
 
@@ -45,7 +44,7 @@ class PackageView(View):
         """Whether several drawings are at hand, so that one that a joint names ought to be among them."""
         return len(self.part.drawings) > 1 or bool(self.part.joints)
 
-    @cached_property
+    @kept
     def joints(self) -> tuple[JointView, ...]:
         """The stated joints of the package."""
         return tuple(JointView(joint, self) for joint in self.assembly.joints)
@@ -66,12 +65,12 @@ class PackageView(View):
                 if fastener.text not in used:
                     yield FastenerView(fastener, drawing.unit, drawing)
 
-    @cached_property
+    @kept
     def assembly(self) -> Assembly:
         """The stated joints of the package."""
         return Assembly(self.part)
 
-    @cached_property
+    @kept
     def _views(self) -> dict[int, CalloutView]:
         return {id(view.part): view for drawing in self.drawings for view in drawing.callouts}
 

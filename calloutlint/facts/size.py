@@ -7,7 +7,7 @@ from enum import StrEnum
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.onward import PartView, amount_in
-from calloutlint.facts.view import Length, fact
+from calloutlint.facts.view import Length, fact, kept
 from calloutlint.model.drawing import GeneralTolerances
 from calloutlint.model.size import Deviations, Limits, PlusMinus, Size, SizeForm, SizeModifier, SizeStatus
 from calloutlint.model.values import Value
@@ -69,16 +69,8 @@ def deviations(size: Size, unit: Unit | None) -> tuple[Decimal, Decimal] | None:
 
 def written_values(size: Size) -> tuple[Value, ...]:
     """Every number of a size in its own unit: nominal, deviations or limits; the dual dimension left out."""
-    match size.tolerance:
-        case PlusMinus(amount):
-            more: tuple[Value, ...] = (amount,)
-        case Deviations(upper, lower):
-            more = (upper, lower)
-        case Limits(first, second):
-            more = (first, second)
-        case _:
-            more = ()
-    return more if size.nominal is None else (size.nominal, *more)
+    tolerance = size.tolerance.values if size.tolerance else ()
+    return tolerance if size.nominal is None else (size.nominal, *tolerance)
 
 
 def spelled(size: Size) -> str:
@@ -150,7 +142,7 @@ class SizeView(PartView):
         limits = self._limits
         return limits[1] - limits[0] if limits else None
 
-    @property
+    @kept
     def _limits(self) -> tuple[Decimal, Decimal] | None:
         explicit = bounds(self.part, self.unit)
         if explicit or self.part.status is not SizeStatus.TOLERANCED or self.part.fit:
@@ -194,7 +186,7 @@ class SizeView(PartView):
         value = self.part.nominal
         return SIGNS.get(self.part.form, "") + value.text if value else "the size"
 
-    @property
+    @kept
     def _written_ends(self) -> tuple[Decimal, Decimal] | None:
         tolerance = self.part.tolerance
         if isinstance(tolerance, Limits):

@@ -31,8 +31,8 @@ Number = Annotated[Decimal, "number"]
 T = TypeVar("T")
 
 
-class fact(Generic[T]):  # noqa: N801 - used as a decorator only
-    """Marks a method of a view as a fact: computed once, then kept on the view.
+class kept(Generic[T]):  # noqa: N801 - used as a decorator only
+    """A value that is computed at its first look-up, then kept on its object.
 
     Like `functools.cached_property`, without the lock that one takes at every first look-up until Python 3.12.
     """
@@ -55,6 +55,10 @@ class fact(Generic[T]):  # noqa: N801 - used as a decorator only
             return self
         value = view.__dict__[self.name] = self.compute(view)
         return value
+
+
+class fact(kept[T]):  # noqa: N801 - used as a decorator only
+    """Marks a method of a view as a fact, which rules can ask for by its name."""
 
 
 @dataclass(frozen=True, slots=True)

@@ -13,6 +13,7 @@ from calloutlint.model.thread import Thread
 from calloutlint.model.values import Value
 from calloutlint.units import Unit
 
+EXACT = {SizeStatus.BASIC, SizeStatus.REFERENCE}
 UNEQUAL = "unequal decimal places"
 NEEDLESS = "a needless zero"
 SIGNED_NIL = "a sign on its nil deviation"
@@ -57,7 +58,7 @@ def uneven(callout: Callout, unit: Unit | None) -> tuple[str, ...]:
     fault_of = {Unit.INCH: _inch_fault, Unit.MM: _mm_fault}.get(unit) if unit else None
     if fault_of is None:
         return ()
-    own = (size for size in sizes_of(callout) if _in_unit(size, unit) and size.form is not SizeForm.ANGLE)
+    own = (size for size in sizes_of(callout) if size.form is not SizeForm.ANGLE and _in_unit(size, unit))
     faults = ((size, fault_of(size)) for size in own)
     return tuple(f"{spelled(size)} has {fault}" for size, fault in faults if fault)
 
@@ -67,7 +68,7 @@ def _in_unit(size: Size, unit: Unit | None) -> bool:
 
 
 def _inch_fault(size: Size) -> str | None:
-    if size.status in {SizeStatus.BASIC, SizeStatus.REFERENCE} or size.fit:
+    if size.status in EXACT or size.fit:
         return None
     return UNEQUAL if len({value.places for value in written_values(size)}) > 1 else None
 

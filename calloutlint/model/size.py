@@ -36,6 +36,11 @@ class PlusMinus:
 
     amount: Value
 
+    @property
+    def values(self) -> tuple[Value, ...]:
+        """Its numbers."""
+        return (self.amount,)
+
 
 @dataclass(frozen=True, slots=True)
 class Deviations:
@@ -43,6 +48,11 @@ class Deviations:
 
     upper: Value
     lower: Value
+
+    @property
+    def values(self) -> tuple[Value, ...]:
+        """Its numbers."""
+        return self.upper, self.lower
 
 
 @dataclass(frozen=True, slots=True)
@@ -55,6 +65,11 @@ class Limits:
     first: Value
     second: Value
     named: bool = False
+
+    @property
+    def values(self) -> tuple[Value, ...]:
+        """Its numbers."""
+        return self.first, self.second
 
 
 @dataclass(frozen=True, slots=True)

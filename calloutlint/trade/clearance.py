@@ -21,6 +21,7 @@ class ClearanceFit(StrEnum):
     LOOSE = "loose"
 
 
+_FITS = tuple(ClearanceFit)
 _NORMAL_FIRST = (ClearanceFit.NORMAL, ClearanceFit.CLOSE, ClearanceFit.LOOSE)
 
 
@@ -70,7 +71,7 @@ class ClearanceSizes:
 
     def hole(self, fit: ClearanceFit) -> ClearanceHole:
         """The published hole of one fit."""
-        return self.holes[tuple(ClearanceFit).index(fit)]
+        return self.holes[_FITS.index(fit)]
 
 
 @dataclass(frozen=True, slots=True)
@@ -117,10 +118,9 @@ def is_published(nominal: Decimal, unit: Unit) -> bool:
 
 
 def _matches(nominal: Decimal, unit: Unit, table: Unit) -> tuple[ClearanceMatch, ...]:
-    wanted, slack, entries = convert(nominal, unit, table), _slack(unit, table), _by_drill(table)
-    first = bisect_left(entries, wanted - slack, key=_drill)
-    after = bisect_right(entries, wanted + slack, key=_drill)
-    return tuple(sorted(entries[first:after], key=lambda match: _NORMAL_FIRST.index(match.fit)))
+    wanted, slack, drills = convert(nominal, unit, table), _slack(unit, table), _drills(table)
+    found = _by_drill(table)[bisect_left(drills, wanted - slack) : bisect_right(drills, wanted + slack)]
+    return tuple(sorted(found, key=lambda match: _NORMAL_FIRST.index(match.fit)))
 
 
 def _drill(match: ClearanceMatch) -> Decimal:
@@ -138,6 +138,11 @@ def _slack(unit: Unit, table: Unit) -> Decimal:
 def _by_drill(unit: Unit) -> tuple[ClearanceMatch, ...]:
     sizes = (_inch_table() if unit is Unit.INCH else _metric_table()).values()
     return tuple(sorted((ClearanceMatch(each, fit) for each in sizes for fit in ClearanceFit), key=_drill))
+
+
+@cache
+def _drills(unit: Unit) -> tuple[Decimal, ...]:
+    return tuple(_drill(match) for match in _by_drill(unit))
 
 
 @cache

@@ -1,7 +1,7 @@
 """Stock twist drills, what they are called, and how closely a drilled hole holds its size."""
 
 from bisect import bisect_left
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 from decimal import Decimal
 from functools import cache
@@ -96,10 +96,18 @@ def drilled_tolerance(diameter: Decimal, unit: Unit) -> DrilledTolerance | None:
     Source: AND10387, Holes - Drilled, Tolerances; in mm its values rounded to 0.01.
     """
     size = convert(diameter, unit, Unit.INCH)
-    for row in read_table("drilled_tolerances"):
-        if Decimal(row["over"]) < size <= Decimal(row["to"]):
-            return DrilledTolerance(*(_rounded(Decimal(row[side]), unit) for side in ("plus", "minus")))
-    return None
+    return next((tolerance for over, to, tolerance in _drilled(unit) if over < size <= to), None)
+
+
+@cache
+def _drilled(unit: Unit) -> tuple[tuple[Decimal, Decimal, DrilledTolerance], ...]:
+    """The sizes in inches over and up to which a tolerance in `unit` holds, and the tolerance."""
+    rows = read_table("drilled_tolerances")
+    return tuple((Decimal(row["over"]), Decimal(row["to"]), _tolerance(row, unit)) for row in rows)
+
+
+def _tolerance(row: Mapping[str, str], unit: Unit) -> DrilledTolerance:
+    return DrilledTolerance(*(_rounded(Decimal(row[side]), unit) for side in ("plus", "minus")))
 
 
 def _rounded(amount: Decimal, unit: Unit) -> Decimal:
@@ -107,7 +115,12 @@ def _rounded(amount: Decimal, unit: Unit) -> Decimal:
 
 
 def _place(diameter: Decimal, unit: Unit) -> int:
-    return bisect_left(stock_drills(unit), diameter, key=lambda drill: drill.diameter)
+    return bisect_left(_diameters(unit), diameter)
+
+
+@cache
+def _diameters(unit: Unit) -> tuple[Decimal, ...]:
+    return tuple(drill.diameter for drill in stock_drills(unit))
 
 
 def _has_drill(diameter: Decimal, unit: Unit, slack: Decimal) -> bool:
