@@ -3,7 +3,7 @@
 from collections.abc import Iterator
 from dataclasses import dataclass, replace
 
-from calloutlint.facts.fastener import limits_of_pin
+from calloutlint.facts.fastener import stated_limits
 from calloutlint.facts.feature import leading_size
 from calloutlint.model.callout import Callout, FastenerNote
 from calloutlint.model.drawing import Drawing, Package
@@ -114,7 +114,7 @@ def _holds(callout: Callout, fastener: Fastener) -> bool:
     size = leading_size(callout)
     if fastener.pin is None or size is None:
         return False
-    hole, pin = limits_of_pin(size), limits_of_pin(fastener.pin)
+    hole, pin = stated_limits(size), stated_limits(fastener.pin)
     largest = pin[1] if pin else (fastener.pin.nominal.amount if fastener.pin.nominal else None)
     if hole is None or largest is None:
         return True

@@ -25,8 +25,8 @@ from calloutlint.units import Unit, convert
 COUNTERSUNK = {Head.SOCKET_COUNTERSUNK, Head.FLAT}
 
 
-def limits_of_pin(pin: Size) -> tuple[Decimal, Decimal] | None:
-    """Smallest and largest diameter of a pin or of the hole for one, in its own unit; None without tolerance.
+def stated_limits(pin: Size) -> tuple[Decimal, Decimal] | None:
+    """Smallest and largest size by its own tolerance or fit code, in its own unit; None where it has neither.
 
     General tolerances are not looked at. Source of fit codes: ISO 286-1.
     """
@@ -101,7 +101,7 @@ class FastenerView(View):
         pin = self.part.pin
         if pin is None:
             return None
-        unit, limits = unit_of(pin) or self.unit, limits_of_pin(pin)
+        unit, limits = unit_of(pin) or self.unit, stated_limits(pin)
         if limits is not None:
             return Value(str(limits[1]), limits[1], unit)
         if self._dowel is not None:
@@ -112,7 +112,7 @@ class FastenerView(View):
     def _dowel(self) -> PinLimits | None:
         """Limits of a dowel pin that states none, by its standard."""
         pin = self.part.pin
-        if pin is None or pin.nominal is None or limits_of_pin(pin) is not None:
+        if pin is None or pin.nominal is None or stated_limits(pin) is not None:
             return None
         unit = pin.nominal.unit or self.unit
         if "DOWEL" not in self.part.text.upper() or unit not in {Unit.MM, Unit.INCH}:
@@ -130,7 +130,7 @@ class FastenerView(View):
         pin = self.part.pin
         if pin is None or self.part.thread is not None:
             return None
-        limits, unit = limits_of_pin(pin), unit_of(pin) or self.unit
+        limits, unit = stated_limits(pin), unit_of(pin) or self.unit
         if limits is None and self._dowel is not None:
             return self._here(self._dowel.smallest, unit)
         return self._here(limits[0], unit) if limits else None

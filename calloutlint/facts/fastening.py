@@ -142,6 +142,10 @@ class Drill(Protocol):
     """What is needed of a stock drill."""
 
     @property
+    def name(self) -> str:
+        """What the trade calls it."""
+
+    @property
     def diameter(self) -> Decimal:
         """Nominal diameter."""
 
