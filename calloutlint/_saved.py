@@ -4,14 +4,15 @@ What is kept is pickled: it is therefore read only from a folder that nobody els
 """
 
 import os
-import platform
+import pickle
+import re
 import stat
-import tempfile
+import sys
 from collections.abc import Callable
 from contextlib import suppress
 from hashlib import sha256
 from pathlib import Path
-from typing import IO, TypeVar
+from typing import Any, TypeVar
 
 from calloutlint import __version__
 
@@ -20,34 +21,58 @@ T = TypeVar("T")
 KEPT = 24
 
 
-def saved_path(*made_of: object) -> Path | None:
+def kept(make: Callable[[], T], *made_of: object) -> T:
+    """What `make` gives, from an earlier run where this version has made it of the same before.
+
+    `made_of` is everything that the outcome depends on, written out in full by `repr`.
+    """
+    path = _path(made_of)
+    if path is None:
+        return make()
+    found: T | None = _load(path)
+    if found is None:
+        found = make()
+        _save(path, found)
+    return found
+
+
+def compiled(pattern: str) -> re.Pattern[str]:
+    """A pattern so long that to compile it takes longer than to read it back compiled."""
+    return kept(lambda: re.compile(pattern), pattern)
+
+
+def _path(made_of: object) -> Path | None:
     """Where to keep what is made of `made_of` by this version; None where there is no private folder."""
     folder = _private_folder()
     if folder is None:
         return None
-    key = repr((made_of, __version__, platform.python_version()))
+    key = repr((made_of, __version__, sys.version))
     return folder / f"{sha256(key.encode()).hexdigest()}.tables"
 
 
-def load(path: Path, read: Callable[[IO[bytes]], T]) -> T | None:
-    """What `read` makes of the file; None where there is none or it does not load, whatever is wrong."""
+def _load(path: Path) -> Any:
+    """What the file keeps; None where there is none or it does not load, whatever is wrong."""
     with suppress(Exception), path.open("rb") as file:
-        return read(file)
+        return pickle.load(file)
     return None
 
 
-def save(path: Path, write: Callable[[IO[bytes]], object]) -> None:
-    """Keep what `write` writes, whole or not at all; a folder that cannot be written is no error.
+def _save(path: Path, made: object) -> None:
+    """Keep what was made, whole or not at all; what cannot be kept is made again by the next run.
 
     What was written longest ago is thrown away, so that the folder does not grow from version to version.
     """
-    with suppress(OSError):
+    import tempfile  # only a run that finds nothing kept pays for these
+
+    from calloutlint._pickling import write
+
+    with suppress(Exception):
         handle, unfinished = tempfile.mkstemp(dir=path.parent)
         with os.fdopen(handle, "wb") as file:
-            write(file)
+            write(made, file)
         Path(unfinished).replace(path)
-        kept = sorted(path.parent.glob("*.tables"), key=lambda file: file.stat().st_mtime, reverse=True)
-        for old in kept[KEPT:]:
+        files = sorted(path.parent.glob("*.tables"), key=lambda file: file.stat().st_mtime, reverse=True)
+        for old in files[KEPT:]:
             old.unlink()
 
 

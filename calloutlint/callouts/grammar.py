@@ -1,4 +1,4 @@
-"""Loads a grammar from its fragments, and keeps the built parser: its tables take longest at start-up."""
+"""Builds a parser from the fragments of its grammar, and keeps it: its tables take longest at start-up."""
 
 from collections.abc import Sequence
 from typing import Any
@@ -7,7 +7,7 @@ import lark
 from lark import Lark
 
 from calloutlint._resources import read_text
-from calloutlint._saved import load, save, saved_path
+from calloutlint._saved import kept
 
 
 def load_grammar(names: tuple[str, ...], start: str | Sequence[str], **options: Any) -> Lark:
@@ -18,10 +18,13 @@ def load_grammar(names: tuple[str, ...], start: str | Sequence[str], **options: 
     text = "\n".join(read_text("grammar", f"{name}.lark") for name in names)
     starts = [start] if isinstance(start, str) else list(start)
     plain_options = repr((starts, sorted(options.items(), key=str))).partition(" object at ")[0]
-    path = saved_path(text, plain_options, lark.__version__)
-    if path is not None and (saved := load(path, Lark.load)) is not None:
-        return saved
-    built = Lark(text, parser="lalr", lexer="contextual", start=starts, **options)
-    if path is not None:
-        save(path, built.save)
-    return built
+    return kept(lambda: _built(text, starts, options), text, plain_options, lark.__version__)
+
+
+def _built(text: str, starts: Sequence[str], options: dict[str, Any]) -> Lark:
+    """The parser, with the patterns of its lexers compiled: by itself each is when it is first needed."""
+    parser = Lark(text, parser="lalr", lexer="contextual", start=starts, **options)
+    lexer = parser.parser.lexer
+    for each in (*lexer.lexers.values(), lexer.root_lexer):
+        _ = each.scanner
+    return parser

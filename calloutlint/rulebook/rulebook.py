@@ -2,15 +2,14 @@
 
 import hashlib
 import json
-import pickle
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 from importlib.resources import files
 from pathlib import Path
 
-from calloutlint import _saved
 from calloutlint._resources import folder, read_text
+from calloutlint._saved import kept
 from calloutlint.facts.subjects import subjects, walk
 from calloutlint.model.drawing import Package
 from calloutlint.rulebook.engine import Engine, ordered
@@ -55,13 +54,7 @@ def load_rulebook(house: Sequence[Path] = ()) -> Rulebook:
         CalloutlintError: a house folder is missing.
     """
     texts = read_texts((folder("rules"), *house))
-    path = _saved.saved_path(texts, list(_code_stamps()))
-    if path is not None and isinstance(kept := _saved.load(path, pickle.load), Rulebook):
-        return kept
-    built = _built(texts)
-    if path is not None:
-        _saved.save(path, lambda file: pickle.dump(built, file))
-    return built
+    return kept(lambda: _built(texts), texts, list(_code_stamps()))
 
 
 def _built(texts: Sequence[SheetText]) -> Rulebook:
