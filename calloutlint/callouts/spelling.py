@@ -89,7 +89,7 @@ _JOINS = re.compile(
 
 
 def _stands_between_numbers(text: str, start: int, end: int) -> bool:
-    """Whether a word such as DIA ends one number before another begins: `.500 DIA .25 DEEP`, not `A1 DIA .25`."""
+    """Whether a word like DIA ends one number before another: in `.500 DIA .25 DEEP`, not in `A1 DIA .25`."""
     before = _NUMBER_BEFORE.search(text, max(0, start - 12), start)
     return before is not None and _NUMBER_AFTER.match(text, end) is not None
 

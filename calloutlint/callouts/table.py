@@ -66,7 +66,7 @@ CHARACTERISTICS = _rows(
     ("∠", "ANG", "angularity", "ANGULARITY", "⦟", "⌳", r"{\Fgdt;a}"),
     ("⟂", "PERP", "perpendicularity", "PERPENDICULARITY", "SQUARENESS", "⊥", "⏊", r"{\Fgdt;b}"),
     ("∥", "PAR", "parallelism", "PARALLELISM", "//", "‖", "⫽", "⫻", r"{\Fgdt;f}"),
-    ("⌖", "POS", "position", "POSITION", "TRUE POSITION", "TRUE POS", "TP", "⊕", "⨁", r"{\Fgdt;j}"),
+    ("⌖", "POS", "position", "POSITION", "TRUE POSITION", "TRUE POS", "TP", "T.P.", "⊕", "⨁", r"{\Fgdt;j}"),
     ("◎", "CONC", "concentricity", "CONCENTRICITY", "COAXIALITY", "⌾", "⊚", r"{\Fgdt;r}"),
     ("⌯", "SYM", "symmetry", "SYMMETRY", "≡", r"{\Fgdt;i}"),
     (
@@ -81,7 +81,7 @@ CHARACTERISTICS = _rows(
         "⭧",
         r"{\Fgdt;h}",
     ),
-    ("⌰", "TRUN", "total runout", "TOTAL RUNOUT", "TOTAL RUN-OUT", "⇗", r"{\Fgdt;t}"),
+    ("⌰", "TRUN", "total runout", "TOTAL RUNOUT", "TOTAL RUN-OUT", "⇗", "↗↗", r"{\Fgdt;t}"),
 )
 
 MODIFIERS = _rows(

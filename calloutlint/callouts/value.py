@@ -3,6 +3,7 @@
 import re
 from decimal import Decimal
 from fractions import Fraction
+from functools import lru_cache
 
 from calloutlint.model.size import Size
 from calloutlint.model.values import Value
@@ -20,6 +21,7 @@ _NUMBER = re.compile(
 _CLEAN = re.compile(r"\d+\.\d+|\.\d+|\d+").fullmatch
 
 
+@lru_cache(maxsize=8192)
 def parse_value(text: str, unit: Unit | None) -> Value:
     """The number `text` as a value; `unit` is what it is in unless it carries a unit of its own.
 

@@ -78,6 +78,8 @@ def nearest_spelling(word: str) -> str | None:
     upper = word.upper().strip(".,;:()\"'|[]")
     if not any(character.isalpha() for character in upper):
         return None
+    if upper == "PROFILE":
+        return "PROFILE OF A SURFACE"
     if (slip := slip_of(word)) is not None:
         return slip
     close = get_close_matches(upper, _KNOWN, n=1, cutoff=0.6)

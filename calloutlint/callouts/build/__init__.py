@@ -23,8 +23,7 @@ def build(lines: Sequence[Line]) -> tuple[Part, ...]:
 
 def _read(state: State, line: Line) -> None:
     state.begin(line)
-    for at, item in enumerate(line.items):
-        state.following = line.items[at + 1 :]
+    for state.at, item in enumerate(line.items):
         kind = item.data if isinstance(item, Tree) else item.type
         if kind not in _MAY_BE_WORDS:
             state.end_words()
@@ -33,14 +32,15 @@ def _read(state: State, line: Line) -> None:
         else:
             _TOKENS[kind](state, item)
         state.previous = item
-        if _is_misspelled_frame(state) and state.following:
+        if state.broken and _is_misspelled_frame(state):
             _take_rest(state)
             break
     state.end_words()
     take_count.end_count(state)
     if state.depth is not None and state.depth.size is None:
         take_hole.place_extent(state, state.depth)
-    _mark_doubtful(state)
+    if state.broken:
+        _mark_doubtful(state)
 
 
 def _take_tree(state: State, tree: Tree[Token]) -> None:
@@ -63,7 +63,10 @@ def _holds_frame(state: State) -> bool:
 
 def _take_rest(state: State) -> None:
     """Keeps as plain words what follows a misspelled characteristic: what it would mean is not known."""
-    start, end = _first_token(state.following[0]), _last_token(state.following[-1])
+    rest = state.line.items[state.at + 1 :]
+    if not rest:
+        return
+    start, end = _first_token(rest[0]), _last_token(rest[-1])
     span = state.line.span(start, end)
     state.add_words(state.line.written(span), span)
 
@@ -77,7 +80,8 @@ def _last_token(node: Token | Tree[Token]) -> Token:
 
 
 def _end(state: State) -> None:
-    """A deviation whose partner never came cannot be read."""
+    """A deviation whose partner never came cannot be read; a scope without a frame is words."""
+    state.end_scope()
     for at, part in reversed(list(enumerate(state.parts))):
         if isinstance(part, SizeDraft) and part.deviation is not None:
             part.doubtful = True
@@ -106,6 +110,7 @@ _TREES: dict[str, Callable[[State, Tree[Token]], None]] = {
     "frame": take_frame.take_frame,
     "lower": take_frame.take_lower,
     "target": take_frame.take_target,
+    "lost": take_word.take_lost,
 }
 _TOKENS: dict[str, Callable[[State, Token], None]] = {
     "COUNT": take_count.take_count,
@@ -139,7 +144,6 @@ _TOKENS: dict[str, Callable[[State, Token], None]] = {
     "DESIGNATION": take_word.take_plain,
     "WITHIN": take_word.take_plain,
     "STRAY": take_word.as_word,
-    "UNREAD": take_word.take_unread,
 }
 # Pieces that may turn out to be plain words: a run of words goes on through them.
 _MAY_BE_WORDS = {
@@ -160,5 +164,5 @@ _MAY_BE_WORDS = {
     "STARTS",
     "DATUM_FEATURE",
     "target",
-    "UNREAD",
+    "lost",
 }

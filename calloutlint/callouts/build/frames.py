@@ -16,11 +16,12 @@ _COMPOSITE = {Characteristic.POSITION, Characteristic.SURFACE_PROFILE, Character
 
 @dataclass(frozen=True, slots=True)
 class FrameRead:
-    """What a `frame` or `lower` node gave: segments, words after it, and pieces that cannot be read."""
+    """What a `frame` or `lower` node gave: segments, words after it, what cannot be read, where it applies."""
 
     segments: list[SegmentDraft]
     words: list[Token]
     unread: list[tuple[Token, str]]
+    scopes: list[Token]
 
 
 def read_frame(pieces: Sequence[Token], line: Line, above: Characteristic | None = None) -> FrameRead:
@@ -28,7 +29,7 @@ def read_frame(pieces: Sequence[Token], line: Line, above: Characteristic | None
     characteristic = above or CHARACTERISTIC_OF[pieces[0][-1]]
     content = pieces if above else pieces[1:]
     barred = any(piece.type == "BAR" for piece in content)
-    read = FrameRead([], [], [])
+    read = FrameRead([], [], [], [])
     for segment in _split(content, characteristic):
         reader = SegmentReader(line, barred=barred)
         reader.read(segment)
@@ -37,6 +38,7 @@ def read_frame(pieces: Sequence[Token], line: Line, above: Characteristic | None
         read.segments.append(reader.finish(characteristic, span))
         read.words.extend(reader.words)
         read.unread.extend(reader.unread)
+        read.scopes.extend([] if reader.scope is None else [reader.scope])
     return read
 
 

@@ -25,7 +25,7 @@ _SHAPES = {"⌀": ZoneShape.DIAMETER, "S⌀": ZoneShape.SPHERE}
 _PER = re.compile(r"/⌀?\s*(.+?)(?:\s?[xX×]\s?(.+))?").fullmatch
 _FREEDOM = re.compile("[a-z]")
 _WORDS = {"WORD", "UNREAD", "ON_CIRCLE"}
-_KEEPS_WORDS = _WORDS | {"BAR", "CLOSE_BOX"}
+_KEEPS_WORDS = _WORDS | {"BAR", "CLOSE_BOX", "SCOPE"}
 
 
 class _Datum:
@@ -71,6 +71,7 @@ class SegmentReader:
         self.compartment = 0
         self.filled = False
         self.loose: Token | None = None
+        self.scope: Token | None = None
         self.following: Token | None = None
         self.words: list[Token] = []
         self.unread: list[tuple[Token, str]] = []
@@ -229,6 +230,9 @@ class SegmentReader:
         if self.datums:
             self.datums[-1].closed = True
 
+    def _scope(self, piece: Token) -> None:
+        self.scope = piece
+
     def _nothing(self, piece: Token) -> None:
         """Brackets and filling words say nothing of their own."""
 
@@ -252,4 +256,5 @@ _TAKE: dict[str, Callable[[SegmentReader, Token], None]] = {
     "OPEN_GROUP": SegmentReader._nothing,
     "CLOSE_BOX": SegmentReader._nothing,
     "FILLER": SegmentReader._nothing,
+    "SCOPE": SegmentReader._scope,
 }

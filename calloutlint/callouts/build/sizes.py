@@ -49,7 +49,7 @@ def read_size(tree: Tree[Token], line: Line) -> SizeDraft:
     pieces = [child for child in tree.children if isinstance(child, Token)]
     draft = SizeDraft(SizeForm.LINEAR, None, line.span(pieces[0], pieces[-1]))
     for piece in pieces:
-        if piece.type == "NUMBER":
+        if piece.type in {"NUMBER", "NEGATIVE"}:
             draft.nominal = line.value(piece)
             if "°" in piece:
                 draft.form = SizeForm.ANGLE
@@ -90,14 +90,23 @@ def _one_deviation(draft: SizeDraft, value: Value) -> None:
     if draft.deviation is None:
         draft.deviation = value
     else:
-        draft.tolerance, draft.deviation = Deviations(draft.deviation, value), None
+        draft.tolerance, draft.deviation = upper_and_lower(draft.deviation, value), None
+
+
+def upper_and_lower(first: Value, second: Value) -> Deviations:
+    """Two deviations as the drawing means them: of `-.000 +.005` the second is the upper one.
+
+    Two with the same sign stay as written: there the order is what has to be checked.
+    """
+    lower_first = first.text[0] != "+" and second.text[0] != "-" and first.text[0] != second.text[0]
+    return Deviations(second, first) if lower_first else Deviations(first, second)
 
 
 def _deviations(text: str, line: Line) -> Deviations:
     match = _PAIR(text)
     if match is None:
         raise ValueError(f"'{text}' is not a pair of deviations.")
-    return Deviations(line.value(match[1]), line.value(match[2]))
+    return upper_and_lower(line.value(match[1].replace(" ", "")), line.value(match[2].replace(" ", "")))
 
 
 def _limits(text: str, line: Line) -> Limits:

@@ -1,7 +1,5 @@
 """What the second pass knows while it reads: the parts so far, and what waits for its partner on this line."""
 
-from collections.abc import Sequence
-
 from lark import Token, Tree
 
 from calloutlint.callouts.build.drafts import (
@@ -33,6 +31,7 @@ class State:
     def __init__(self) -> None:
         self.parts: list[Draft | Part] = []
         self.scope: Scope | None = None
+        self.scope_text = ""
         self.line: Line
 
     def begin(self, line: Line) -> None:
@@ -40,7 +39,8 @@ class State:
         self.line = line
         self.first = len(self.parts)
         self.previous: Node | None = None
-        self.following: Sequence[Node] = ()
+        self.at = 0
+        self.broken = False
         self.size: SizeDraft | None = None
         self.count: Count | None = None
         self.count_at = 0
@@ -74,9 +74,10 @@ class State:
 
     def follows(self, kind: str, at: int = 0) -> bool:
         """Whether the next node but `at` is a rule or a terminal called `kind`."""
-        if at >= len(self.following):
+        place = self.at + 1 + at
+        if place >= len(self.line.items):
             return False
-        node = self.following[at]
+        node = self.line.items[place]
         return bool((node.data if isinstance(node, Tree) else node.type) == kind)
 
     def give_count(self, owner: Hole | FrameDraft) -> None:
@@ -102,6 +103,12 @@ class State:
         self.target = None
         self.add_words(text, span)
 
+    def end_scope(self) -> None:
+        """A scope that no frame took is plain words."""
+        if self.scope is not None:
+            self.add_words(self.scope_text, self.scope.span)
+            self.scope = None
+
     def unread(
         self, token: Token, expected: tuple[str, ...], nearest: str | None = None, *, in_frame: bool = False
     ) -> None:
@@ -115,4 +122,5 @@ class State:
     ) -> None:
         """Adds a stretch of text that cannot be read."""
         text = self.line.written(span)
+        self.broken = True
         self.parts.append(Unread(text, expected, nearest or nearest_spelling(text), in_frame, span))

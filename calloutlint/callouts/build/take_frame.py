@@ -41,12 +41,22 @@ def take_lower(state: State, tree: Tree[Token]) -> None:
 def _end_frame(state: State, read: FrameRead) -> None:
     for token, place in read.unread:
         state.unread(token, BY_PLACE[place], in_frame=True)
+    for token in read.scopes:
+        take_scope(state, token)
     for token in read.words:
-        if (len(token) < 3 and token != "LE") or slip_of(token) is not None:
+        if _is_wrong(token, read):
             state.unread(token, BY_PLACE["frame"], in_frame=True)
             read.segments[-1].doubtful = True
         else:
             state.words.append(token)
+
+
+def _is_wrong(token: Token, read: FrameRead) -> bool:
+    """Whether a word after a frame is no plain word: too short, a slip, or datum letters run together."""
+    if (len(token) < 3 and token != "LE") or slip_of(token) is not None:
+        return True
+    run_together = len(token) == 3 and token.isupper() and list(token) == sorted(set(token))
+    return run_together and not read.segments[-1].datums
 
 
 def take_projected_height(state: State, token: Token) -> None:
@@ -69,7 +79,8 @@ def take_scope(state: State, token: Token) -> None:
     if isinstance(frame, FrameDraft) and frame.scope is None:
         frame.scope = scope
     else:
-        state.scope = scope
+        state.end_scope()
+        state.scope, state.scope_text = scope, state.line.written(scope.span)
 
 
 def _scope(token: Token, span: Span) -> Scope:

@@ -14,6 +14,7 @@ from calloutlint.model.callout import Words
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import SizeForm, Through
 from calloutlint.model.source import Span
+from calloutlint.model.thread import ThreadSystem
 
 _STEPS = {
     "⌴": StepKind.COUNTERBORE,
@@ -35,9 +36,18 @@ def take_thread(state: State, tree: Tree[Token]) -> None:
         state.step = None
     state.parts.append(draft)
     state.give_count(draft)
+    _part_from_length(state, draft)
     last = tokens(tree)[-1]
     if last.type == "UNREAD":
         state.unread(last, BY_PLACE["series"])
+
+
+def _part_from_length(state: State, thread: ThreadDraft) -> None:
+    """In `M6 X 20` the second number is no pitch but a length."""
+    length, diameter = thread.pitch, thread.diameter
+    if thread.system is ThreadSystem.METRIC and length and diameter and length.amount >= diameter.amount:
+        thread.pitch = None
+        state.parts += [Words("X", (), thread.span), SizeDraft(SizeForm.LINEAR, length, thread.span)]
 
 
 def take_left_hand(state: State, token: Token) -> None:

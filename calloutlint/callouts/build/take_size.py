@@ -4,12 +4,18 @@ from lark import Token, Tree
 
 from calloutlint.callouts.build.drafts import DepthDraft, SizeDraft, TargetDraft
 from calloutlint.callouts.build.line import joined, tokens
-from calloutlint.callouts.build.sizes import SIZE_MODIFIERS, add_tolerance, read_size, size_form
+from calloutlint.callouts.build.sizes import (
+    SIZE_MODIFIERS,
+    add_tolerance,
+    read_size,
+    size_form,
+    upper_and_lower,
+)
 from calloutlint.callouts.build.state import State
 from calloutlint.callouts.build.take_hole import fits_step, place_depth, place_extent, put_in_step
 from calloutlint.callouts.build.take_word import as_word
 from calloutlint.callouts.expected import BY_PLACE
-from calloutlint.model.size import Deviations, Limits, SizeForm, SizeStatus
+from calloutlint.model.size import Limits, SizeForm, SizeStatus
 from calloutlint.model.values import Value
 
 _STATUSES = {
@@ -122,7 +128,7 @@ def _is_second_limit(state: State, draft: SizeDraft) -> bool:
 def _complete(size: SizeDraft, nil: Value) -> bool:
     if size.deviation is None or nil.amount:
         return False
-    size.tolerance, size.deviation = Deviations(size.deviation, nil), None
+    size.tolerance, size.deviation = upper_and_lower(size.deviation, nil), None
     return True
 
 

@@ -1,7 +1,8 @@
 """Second pass: plain words, slips of known spellings, and text that cannot be read."""
 
-from lark import Token
+from lark import Token, Tree
 
+from calloutlint.callouts.build.line import tokens
 from calloutlint.callouts.build.sizes import SIZE_MODIFIERS
 from calloutlint.callouts.build.state import State
 from calloutlint.callouts.expected import BY_PLACE
@@ -24,6 +25,9 @@ def take_word(state: State, token: Token) -> None:
         state.end_words()
     elif token in SIZE_MODIFIERS and state.size is not None:
         state.size.modifiers.append(SIZE_MODIFIERS[token])
+    elif upper == "PROFILE" and state.follows("size"):
+        state.end_words()
+        state.unread(token, BY_PLACE["characteristic"], in_frame=True)
     elif (near := slip_of(token)) is not None:
         state.end_words()
         state.unread(token, BY_PLACE["word"], near, in_frame=is_characteristic(near))
@@ -52,13 +56,14 @@ def take_fastener(state: State, token: Token) -> None:
     state.parts.append(FastenerNote(fastener, hold, span))
 
 
-def take_unread(state: State, token: Token) -> None:
+def take_lost(state: State, tree: Tree[Token]) -> None:
     """A word that the grammar could not take. What a bar parts from no frame follows a wrong characteristic."""
-    span = state.line.span(token)
+    token, last = tokens(tree)[0], tokens(tree)[-1]
+    span = state.line.span(token, last)
     text = state.line.written(span)
     if text[:1] != "|":
         state.end_words()
-        state.unread(token, BY_PLACE["word"])
+        state.unread_span(span, state.line.expected.get(token.start_pos or 0) or BY_PLACE["word"])
         return
     wrong = state.words.pop() if state.words else None
     state.end_words()

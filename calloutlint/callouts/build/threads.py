@@ -17,7 +17,9 @@ from calloutlint.units import Unit
 _UNIFIED = re.compile(
     r'(?P<size>#\s?\d+|(?i:no)\.?\s?\d+|[\d./ ]+?(?:-\d+/\d+)?)"?\s?-\s?(?P<tpi>\d+(?:\.5)?)'
 ).fullmatch
-_METRIC = re.compile(r"(MJ?)\s?([\d.]+)(?:\s?[xX×]\s?(?:[Pp][Hh]\s?([\d.]+)\s?P\s?)?([\d.]+))?").fullmatch
+_METRIC = re.compile(
+    r"(MJ?)\s?([\d.]+)(?:\s?[xX×]\s?(?:[Pp][Hh]\s?([\d.]+)\s?P\s?)?([\d.]+)(?:\s?mm)?)?", re.I
+).fullmatch
 _TRAPEZOIDAL = re.compile(r"[Tt][Rr]\s?([\d.]+)\s?[xX×]\s?([\d.]+)(?:\s?\(?P\s?([\d.]+)\)?)?").fullmatch
 _PIPE = re.compile(
     r"(?P<size>(?:\d+[ -])?\d+/\d+|[\d.]+)(?:\s?-\s?(?P<tpi>\d+(?:\.5|\s1/2)?))?"
