@@ -1,6 +1,7 @@
 """A review: what was found in a package, with the correction of each finding and what is waived."""
 
 from dataclasses import dataclass
+from typing import NamedTuple
 
 from calloutlint.model.drawing import Package
 from calloutlint.redline.prove import Redline, redlines
@@ -8,8 +9,7 @@ from calloutlint.rulebook.finding import Finding, Grade
 from calloutlint.rulebook.rulebook import Rulebook
 
 
-@dataclass(frozen=True, slots=True)
-class Judged:
+class Judged(NamedTuple):
     """A finding, its correction where one is determined, and why it is waived where it is."""
 
     finding: Finding

@@ -2,9 +2,8 @@
 
 import tomllib
 from collections.abc import Callable, Iterable
-from dataclasses import dataclass
 from pathlib import Path
-from typing import Any
+from typing import Any, NamedTuple
 
 from calloutlint.errors import SheetError
 from calloutlint.model.fastener import HoleRef, Joint
@@ -15,8 +14,7 @@ DEFINITION = "package.toml"
 GATES = ("critical", "major", "minor", "observation")
 
 
-@dataclass(frozen=True, slots=True)
-class Definition:
+class Definition(NamedTuple):
     """What a package.toml states; paths are not yet resolved."""
 
     file: Path

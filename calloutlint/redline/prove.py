@@ -2,7 +2,8 @@
 
 from collections import Counter
 from collections.abc import Callable, Iterator, Mapping, Sequence
-from dataclasses import dataclass, replace
+from dataclasses import replace
+from typing import NamedTuple
 
 from calloutlint.callouts.parse import parse_callout
 from calloutlint.callouts.write import Style, write_callout
@@ -17,8 +18,7 @@ Check = Callable[[Package], Sequence[Finding]]
 Place = tuple[str, str, str]
 
 
-@dataclass(frozen=True, slots=True)
-class Redline:
+class Redline(NamedTuple):
     """A corrected callout: `text` in canonical lines, `callout` as a model.
 
     `proven` says that the corrected sheet, checked again, no longer has the finding and has no new one of

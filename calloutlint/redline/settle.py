@@ -1,7 +1,7 @@
 """All proven corrections of a package applied, one after another, until nothing is left to correct."""
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from typing import NamedTuple
 
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, Package
@@ -11,8 +11,7 @@ from calloutlint.rulebook.finding import Finding
 MOST_ROUNDS = 12
 
 
-@dataclass(frozen=True, slots=True)
-class Correction:
+class Correction(NamedTuple):
     """A callout of a drawing as read, and as it is after every proven correction."""
 
     drawing: Drawing

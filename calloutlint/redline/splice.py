@@ -1,7 +1,7 @@
 """Corrections written into a callout's own lines, with everything that need not change left as it stands."""
 
 from collections.abc import Iterator
-from dataclasses import dataclass
+from typing import NamedTuple
 
 from calloutlint.callouts.parse import parse_callout
 from calloutlint.callouts.write import Style, write_callout, write_part
@@ -11,8 +11,7 @@ from calloutlint.model.source import Span
 from calloutlint.units import Unit
 
 
-@dataclass(frozen=True, slots=True)
-class Splice:
+class Splice(NamedTuple):
     """New text for the columns that `span` names."""
 
     span: Span

@@ -1,7 +1,7 @@
 """A callout laid out for drawing: lines of text, frames with their compartments, datum feature symbols."""
 
 from collections.abc import Iterator
-from dataclasses import dataclass
+from typing import NamedTuple
 
 from calloutlint.callouts.write import Style, write_part
 from calloutlint.model.callout import Callout, DatumFeature, Part, Unread
@@ -13,8 +13,7 @@ LONGEST = 240
 """Characters of a source line that are quoted; longer ones are cut short."""
 
 
-@dataclass(frozen=True, slots=True)
-class Piece:
+class Piece(NamedTuple):
     """Text to draw, with the part it stands for and its place in the source.
 
     `ends` is given for text drawn as the source has it: where each of its characters ends in `text`.
@@ -33,15 +32,13 @@ class Piece:
         return (self.ends[first - 1] if first else 0), (self.ends[last - 1] if last else 0)
 
 
-@dataclass(frozen=True, slots=True)
-class TextRow:
+class TextRow(NamedTuple):
     """Sizes, threads, steps and words that stand on one line."""
 
     pieces: tuple[Piece, ...]
 
 
-@dataclass(frozen=True, slots=True)
-class FrameRow:
+class FrameRow(NamedTuple):
     """One line of a feature control frame; the first cell is the symbol, empty on a composite's lower lines."""
 
     pieces: tuple[Piece, ...]
@@ -50,8 +47,7 @@ class FrameRow:
     beside: str = ""
 
 
-@dataclass(frozen=True, slots=True)
-class DatumRow:
+class DatumRow(NamedTuple):
     """Datum feature symbols side by side."""
 
     pieces: tuple[Piece, ...]

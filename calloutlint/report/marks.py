@@ -1,7 +1,7 @@
 """Where a finding points in a drawn callout: which row, which compartment, or which columns of a line."""
 
 from collections.abc import Iterable, Iterator, Sequence
-from dataclasses import dataclass
+from typing import NamedTuple
 
 from calloutlint.model.frame import Frame
 from calloutlint.model.size import Count, Through
@@ -12,16 +12,14 @@ from calloutlint.report.layout import FrameRow, Row
 from calloutlint.rulebook.finding import Finding
 
 
-@dataclass(frozen=True, slots=True)
-class Mark:
+class Mark(NamedTuple):
     """A letter that refers to a finding, and its style; no letter where a heavy line is enough."""
 
     letter: str
     style: str
 
 
-@dataclass(frozen=True, slots=True)
-class Place:
+class Place(NamedTuple):
     """A marked place: a piece of a row, `columns` of its text, or the row as a whole (`piece` is None)."""
 
     row: int

@@ -1,13 +1,12 @@
 """How a terminal report looks: one style for each role, and the characters that frames are drawn with."""
 
-from dataclasses import dataclass
+from typing import NamedTuple
 
 from calloutlint.callouts.write import Style
 from calloutlint.rulebook.finding import Grade
 
 
-@dataclass(frozen=True, slots=True)
-class Roles:
+class Roles(NamedTuple):
     """The style of each thing that a report shows, in the words of rich."""
 
     heading: str = "bold"
@@ -45,8 +44,7 @@ _ASCII_JUNCTIONS = {
 }
 
 
-@dataclass(frozen=True, slots=True)
-class Glyphs:
+class Glyphs(NamedTuple):
     """The characters of a look. `edges` are horizontal lines by weight: none, light, heavy."""
 
     spelling: Style

@@ -1,15 +1,14 @@
 """Corrections of a rule as they are made for a view."""
 
-from dataclasses import dataclass
 from decimal import Decimal
+from typing import NamedTuple
 
 from calloutlint.facts.view import View
 from calloutlint.rulebook.code import Code
 from calloutlint.rulebook.finding import Edit
 
 
-@dataclass(frozen=True, slots=True)
-class Change:
+class Change(NamedTuple):
     """One change.
 
     `target` gives the view or views to change, `word` the symbol or the fact, `new` the value to write.
@@ -31,8 +30,7 @@ class Change:
         return Edit(self.verb, self.word, part, value)
 
 
-@dataclass(frozen=True, slots=True)
-class Correction:
+class Correction(NamedTuple):
     """Changes that together correct what a rule finds."""
 
     changes: tuple[Change, ...] = ()

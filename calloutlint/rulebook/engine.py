@@ -3,9 +3,8 @@
 import re
 from collections import Counter
 from collections.abc import Callable, Iterable, Sequence
-from dataclasses import dataclass
 from enum import StrEnum
-from typing import Any
+from typing import Any, NamedTuple
 
 from calloutlint.facts.view import View
 from calloutlint.model.drawing import Package, Standard
@@ -20,8 +19,7 @@ NOWHERE = Span(-1, -1, -1)
 Asked = tuple[tuple[Callable[[View], Any], Rule], ...]
 
 
-@dataclass(frozen=True, slots=True)
-class Agenda:
+class Agenda(NamedTuple):
     """The rules for one subject under one standard, each after its test, by the word that `fact` must hold."""
 
     fact: str | None

@@ -2,7 +2,7 @@
 
 import re
 from collections.abc import Iterable
-from dataclasses import dataclass
+from typing import NamedTuple
 
 from calloutlint.model.drawing import Standard, System
 
@@ -11,8 +11,7 @@ FORMS = "ASME Y14.5, ASME Y14.5-2018, ASME Y14.5-2009 and later, ASME Y14.5-1994
 _FORM = re.compile(r"(?P<system>ASME Y14\.5|ISO GPS)(-(?P<year>\d{4})( and (?P<side>later|earlier))?)?")
 
 
-@dataclass(frozen=True, slots=True)
-class Holding:
+class Holding(NamedTuple):
     """One entry of `holds`: a system, and the editions from `first` to `last` where they are limited."""
 
     system: System

@@ -5,7 +5,7 @@ from dataclasses import dataclass
 from decimal import Decimal
 from enum import StrEnum
 from functools import cache
-from typing import Annotated, Any, get_args, get_origin
+from typing import Annotated, Any, NamedTuple, get_args, get_origin
 
 from calloutlint.facts.view import View, facts_of
 
@@ -43,8 +43,7 @@ class Listing(Kind):
     item: Kind
 
 
-@dataclass(frozen=True, slots=True)
-class Member:
+class Member(NamedTuple):
     """A fact that may follow a thing after a dot; `optional` says whether it may be unknown."""
 
     name: str

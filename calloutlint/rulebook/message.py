@@ -1,6 +1,7 @@
 """Messages of a rule as they are said of a view."""
 
 from dataclasses import dataclass, field
+from typing import NamedTuple
 
 from calloutlint.facts.view import View
 from calloutlint.rulebook.code import Code
@@ -8,8 +9,7 @@ from calloutlint.rulebook.figures import figure, written
 from calloutlint.rulebook.kinds import ANGLE, LENGTH, Kind
 
 
-@dataclass(frozen=True, slots=True)
-class Slot:
+class Slot(NamedTuple):
     """One expression of a message: `name` is its text, `signed` whether a plus is written too."""
 
     name: str
@@ -18,8 +18,7 @@ class Slot:
     signed: bool = False
 
 
-@dataclass(frozen=True, slots=True)
-class Message:
+class Message(NamedTuple):
     """Text and slots in order; `figures` are further values to list beside the message."""
 
     pieces: tuple[str | Slot, ...]

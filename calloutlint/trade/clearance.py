@@ -2,10 +2,10 @@
 
 from bisect import bisect_left, bisect_right
 from collections.abc import Mapping
-from dataclasses import dataclass
 from decimal import Decimal
 from enum import StrEnum
 from functools import cache, lru_cache
+from typing import NamedTuple
 
 from calloutlint.trade.drills import drill_diameter
 from calloutlint.trade.inches import ROUNDED, named_size, nominal_size
@@ -25,8 +25,7 @@ _FITS = tuple(ClearanceFit)
 _NORMAL_FIRST = (ClearanceFit.NORMAL, ClearanceFit.CLOSE, ClearanceFit.LOOSE)
 
 
-@dataclass(frozen=True, slots=True)
-class ClearanceHole:
+class ClearanceHole(NamedTuple):
     """One published hole: what it is drilled with, and its least and largest diameter.
 
     `drill` is the exact drill of an inch hole, and the least diameter of a metric one. The least diameter of
@@ -38,8 +37,7 @@ class ClearanceHole:
     maximum: Decimal
 
 
-@dataclass(frozen=True, slots=True)
-class ClearanceSizes:
+class ClearanceSizes(NamedTuple):
     """The three published holes of a fastener, lengths in `unit`; `size` is the fastener's, `1/4`, `M6`."""
 
     size: str
@@ -74,8 +72,7 @@ class ClearanceSizes:
         return self.holes[_FITS.index(fit)]
 
 
-@dataclass(frozen=True, slots=True)
-class ClearanceMatch:
+class ClearanceMatch(NamedTuple):
     """A fastener that a hole is published for, and the fit that it makes there."""
 
     sizes: ClearanceSizes

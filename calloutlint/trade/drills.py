@@ -2,9 +2,9 @@
 
 from bisect import bisect_left
 from collections.abc import Iterator, Mapping
-from dataclasses import dataclass
 from decimal import Decimal
 from functools import cache
+from typing import NamedTuple
 
 from calloutlint.trade.inches import ROUNDED, fraction_name, inches
 from calloutlint.trade.tables import read_table
@@ -14,8 +14,7 @@ CONVERTED = Decimal("0.00005")
 """In inches: a size this close to a drill of the other unit is that drill, converted."""
 
 
-@dataclass(frozen=True, slots=True)
-class Drill:
+class Drill(NamedTuple):
     """A stock drill: its trade name (`#7`, `F`, `17/64`, `6.8`) and its diameter in `unit`."""
 
     name: str
@@ -23,8 +22,7 @@ class Drill:
     unit: Unit
 
 
-@dataclass(frozen=True, slots=True)
-class DrilledTolerance:
+class DrilledTolerance(NamedTuple):
     """How far a drilled hole may come out larger and smaller than its drill, both as positive amounts."""
 
     plus: Decimal

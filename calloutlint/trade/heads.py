@@ -1,9 +1,9 @@
 """Heads of screws: the room they need, and the smallest that may come to bear on the part."""
 
 from collections.abc import Mapping
-from dataclasses import dataclass
 from decimal import Decimal
 from functools import cache
+from typing import NamedTuple
 
 from calloutlint.model.fastener import Fastener, Head
 from calloutlint.trade.inches import named_size, nominal_size
@@ -25,8 +25,7 @@ _METRIC_TABLES = {
 }
 
 
-@dataclass(frozen=True, slots=True)
-class HeadSize:
+class HeadSize(NamedTuple):
     """Published sizes of a head, or of the washer under it, in `unit`.
 
     `largest`: the diameter it can reach, across the corners of a hexagon, the theoretical sharp edge of a

@@ -1,9 +1,9 @@
 """Inch sizes as the trade names them: fractions and number sizes, as exact decimals."""
 
-from dataclasses import dataclass
 from decimal import Decimal
 from fractions import Fraction
 from functools import lru_cache
+from typing import NamedTuple
 
 ROUNDED = Decimal("0.0005")
 """Drawings round inch sizes to three places: `.281` is 9/32, `.312` is 5/16."""
@@ -14,8 +14,7 @@ _NUMBERS = (*range(11), 12)
 _SIXTEENTHS_TO = Decimal(4)
 
 
-@dataclass(frozen=True, slots=True)
-class NominalSize:
+class NominalSize(NamedTuple):
     """A nominal fastener size: its trade name (`#10`, `1/4`, `1 1/8`) and basic major diameter in inches."""
 
     name: str

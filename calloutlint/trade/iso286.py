@@ -4,8 +4,8 @@ A capital letter is a hole, a small one a shaft. Everything is in millimetres an
 micrometres as published, and nothing is computed by a formula that the standard rounds.
 """
 
-from dataclasses import dataclass
 from decimal import ROUND_FLOOR, Decimal
+from typing import NamedTuple
 
 from calloutlint.model.size import FitCode
 from calloutlint.trade.tables import read_table
@@ -20,8 +20,7 @@ _ABOVE_ZERO_LINE = frozenset(
 _JS_GRADES_ONCE_ROUNDED = range(7, 12)
 
 
-@dataclass(frozen=True, slots=True)
-class LimitDeviations:
+class LimitDeviations(NamedTuple):
     """Upper and lower limit deviation from the nominal size, mm."""
 
     upper: Decimal

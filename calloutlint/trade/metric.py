@@ -2,9 +2,9 @@
 
 import re
 from collections.abc import Mapping
-from dataclasses import dataclass
 from decimal import Decimal
 from functools import cache, lru_cache
+from typing import NamedTuple
 
 from calloutlint.trade import metric_tolerances
 from calloutlint.trade.tables import read_table
@@ -20,8 +20,7 @@ _MAJOR_GRADES = frozenset({4, 6, 8})
 _INTERNAL_GRADES = frozenset({4, 5, 6, 7, 8})
 
 
-@dataclass(frozen=True, slots=True)
-class Pitches:
+class Pitches(NamedTuple):
     """The pitches of one diameter, mm; `coarse` is None where the standard gives fine ones only."""
 
     coarse: Decimal | None

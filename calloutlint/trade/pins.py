@@ -1,7 +1,7 @@
 """Dowel pins that are called out by their nominal diameter alone."""
 
-from dataclasses import dataclass
 from decimal import Decimal
+from typing import NamedTuple
 
 from calloutlint.model.size import FitCode
 from calloutlint.trade import iso286
@@ -15,8 +15,7 @@ _ISO_DIAMETERS = tuple(
 _M6 = FitCode("m", "6")
 
 
-@dataclass(frozen=True, slots=True)
-class PinLimits:
+class PinLimits(NamedTuple):
     """Limits of a standard dowel pin, in the unit it was asked for in."""
 
     largest: Decimal

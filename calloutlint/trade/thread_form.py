@@ -1,7 +1,7 @@
 """What thread standards compute: the basic sizes of a thread and its limits of size for a class."""
 
-from dataclasses import dataclass
 from decimal import Decimal
+from typing import NamedTuple
 
 from calloutlint.units import Unit
 
@@ -15,8 +15,7 @@ UNJ_CREST = Decimal("0.97427857925750")
 """9/16 √3: the same for the threads of a controlled root, UNJ and MJ."""
 
 
-@dataclass(frozen=True, slots=True)
-class ThreadForm:
+class ThreadForm(NamedTuple):
     """A thread by its basic sizes, in `unit`; `series` is `UNC`, `UNJF`, `UN`, `M`, `MJ`.
 
     `minor` is the basic minor diameter of the internal thread, larger for the controlled root of UNJ.
@@ -35,8 +34,7 @@ class ThreadForm:
         return self.diameter - PITCH_LINE * self.pitch
 
 
-@dataclass(frozen=True, slots=True)
-class ThreadLimits:
+class ThreadLimits(NamedTuple):
     """Limits of size of a thread for a class, in the thread's unit.
 
     None where the standard sets no limit: the largest major diameter of an internal thread, the smallest

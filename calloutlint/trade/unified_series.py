@@ -2,9 +2,9 @@
 
 import re
 from collections.abc import Mapping
-from dataclasses import dataclass
 from decimal import Decimal
 from functools import cache
+from typing import NamedTuple
 
 from calloutlint.trade.inches import nominal_size
 from calloutlint.trade.tables import read_table
@@ -16,8 +16,7 @@ _KINDS = {"C": COARSE, "F": FINE, "EF": EXTRA_FINE, "S": SPECIAL, "": CONSTANT}
 _CONSTANT_PITCHES_TO = Decimal("1.5")
 
 
-@dataclass(frozen=True, slots=True)
-class Series:
+class Series(NamedTuple):
     """The threads per inch of one nominal size; None where a series does not have the size."""
 
     coarse: Decimal | None

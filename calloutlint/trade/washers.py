@@ -1,16 +1,15 @@
 """Plain washers."""
 
-from dataclasses import dataclass
 from decimal import Decimal
 from functools import cache
+from typing import NamedTuple
 
 from calloutlint.trade.inches import nominal_size
 from calloutlint.trade.tables import read_table
 from calloutlint.units import Unit
 
 
-@dataclass(frozen=True, slots=True)
-class WasherSize:
+class WasherSize(NamedTuple):
     """Published diameters of a plain washer, in `unit`."""
 
     outside_max: Decimal
