@@ -5,7 +5,7 @@ from pathlib import Path
 
 import pytest
 
-from calloutlint.errors import SheetError
+from calloutlint.errors import CalloutlintError
 from calloutlint.model.drawing import Package
 from calloutlint.reading.sheet import read_sheet
 from calloutlint.redline.incorporate import incorporate
@@ -99,7 +99,7 @@ def test_a_read_only_folder_is_said(tmp_path: Path, rulebook: Rulebook) -> None:
     path.write_bytes(SHEET.encode())
     tmp_path.chmod(0o500)
     try:
-        with pytest.raises(SheetError, match="cannot be written"):
+        with pytest.raises(CalloutlintError, match="cannot be written"):
             correct(path, rulebook)
     finally:
         tmp_path.chmod(0o700)
@@ -116,7 +116,7 @@ def test_a_failed_write_leaves_the_file_as_it_was(
         raise OSError(28, "No space left on device")
 
     monkeypatch.setattr(Path, "replace", refuse)
-    with pytest.raises(SheetError, match="No space left"):
+    with pytest.raises(CalloutlintError, match="no space left"):
         correct(path, rulebook)
     assert path.read_bytes() == SHEET.encode()
     assert [one.name for one in tmp_path.iterdir()] == ["sg-1.txt"]

@@ -10,6 +10,7 @@ import jsonschema
 import pytest
 
 from calloutlint import __version__
+from calloutlint._whole import write_whole
 from calloutlint.errors import CalloutlintError
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, Package, SheetLine, Standard
@@ -17,7 +18,7 @@ from calloutlint.model.frame import Characteristic, Segment, Zone, ZoneShape
 from calloutlint.model.source import SourceLine, Span
 from calloutlint.model.values import Value
 from calloutlint.redline.prove import Redline
-from calloutlint.report.files import check_report_path, write_report, write_whole
+from calloutlint.report.files import check_report_path, write_report
 from calloutlint.report.record import record_schema, record_text
 from calloutlint.review import Judged, Review
 from calloutlint.rulebook.finding import Finding, Grade
@@ -149,16 +150,21 @@ def test_a_report_goes_through_a_link_to_the_file_that_it_names(tmp_path: Path) 
     target, link = tmp_path / "target.json", tmp_path / "link.json"
     target.write_text("old")
     link.symlink_to(target)
-    write_whole(link, "new")
+    write_whole(link, b"new")
     assert link.is_symlink()
     assert target.read_text() == "new"
 
 
-def test_a_failed_write_leaves_the_old_report(tmp_path: Path) -> None:
+def test_a_failed_write_leaves_the_old_report(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
     path = tmp_path / "r.json"
     path.write_text("old")
-    with pytest.raises(UnicodeEncodeError):
-        write_whole(path, "half\udcff")
+
+    def refuse(_self: Path, _target: Path) -> None:
+        raise OSError(28, "No space left on device")
+
+    monkeypatch.setattr(Path, "replace", refuse)
+    with pytest.raises(CalloutlintError, match="no space left"):
+        write_whole(path, b"new")
     assert path.read_text() == "old"
     assert list(tmp_path.iterdir()) == [path]
 

@@ -64,10 +64,10 @@ def run(options: Namespace) -> int:
     sheet = work_out(options)
     show_fit(sheet, Screen(sys.stdout, plain=options.plain))
     if options.report:
-        from calloutlint.report.files import write_whole
+        from calloutlint._whole import write_whole
         from calloutlint.report.fit_record import fit_record_text
 
-        write_whole(options.report, fit_record_text(sheet))
+        write_whole(options.report, fit_record_text(sheet).encode())
     return 0 if sheet.worked.fits else 1
 
 

@@ -35,7 +35,7 @@ def run(options: Namespace) -> int:
     from calloutlint.callouts.write import Style
     from calloutlint.reading.package import read_package
     from calloutlint.reading.transcribe import transcribe
-    from calloutlint.report.files import write_whole
+    from calloutlint._whole import write_whole
     from calloutlint.report.screen import draws_symbols
 
     drawings = read_package(options.paths).drawings
@@ -46,7 +46,7 @@ def run(options: Namespace) -> int:
         return 0
     style = Style.ASCII if options.plain else Style.UNICODE
     for drawing, path in zip(drawings, _targets(drawings, options.into), strict=True):
-        write_whole(path, transcribe(drawing, style))
+        write_whole(path, transcribe(drawing, style).encode())
     return 0
 
 

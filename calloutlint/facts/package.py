@@ -7,6 +7,7 @@ from collections.abc import Iterator
 from calloutlint.facts.assembly import Assembly
 from calloutlint.facts.callout import CalloutView
 from calloutlint.facts.datum_index import DatumIndex
+from calloutlint.facts.datums.scheme import sheets_of
 from calloutlint.facts.drawing import DrawingView
 from calloutlint.facts.fastener import FastenerView
 from calloutlint.facts.joint import JointView, MemberView
@@ -27,7 +28,6 @@ class PackageView(View):
         self.unit = None
         self.callout_model = None
         self.drawing_model = None
-        self._indexes: dict[str, DatumIndex] = {}
 
     @fact
     def name(self) -> str:
@@ -78,13 +78,14 @@ class PackageView(View):
         """The view of a callout of the package."""
         return self._views[id(callout)]
 
+    @kept
+    def _indexes(self) -> dict[int, DatumIndex]:
+        groups = ((sheets, DatumIndex(sheets, self.part.joints)) for sheets in sheets_of(self.part))
+        return {id(sheet): index for sheets, index in groups for sheet in sheets}
+
     def datum_index(self, drawing: Drawing) -> DatumIndex:
-        """The datum letters of a drawing; sheets with the same number and revision count as one drawing."""
-        key = f"{drawing.number}\0{drawing.revision}" if drawing.number else drawing.file
-        if key not in self._indexes:
-            sheets = [other for other in self.part.drawings if _same_drawing(other, drawing)]
-            self._indexes[key] = DatumIndex(sheets, self.part.joints)
-        return self._indexes[key]
+        """The datum letters of a drawing, all its sheets together."""
+        return self._indexes[id(drawing)]
 
     def is_duplicate(self, drawing: Drawing) -> bool:
         """Whether an earlier drawing has the same number, revision and sheet."""
@@ -97,10 +98,3 @@ class PackageView(View):
             if (other.number, other.revision, other.sheet) == same:
                 return True
         return False
-
-
-def _same_drawing(one: Drawing, other: Drawing) -> bool:
-    if one is other:
-        return True
-    same = (one.number, one.revision) == (other.number, other.revision)
-    return same and one.number is not None and one.sheet != other.sheet

@@ -1,14 +1,12 @@
 """Corrections written into a sheet's file: nothing else in it touched, all at once or not at all."""
 
-import os
 import re
-import tempfile
 from collections.abc import Iterable
 from dataclasses import replace
 from pathlib import Path
 
+from calloutlint._whole import write_whole
 from calloutlint.callouts.write import Style
-from calloutlint.errors import SheetError
 from calloutlint.model.callout import Callout
 from calloutlint.reading.encoding import Text, encode, read_text_file
 from calloutlint.redline.splice import new_lines
@@ -24,14 +22,14 @@ def incorporate(path: Path, unit: Unit | None, changes: Iterable[tuple[Callout, 
     `changes` pairs each callout as read with its corrected form. Encoding, byte order mark, line ends and every
     line that does not change stay as they are.
 
-    Raises SheetError, leaving the file as it was, where it cannot be written.
+    Raises CalloutlintError, leaving the file as it was, where it cannot be written.
     """
     text = read_text_file(path)
     lines = _LINES.findall(text.text)
     style = _style_of(text)
     for old, new in sorted(changes, key=lambda pair: pair[0].source[0].number, reverse=True):
         _put(lines, old, new_lines(old, new, unit, style), text.newline)
-    _write(path, encode(replace(text, text="".join(lines)), str(path)))
+    write_whole(path, encode(replace(text, text="".join(lines)), str(path)))
 
 
 def _style_of(text: Text) -> Style:
@@ -53,22 +51,3 @@ def _put(lines: list[str], old: Callout, new: list[str], newline: str) -> None:
             del lines[place]
         else:
             lines[place] = lines[place][: source.column] + line + _LINE_END.findall(lines[place])[0]
-
-
-def _write(path: Path, data: bytes) -> None:
-    """Replace a file's bytes in one step, keeping its permissions."""
-    target = path.resolve()
-    try:
-        handle, name = tempfile.mkstemp(dir=target.parent, prefix=f".{target.name}.")
-    except OSError as error:
-        raise SheetError(f"{path}: cannot be written: {error.strerror or error}") from None
-    draft = Path(name)
-    try:
-        with os.fdopen(handle, "wb") as stream:
-            stream.write(data)
-            os.fsync(stream.fileno())
-        draft.chmod(target.stat().st_mode & 0o7777)
-        draft.replace(target)
-    except OSError as error:
-        draft.unlink(missing_ok=True)
-        raise SheetError(f"{path}: cannot be written: {error.strerror or error}") from None

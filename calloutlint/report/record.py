@@ -44,7 +44,7 @@ class RedlineEntry(_Entry):
     """A proposed correction: the whole callout in canonical text."""
 
     text: str
-    proven: bool = Field(description="the corrected sheet, checked again, has lost the finding and gained none")
+    proven: bool = Field(description="the corrected sheet, checked again, has lost the finding and gained none of its grade or worse")
 
 
 class FindingEntry(_Entry):

@@ -124,12 +124,26 @@ def scheme_of(*sheets: Drawing) -> DatumScheme:
 
 
 def schemes_of(package: Package) -> tuple[DatumScheme, ...]:
-    """The schemes of a package, one for each drawing; sheets with the same number and revision are one."""
-    drawings: dict[object, list[Drawing]] = {}
-    for at, sheet in enumerate(package.drawings):
-        key = (sheet.number, sheet.revision) if sheet.number and sheet.sheet else at
-        drawings.setdefault(key, []).append(sheet)
-    return tuple(scheme_of(*sheets) for sheets in drawings.values())
+    """The schemes of a package, one for each drawing."""
+    return tuple(scheme_of(*sheets) for sheets in sheets_of(package))
+
+
+def sheets_of(package: Package) -> list[list[Drawing]]:
+    """The sheets of a package, those of one drawing together.
+
+    Sheets are of one drawing if they have its number and revision and each a sheet number of its own.
+    """
+    groups: list[list[Drawing]] = []
+    open_groups: dict[tuple[str, str | None], list[Drawing]] = {}
+    for sheet in package.drawings:
+        group = open_groups.get((sheet.number, sheet.revision)) if sheet.number and sheet.sheet else None
+        if group is not None and all(other.sheet != sheet.sheet for other in group):
+            group.append(sheet)
+            continue
+        groups.append([sheet])
+        if sheet.number and sheet.sheet:
+            open_groups[sheet.number, sheet.revision] = groups[-1]
+    return groups
 
 
 def _features(callouts: Iterable[Callout]) -> dict[str, Established]:
