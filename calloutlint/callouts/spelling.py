@@ -7,8 +7,9 @@ fit code mean something. Spaces stay where they are: they decide meaning too.
 import re
 from bisect import bisect_right
 from collections.abc import Iterable
-from dataclasses import dataclass
+from typing import NamedTuple
 
+from calloutlint._saved import compiled
 from calloutlint.callouts.table import CHARACTERISTICS, SPELLINGS
 
 __all__ = ["SPELLINGS", "Normal", "normalise", "opens_feature"]
@@ -16,8 +17,7 @@ __all__ = ["SPELLINGS", "Normal", "normalise", "opens_feature"]
 Trie = dict[str, "Trie"]
 
 
-@dataclass(frozen=True, slots=True)
-class Normal:
+class Normal(NamedTuple):
     """A normalised line; `shifts` holds where it gets out of step with `source`: (its column, the source's)."""
 
     source: str
@@ -114,7 +114,8 @@ def _exchanged() -> dict[int, str]:
 
 
 _AS_IS = {"X", "-", "DEPTH FEATURE"}
-_EXCHANGED = _exchanged() | {code: " " for code in range(0x3001) if chr(code).isspace() and code != ord("\t")}
+_SPACED = (*range(0x100), 0x1680, *range(0x2000, 0x2060), 0x3000)  # where Unicode has its spaces
+_EXCHANGED = _exchanged() | {code: " " for code in _SPACED if chr(code).isspace() and code != ord("\t")}
 _NORMAL = {
     spelling: normal for spelling, normal in _spelled().items() if spelling.translate(_EXCHANGED) == spelling
 }
@@ -171,4 +172,4 @@ def _letter(character: str) -> str:
     return re.escape(character)
 
 
-_SPELLED = re.compile(_pattern(_NORMAL))
+_SPELLED = compiled(_pattern(_NORMAL))

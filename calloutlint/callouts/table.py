@@ -4,11 +4,10 @@ This table is what the reader itself uses, what `calloutlint symbols` prints and
 its canonical forms from.
 """
 
-from dataclasses import dataclass
+from typing import NamedTuple
 
 
-@dataclass(frozen=True, slots=True)
-class Spelling:
+class Spelling(NamedTuple):
     """One row: canonical `symbol`, its `ascii` form, `name` in the trade, and what else is read as it."""
 
     group: str
