@@ -116,6 +116,13 @@ def test_lower_segments_are_told_from_new_frames_and_sizes(written: tuple[str, .
     assert len(frame.segments) == lower
 
 
+def test_a_datum_feature_may_follow_a_lower_segment() -> None:
+    frame, datum = read("⌖ | ⌀.014 | A", "| ⌀.006 | A -D-")
+    assert isinstance(frame, Frame)
+    assert len(frame.segments) == 2
+    assert datum == read("DATUM D")[0]
+
+
 def _limits(first: str, second: str, unit: Unit = Unit.INCH, *, named: bool = False) -> Limits:
     return Limits(Value(first, Decimal(first), unit), Value(second, Decimal(second), unit), named)
 

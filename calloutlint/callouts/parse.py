@@ -49,7 +49,7 @@ def _parse(lines: tuple[str, ...], unit: Unit | None, decimal_comma: bool) -> tu
             return (_too_long(text, index),)
         normal = normalise(text, decimal_comma=decimal_comma)
         line = _parse_line(index, normal, unit, framed)
-        framed = any(isinstance(item, Tree) and item.data in {"frame", "lower"} for item in line.items)
+        framed = any(isinstance(item, Tree) and item.data in {"frame", "segment"} for item in line.items)
         parsed.append(line)
     return build(parsed)
 
@@ -83,7 +83,7 @@ def _items(text: str, start: str) -> tuple[tuple[Node, ...], Mapping[int, tuple[
                 begin, end = 0, len(text)
             text = text[:begin] + "\ufffd" * (end - begin) + text[end:]
         else:
-            return (tree,) if start == "lower" else tuple(tree.children), expected
+            return tuple(tree.children), expected
     return (Token("UNREAD", text, start_pos=0, end_pos=len(text)),), expected
 
 

@@ -108,7 +108,7 @@ _TREES: dict[str, Callable[[State, Tree[Token]], None]] = {
     "stacked": take_size.take_stacked,
     "thread": take_hole.take_thread,
     "frame": take_frame.take_frame,
-    "lower": take_frame.take_lower,
+    "segment": take_frame.take_segment,
     "target": take_frame.take_target,
     "lost": take_word.take_lost,
 }

@@ -29,7 +29,7 @@ def take_frame(state: State, tree: Tree[Token]) -> None:
     _end_frame(state, read)
 
 
-def take_lower(state: State, tree: Tree[Token]) -> None:
+def take_segment(state: State, tree: Tree[Token]) -> None:
     """A lower line of a composite frame."""
     above = state.last_of(FrameDraft)
     if isinstance(above, FrameDraft):
