@@ -16,7 +16,7 @@ _COMPOSITE = {Characteristic.POSITION, Characteristic.SURFACE_PROFILE, Character
 
 @dataclass(frozen=True, slots=True)
 class FrameRead:
-    """What a `frame` or `segment` node gave: segments, words after it, what cannot be read, where it applies."""
+    """What a frame node gave: segments, words after it, what cannot be read, where it applies."""
 
     segments: list[SegmentDraft]
     words: list[Token]
