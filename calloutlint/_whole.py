@@ -14,7 +14,7 @@ def write_whole(path: Path, data: bytes) -> None:
     The permissions of a file that stands there are kept, and a link is followed.
 
     Raises:
-        CalloutlintError: the folder or the file does not let itself be written; what stood there is left as it was.
+        CalloutlintError: it cannot be written; what stood there is left as it was.
     """
     target = Path(os.path.realpath(path))
     try:

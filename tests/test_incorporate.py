@@ -5,7 +5,9 @@ from pathlib import Path
 
 import pytest
 
+from calloutlint.callouts.parse import parse_callout
 from calloutlint.errors import CalloutlintError
+from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Package
 from calloutlint.reading.sheet import read_sheet
 from calloutlint.redline.incorporate import incorporate
@@ -51,8 +53,8 @@ def test_only_the_changed_parts_are_written(tmp_path: Path, rulebook: Rulebook) 
     path.write_bytes(SHEET.encode())
     assert correct(path, rulebook) == 1
     assert changed_lines(SHEET, path.read_bytes().decode()) == [
-        ("4 B2) 4 HOLES ⌀.281 +.007 -.002   THRU", "4 B2) 4X ⌀.281 +.007 -.002 THRU"),
-        ("      FLATNESS |  .004 | A", "      ⏥ | .004"),
+        ("4 B2) 4 HOLES ⌀.281 +.007 -.002   THRU", "4 B2) 4X ⌀.281 +.007 -.002   THRU"),
+        ("      FLATNESS |  .004 | A", "      FLATNESS |  .004"),
     ]
 
 
@@ -66,7 +68,8 @@ def test_a_second_run_changes_nothing(tmp_path: Path, rulebook: Rulebook) -> Non
 
 
 @pytest.mark.parametrize(
-    ("encoding", "mark"), [("utf-8", b""), ("utf-8", b"\xef\xbb\xbf"), ("utf-16-le", b"\xff\xfe"), ("cp1252", b"")]
+    ("encoding", "mark"),
+    [("utf-8", b""), ("utf-8", b"\xef\xbb\xbf"), ("utf-16-le", b"\xff\xfe"), ("cp1252", b"")],
 )
 @pytest.mark.parametrize("newline", ["\n", "\r\n"])
 def test_encoding_mark_and_line_ends_stay(
@@ -84,13 +87,53 @@ def test_encoding_mark_and_line_ends_stay(
     assert len(changed_lines(plain, after.replace(newline, "\n"))) == 2
 
 
-def test_a_size_stacked_on_two_lines_is_written_anew_as_a_whole(tmp_path: Path, rulebook: Rulebook) -> None:
+TITLE = "drawing: SG-1\nrevision: A\nstandard: {}\nunits: {}\n"
+
+
+@pytest.mark.parametrize(
+    ("standard", "units", "before", "after"),
+    [
+        (
+            "ASME Y14.5-2018",
+            "inch",
+            "1) 4 HOLES ⌀.281\n   +.007\n   -.002\n   THRU",
+            "1) 4X ⌀.281\n   +.007\n   -.002\n   THRU",
+        ),
+        (
+            "ASME Y14.5-2018",
+            "inch",
+            "1) BORE DIA .750 +.002/+.005, FREE  OF BURRS",
+            "1) BORE DIA .750 +.005 +.002, FREE  OF BURRS",
+        ),
+        ("ASME Y14.5-2018", "inch", "1) %%c.500 +.005 -0", "1) %%c.500 +.005 -.000"),
+        ("ISO 1101", "mm", "1) ⌀12,5 -0,3 -0,1", "1) ⌀12,5 -0,1 -0,3"),
+        (
+            "ASME Y14.5-2018",
+            "inch",
+            "1) SURFACE  FLATNESS .003 A\n    HONE  SMOOTH",
+            "1) SURFACE  FLATNESS .003\n    HONE  SMOOTH",
+        ),
+    ],
+)
+def test_only_the_words_at_fault_change(
+    tmp_path: Path, rulebook: Rulebook, standard: str, units: str, before: str, after: str
+) -> None:
     path = tmp_path / "sg-1.txt"
-    head = "drawing: SG-1\nrevision: A\nstandard: ASME Y14.5-2018\nunits: inch\n"
-    path.write_text(head + "1) ⌀.50\n   ⌀.505\n2) ⏥ | .002\n", encoding="utf-8")
+    title = TITLE.format(standard, units)
+    path.write_text(title + before + "\n", encoding="utf-8")
     correct(path, rulebook)
-    assert path.read_text(encoding="utf-8").endswith("2) ⏥ | .002\n")
-    assert not [f for f in rulebook.check(Package("one", (read_sheet(path),))) if f.rule == "SIZE-03"]
+    assert path.read_text(encoding="utf-8") == title + after + "\n"
+
+
+def test_what_cannot_be_placed_is_left_for_the_hand(tmp_path: Path) -> None:
+    """A correction that would run over two lines of the sheet is not written, and the callout is given back."""
+    path = tmp_path / "sg-1.txt"
+    path.write_text("units: inch\n1) ⌀.28\n   ±.005\n", encoding="utf-8")
+    drawing = read_sheet(path)
+    (old,) = drawing.callouts
+    new = Callout("1", parse_callout(["R.280-.290"], drawing.unit), source=old.source)
+    assert incorporate(path, drawing.unit, [(old, new)]) == [old]
+    assert path.read_text(encoding="utf-8") == "units: inch\n1) ⌀.28\n   ±.005\n"
 
 
 @pytest.mark.skipif(os.geteuid() == 0, reason="permissions do not bind the superuser")

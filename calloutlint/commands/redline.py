@@ -55,19 +55,23 @@ def run(options: Namespace) -> int:
         with reader_may_leave():
             show_redlines(outcome, screen)
         return status(outcome)
-    corrections = _incorporate(package, rulebook)
+    written, by_hand = _incorporate(package, rulebook)
     with reader_may_leave():
-        show_incorporated(corrections, screen)
+        show_incorporated(written, by_hand, screen)
     return status(reviewed(read(options), rulebook, options))
 
 
-def _incorporate(package: "Package", rulebook: "Rulebook") -> "Sequence[Correction]":
+def _incorporate(
+    package: "Package", rulebook: "Rulebook"
+) -> "tuple[Sequence[Correction], Sequence[Correction]]":
+    """Write the corrections; those written, and those that have to be made by hand."""
     from calloutlint.redline.incorporate import incorporate
     from calloutlint.redline.settle import settle
 
     corrections = settle(package, rulebook.check)
+    left: set[int] = set()
     for drawing, group in groupby(corrections, key=lambda correction: correction.drawing):
-        incorporate(
-            Path(drawing.file), drawing.unit, [(correction.old, correction.new) for correction in group]
-        )
-    return corrections
+        changes = [(correction.old, correction.new) for correction in group]
+        left.update(id(callout) for callout in incorporate(Path(drawing.file), drawing.unit, changes))
+    by_hand = [correction for correction in corrections if id(correction.old) in left]
+    return [correction for correction in corrections if id(correction.old) not in left], by_hand

@@ -114,8 +114,8 @@ def _resized(size: Size, edit: Edit, unit: Unit | None) -> Size:
             return replace(size, tolerance=Deviations(upper, _deviation(edit, unit, lower)))
         case "largest" | "smallest", Limits(first, second, named):
             if (edit.word == "largest") is (second.amount > first.amount):
-                return replace(size, tolerance=Limits(first, _number(edit, unit, second), named))
-            return replace(size, tolerance=Limits(_number(edit, unit, first), second, named))
+                return replace(size, tolerance=Limits(first, _as_given(edit, unit), named))
+            return replace(size, tolerance=Limits(_as_given(edit, unit), second, named))
     raise UndeterminedError
 
 
@@ -153,11 +153,23 @@ def _number(edit: Edit, unit: Unit | None, like: Value | None) -> Value:
 
 def _deviation(edit: Edit, unit: Unit | None, like: Value) -> Value:
     """A deviation with its sign; nil in mm is a plain 0."""
-    number = _number(edit, unit, like)
-    if number.signed or (number.amount == 0 and unit is not Unit.INCH):
+    number = _as_given(edit, unit)
+    if number.amount == 0 and unit is not Unit.INCH:
+        return replace(number, text="0")
+    if number.signed:
         return number
     sign = "+" if number.amount or not like.signed else like.text[0]
     return replace(number, text=sign + number.text)
+
+
+def _as_given(edit: Edit, unit: Unit | None) -> Value:
+    """The number with the places that it is given with, as two limits or deviations have to have alike."""
+    if not isinstance(edit.value, Decimal):
+        raise UndeterminedError
+    number = written(edit.value, unit)
+    places = -int(edit.value.as_tuple().exponent)
+    point = "" if "." in number.text or places <= number.places else "."
+    return replace(number, text=number.text + point + "0" * (places - number.places))
 
 
 def _modifier(edit: Edit) -> Modifier:

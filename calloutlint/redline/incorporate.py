@@ -1,7 +1,7 @@
 """Corrections written into a sheet's file: nothing else in it touched, all at once or not at all."""
 
 import re
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from dataclasses import replace
 from pathlib import Path
 
@@ -13,41 +13,41 @@ from calloutlint.redline.splice import new_lines
 from calloutlint.units import Unit
 
 _LINES = re.compile("[^\r\n]*(?:\r\n|\r|\n)|[^\r\n]+")
-_LINE_END = re.compile("[\r\n]*$")
 
 
-def incorporate(path: Path, unit: Unit | None, changes: Iterable[tuple[Callout, Callout]]) -> None:
-    """Write corrected callouts into their sheet.
+def incorporate(path: Path, unit: Unit | None, changes: Iterable[tuple[Callout, Callout]]) -> list[Callout]:
+    """Write corrected callouts into their sheet; those that have to be corrected by hand are given back.
 
-    `changes` pairs each callout as read with its corrected form. Encoding, byte order mark, line ends and every
-    line that does not change stay as they are.
+    `changes` pairs each callout as read with its corrected form. Encoding, byte order mark, line ends and all
+    that does not change stay as they are.
 
-    Raises CalloutlintError, leaving the file as it was, where it cannot be written.
+    Raises:
+        CalloutlintError: the file cannot be written, and is left as it was.
     """
     text = read_text_file(path)
     lines = _LINES.findall(text.text)
-    style = _style_of(text)
-    for old, new in sorted(changes, key=lambda pair: pair[0].source[0].number, reverse=True):
-        _put(lines, old, new_lines(old, new, unit, style), text.newline)
-    write_whole(path, encode(replace(text, text="".join(lines)), str(path)))
-
-
-def _style_of(text: Text) -> Style:
-    """ASCII for a sheet that has no symbol outside it, or cannot hold one; else Unicode."""
-    return Style.UNICODE if text.encoding.startswith("utf") and not text.text.isascii() else Style.ASCII
-
-
-def _put(lines: list[str], old: Callout, new: list[str], newline: str) -> None:
-    """Put a callout's new lines where its old ones stand, each after what stands before it on its line."""
-    last = old.source[-1]
-    indent = lines[last.number - 1][: last.column] if len(old.source) > 1 else " " * last.column
-    if len(new) > len(old.source):
-        added = [f"{indent}{line}{newline}" for line in new[len(old.source) :]]
-        lines[last.number - 1] = lines[last.number - 1].rstrip("\r\n") + newline
-        lines[last.number : last.number] = added
-    for source, line in reversed(list(zip(old.source, [*new, *[None] * len(old.source)], strict=False))):
-        place = source.number - 1
-        if line is None:
-            del lines[place]
+    by_hand = []
+    for old, new in changes:
+        corrected = new_lines(old, new, unit, _style_of(old, text))
+        if corrected is None:
+            by_hand.append(old)
         else:
-            lines[place] = lines[place][: source.column] + line + _LINE_END.findall(lines[place])[0]
+            _put(lines, old, corrected)
+    written = "".join(lines)
+    if written != text.text:
+        write_whole(path, encode(replace(text, text=written), str(path)))
+    return by_hand
+
+
+def _style_of(callout: Callout, text: Text) -> Style:
+    """ASCII for a callout that has no symbol outside it, or where the file cannot hold one; else Unicode."""
+    plain = all(source.text.isascii() for source in callout.source)
+    return Style.ASCII if plain or not text.encoding.startswith("utf") else Style.UNICODE
+
+
+def _put(lines: list[str], callout: Callout, new: Sequence[str]) -> None:
+    """Put a callout's new lines where its old ones stand, each after what stands before it on its line."""
+    for source, line in zip(callout.source, new, strict=True):
+        place = source.number - 1
+        end = source.column + len(source.text)
+        lines[place] = lines[place][: source.column] + line + lines[place][end:]

@@ -41,7 +41,7 @@ def redlines(package: Package, findings: Sequence[Finding], check: Check) -> dic
     proven: set[int] = set()
     for batch in _batches(drafts, findings):
         proven |= _proven(batch, drafts, findings, package, check, before)
-    return {i: _redline(draft, i in proven) for i, draft in drafts.items()}
+    return {i: _redline(draft, findings[i], i in proven) for i, draft in drafts.items()}
 
 
 def _draft(finding: Finding) -> Callout | None:
@@ -58,15 +58,16 @@ def _draft(finding: Finding) -> Callout | None:
 
 
 def _read_back(callout: Callout, unit: Unit | None) -> Callout | None:
-    lines = write_callout(callout, Style.UNICODE)
+    lines = write_callout(callout, Style.UNICODE, unit)
     first = callout.source[0].number if callout.source else 1
     source = tuple(SourceLine(first + place, 0, line) for place, line in enumerate(lines))
     read = replace(callout, parts=parse_callout(lines, unit), source=source)
     return read if read.parts == callout.parts else None
 
 
-def _redline(callout: Callout, proven: bool) -> Redline:
-    return Redline("\n".join(write_callout(callout, Style.UNICODE)), proven, callout)
+def _redline(callout: Callout, finding: Finding, proven: bool) -> Redline:
+    unit = finding.drawing.unit if finding.drawing else None
+    return Redline("\n".join(write_callout(callout, Style.UNICODE, unit)), proven, callout)
 
 
 def _place(finding: Finding) -> Place:

@@ -14,6 +14,8 @@ from calloutlint.report.terminal import INDENT, show_balloon, show_callout, show
 from calloutlint.report.words import counted
 from calloutlint.review import Review
 
+NOTHING_LEFT = "Nothing to write: no proven correction is left."
+
 
 def show_redlines(review: Review, screen: Screen) -> None:
     """Print each finding that has a correction with the callout it is about, and how many are proven."""
@@ -37,8 +39,23 @@ def show_redlines(review: Review, screen: Screen) -> None:
         screen.paragraph("'redline --incorporate' writes the proven ones into the sheets.", indent=1)
 
 
-def show_incorporated(corrections: Sequence[Correction], screen: Screen) -> None:
-    """Print each callout as it was written into its sheet."""
+def show_incorporated(corrections: Sequence[Correction], by_hand: Sequence[Correction], screen: Screen) -> None:
+    """Print each callout as it was written into its sheet, and which are left to be corrected by hand."""
+    _show_corrected(corrections, screen)
+    files = len({correction.drawing.file for correction in corrections})
+    if corrections:
+        told = f"{counted(len(corrections), 'callout')} corrected in {counted(files, 'sheet')}."
+    else:
+        told = "Nothing was written: no proven correction can be placed." if by_hand else NOTHING_LEFT
+    screen.paragraph(told, ROLES.heading, indent=1)
+    for correction in by_hand:
+        place = f"{correction.drawing.name}, balloon {correction.new.balloon}"
+        screen.paragraph(
+            f"To be corrected by hand, since its text cannot be changed in place: {place}.", indent=1
+        )
+
+
+def _show_corrected(corrections: Sequence[Correction], screen: Screen) -> None:
     for drawing, group in groupby(corrections, key=lambda correction: correction.drawing):
         show_heading(drawing, screen)
         for correction in group:
@@ -48,9 +65,3 @@ def show_incorporated(corrections: Sequence[Correction], screen: Screen) -> None
             changed, marked = changed_rows(new, old, Mark("", ROLES.corrected))
             screen.lines(draw(changed, marked, screen.glyphs, screen.width - INDENT), INDENT)
             screen.line()
-    files = len({correction.drawing.file for correction in corrections})
-    if corrections:
-        told = f"{counted(len(corrections), 'callout')} corrected in {counted(files, 'sheet')}."
-    else:
-        told = "Nothing to write: no proven correction is left."
-    screen.paragraph(told, ROLES.heading, indent=1)
