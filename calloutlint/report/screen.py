@@ -2,10 +2,10 @@
 
 import os
 from collections.abc import Iterable, Mapping
+from contextlib import suppress
 from typing import TextIO
 
 from rich.cells import cell_len
-from rich.console import Console
 from rich.text import Text
 
 from calloutlint.report.printable import printable
@@ -14,17 +14,10 @@ from calloutlint.report.wrap import wrap
 
 NARROWEST = 40
 NARROWEST_TEXT = 20
+USUAL = 80
 
 # Locale settings that an interpreter sets by itself in the C locale (PEP 538).
 _COERCED = {"", "C.UTF-8", "C.utf8", "UTF-8"}
-
-
-class _Console(Console):
-    """A console that leaves it to the command what a closed pipe means."""
-
-    def on_broken_pipe(self) -> None:
-        """Pass the error on, where rich would end the process."""
-        raise BrokenPipeError
 
 
 class Screen:
@@ -33,16 +26,14 @@ class Screen:
     def __init__(self, stream: TextIO, *, plain: bool = False, width: int | None = None) -> None:
         """Write to `stream`, `width` columns wide (None: as wide as the terminal, else 80)."""
         plain = plain or not draws_symbols(stream.encoding, os.environ)
-        self._console = _Console(
-            file=stream,
-            width=width,
-            color_system=None if plain else "auto",
-            markup=False,
-            highlight=False,
-            emoji=False,
-        )
         self.glyphs = ASCII if plain else UNICODE
-        self.width = max(self._console.width, NARROWEST)
+        self.width = max(width or terminal_width(os.environ), NARROWEST)
+        self._stream = stream
+        self._console = None
+        if not plain and may_show_colours(stream, os.environ):
+            from calloutlint.report.console import Console  # only colours need the rest of rich
+
+            self._console = Console(stream, width)
 
     def spell(self, text: str) -> str:
         """`text` as this screen can show it."""
@@ -51,7 +42,10 @@ class Screen:
     def line(self, line: Text | str = "", style: str = "") -> None:
         """Print one line, as wide as it is."""
         text = line if isinstance(line, Text) else Text(self.spell(line), style)
-        self._console.print(text, soft_wrap=True, markup=False, highlight=False, emoji=False)
+        if self._console is None:
+            self._stream.write(f"{text.plain}\n")
+        else:
+            self._console.show(text)
 
     def lines(self, lines: Iterable[Text], indent: int = 0) -> None:
         """Print lines drawn elsewhere, moved right by `indent`."""
@@ -78,6 +72,22 @@ class Screen:
     def rule(self, style: str = "") -> None:
         """Print a line across the screen."""
         self.line(Text(self.glyphs.rule * self.width, style))
+
+
+def terminal_width(environment: Mapping[str, str]) -> int:
+    """The columns that COLUMNS states, else those of the terminal that the program runs in, else 80."""
+    stated = environment.get("COLUMNS", "")
+    if stated.isdecimal() and int(stated):
+        return int(stated)
+    for descriptor in range(3):
+        with suppress(OSError):
+            return os.get_terminal_size(descriptor).columns or USUAL
+    return USUAL
+
+
+def may_show_colours(stream: TextIO, environment: Mapping[str, str]) -> bool:
+    """Whether a stream is a terminal, or the user says that it takes colours like one."""
+    return stream.isatty() or "FORCE_COLOR" in environment or "TTY_COMPATIBLE" in environment
 
 
 def draws_symbols(encoding: str | None, environment: Mapping[str, str]) -> bool:
