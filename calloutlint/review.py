@@ -38,10 +38,13 @@ class Review:
 
     @property
     def unread(self) -> int:
-        """How many parts of callouts could not be read, those left out whose finding is waived."""
+        """How many parts of callouts, and lines of no callout, could not be read; waived ones are left out."""
         accepted = {id(judged.finding.part) for judged in self.findings if judged.waived is not None}
         callouts = (callout for drawing in self.package.drawings for callout in drawing.callouts)
-        return sum(id(part) not in accepted for callout in callouts for part in callout.unread)
+        parts = (part for callout in callouts for part in callout.unread)
+        stray = (line for drawing in self.package.drawings for line in drawing.lines if line.key is None)
+        lost = [*parts, *(line for line in stray if not line.known)]
+        return sum(id(part) not in accepted for part in lost)
 
 
 def review(package: Package, rulebook: Rulebook, gate: Grade = Grade.MAJOR) -> Review:

@@ -131,6 +131,11 @@ class DrawingView(View):
         return self.part.unit is not None
 
     @fact
+    def units_as_written(self) -> str:
+        """The units as written; empty where there are none."""
+        return next((line.value for line in self.part.lines if line.key == "units"), "")
+
+    @fact
     def number(self) -> str:
         """The drawing number; empty where there is none."""
         return self.part.number or ""

@@ -8,7 +8,7 @@ from calloutlint.model.drawing import Drawing, Package
 from calloutlint.redline.prove import Check, Redline, redlines, with_callouts
 from calloutlint.rulebook.finding import Finding
 
-MOST_ROUNDS = 12
+MOST_ROUNDS = 100
 
 
 class Correction(NamedTuple):
@@ -22,8 +22,8 @@ class Correction(NamedTuple):
 def settle(package: Package, check: Check) -> list[Correction]:
     """Every proven correction of a package.
 
-    A callout with several is corrected one at a time, each correction proven on top of those before it, so
-    that they cannot spoil each other.
+    Corrections are made rule by rule, one for each callout at a time, each proven on top of those before it:
+    so they cannot spoil each other, and of two cures for one joint only the first is taken.
     """
     current = package
     for _ in range(MOST_ROUNDS):
@@ -41,8 +41,10 @@ def settle(package: Package, check: Check) -> list[Correction]:
 
 
 def _first_proven(findings: Sequence[Finding], found: dict[int, Redline]) -> dict[int, Callout]:
+    """The proven corrections that the first rule with any prescribes, one for each callout."""
+    proven = [(findings[i], redline) for i, redline in sorted(found.items()) if redline.proven]
     changes: dict[int, Callout] = {}
-    for i, redline in sorted(found.items()):
-        if redline.proven:
-            changes.setdefault(id(findings[i].callout), redline.callout)
+    for finding, redline in proven:
+        if finding.rule == proven[0][0].rule:
+            changes.setdefault(id(finding.callout), redline.callout)
     return changes
