@@ -1,5 +1,6 @@
 """Which holes the stated joints tie together: joints of the package, of its sheets, and of fastener notes."""
 
+import re
 from collections.abc import Iterator
 from dataclasses import dataclass, replace
 
@@ -11,6 +12,8 @@ from calloutlint.model.fastener import Fastener, HoleRef, Joint
 from calloutlint.model.size import Deviations, Limits, PlusMinus, Size
 from calloutlint.model.values import Value
 from calloutlint.units import Unit, convert
+
+_PIN = re.compile(r"\b(?:DOWELS?|PINS?)\b", re.IGNORECASE)
 
 
 @dataclass(frozen=True, slots=True)
@@ -96,7 +99,13 @@ def _stated(package: Package) -> Iterator[tuple[Joint, Drawing | None]]:
 def _notes(package: Package) -> Iterator[tuple[Drawing, Callout, FastenerNote]]:
     for drawing in package.drawings:
         for callout in drawing.callouts:
-            yield from ((drawing, callout, part) for part in callout.parts if isinstance(part, FastenerNote))
+            notes = (part for part in callout.parts if isinstance(part, FastenerNote))
+            yield from ((drawing, callout, note) for note in notes if not _sized_by_hole(note.fastener))
+
+
+def _sized_by_hole(fastener: Fastener) -> bool:
+    """Whether a note names a pin without its size (`FOR DOWEL PIN`), and so says no more than the hole."""
+    return fastener.thread is None and fastener.pin is None and bool(_PIN.search(fastener.text))
 
 
 def _noted(callout: Callout, note: FastenerNote) -> Joint:

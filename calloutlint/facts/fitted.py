@@ -212,22 +212,23 @@ def mating_of(size: Size, callout: CalloutView) -> MatingView | None:
     own = callout.view_of(size)
     if own.smallest is None or own.largest is None:
         return None
-    found = _together(size, callout, own.smallest, own.largest)
+    kind = called.pop()
+    found = _together(size, callout, kind, (own.smallest, own.largest))
     if found is None:
         return None
     internal, fits = found
-    return MatingView(size, callout, called.pop(), internal, fits)
+    return MatingView(size, callout, kind, internal, fits)
 
 
 def _together(
-    size: Size, callout: CalloutView, smallest: Decimal, largest: Decimal
+    size: Size, callout: CalloutView, called: FitKind, limits: tuple[Decimal, Decimal]
 ) -> tuple[bool, tuple[Fit, Partner]] | None:
-    """Whether the own size is the hole, and the fit with its partner; None where no partner settles it."""
+    """Whether the own size is the hole, and its fit; None where no partner is known, or one is as called."""
     pins = [pin for pin in _pins(callout) if pin is not None]
     internal = True if pins and size.fit is None else (size.fit is not None and size.fit.letters.isupper())
     partners = pins if pins and internal else list(_coded(size, callout))
-    fits = [(_fit(smallest, largest, each, internal), each) for each in partners]
-    if not fits or len({fit.kind for fit, _ in fits}) != 1:
+    fits = [(_fit(*limits, each, internal), each) for each in partners]
+    if not fits or any(fit.kind is called for fit, _ in fits):
         return None
     return internal, fits[0]
 

@@ -166,10 +166,8 @@ def _as_given(edit: Edit, unit: Unit | None) -> Value:
     """The number with the places that it is given with, as two limits or deviations have to have alike."""
     if not isinstance(edit.value, Decimal):
         raise UndeterminedError
-    number = written(edit.value, unit)
-    places = -int(edit.value.as_tuple().exponent)
-    point = "" if "." in number.text or places <= number.places else "."
-    return replace(number, text=number.text + point + "0" * (places - number.places))
+    exact = Value(f"{edit.value:f}", edit.value, unit)
+    return written(edit.value, unit, exact) if unit is Unit.INCH else exact
 
 
 def _modifier(edit: Edit) -> Modifier:

@@ -49,17 +49,17 @@ def _position(sheet: FitSheet) -> str:
     worked = sheet.worked
     sum_ = f"smallest hole {length(sheet, worked.hole.mmc)} − fastener {length(sheet, worked.fastener)}"
     clearance = length(sheet, worked.hole.mmc - worked.fastener)
-    taken = f" = {clearance} − fixing hole {_taken(sheet)}" if worked.held.demand else ""
+    taken = f" = {clearance}{_share(sheet, '−')}" if worked.held.demand else ""
     largest = length(sheet, worked.tolerance.amount)
     if worked.spare < 0:
-        return f"No position tolerance fits: {sum_}{taken} = {length(sheet, worked.spare)}."
+        return f"No position tolerance fits: {sum_}{taken} = {length(sheet, worked.spare)}.{_lean(sheet)}"
     if worked.held.fixed and worked.held.tolerance is None:
         half = length(sheet, worked.tolerance.amount / 2)
         return (
             f"The position tolerances of both holes may add up to {largest}, such as {half} each, with a "
             f"projected zone on the fixing hole: {sum_} = {largest}."
         )
-    return f"Position up to ⌀{largest}: {sum_}{taken} = {largest}.{_tail(sheet)}"
+    return f"Position up to ⌀{largest}: {sum_}{taken} = {largest}.{_lean(sheet)}{_tail(sheet)}"
 
 
 def _hole(sheet: FitSheet) -> str:
@@ -68,25 +68,24 @@ def _hole(sheet: FitSheet) -> str:
         f"fastener {length(sheet, worked.fastener)}",
         f"position {length(sheet, worked.tolerance.amount)}",
     ]
-    pieces += [f"fixing hole {_taken(sheet)}"] if worked.held.demand else []
     least = worked.fastener + worked.tolerance.amount + worked.held.demand
-    sum_ = f"{' + '.join(pieces)} = {length(sheet, least)}"
+    sum_ = f"{' + '.join(pieces)}{_share(sheet, '+')} = {length(sheet, least)}"
     assert worked.drill is not None
     drilled = f"{length(sheet, worked.hole.smallest)} to {length(sheet, worked.hole.largest)}"
     wide = ", and the bonus at Ⓛ" if worked.tolerance.modifier is Modifier.LMC else ""
     return (
         f"Hole of at least {length(sheet, least)} at MMC: {sum_}{wide}. The next stock drill that fits as it "
         f"is usually drilled is {worked.drill.name}, ⌀{length(sheet, worked.drill.diameter)}: {drilled}."
-        f"{_tail(sheet)}"
+        f"{_lean(sheet)}{_tail(sheet)}"
     )
 
 
 def _fastener(sheet: FitSheet) -> str:
     worked = sheet.worked
     most = length(sheet, worked.fastener)
-    taken = f"; − fixing hole {_taken(sheet)} → {most}" if worked.held.demand else ""
+    taken = f"{_share(sheet, '−')} = {most}" if worked.held.demand else ""
     screws = f" The largest screws: {' and '.join(sheet.screws)}." if sheet.screws else ""
-    return f"Fastener up to ⌀{most}: {_free(sheet)}{taken}.{screws}{_tail(sheet)}"
+    return f"Fastener up to ⌀{most}: {_free(sheet)}{taken}.{screws}{_lean(sheet)}{_tail(sheet)}"
 
 
 _FOUND = {
@@ -110,6 +109,17 @@ def _free(sheet: FitSheet) -> str:
     at_mmc = worked.hole.mmc - worked.inner
     words = f"smallest hole {length(sheet, worked.hole.mmc)} − position {length(sheet, at_mmc)}"
     return f"{words} = {length(sheet, worked.inner)}"
+
+
+def _share(sheet: FitSheet, sign: str) -> str:
+    """The fixing hole's part of a sum: ` − fixing hole 0.5`; empty where it takes nothing."""
+    demand = sheet.worked.held.demand
+    return f" {sign} fixing hole {length(sheet, demand)}" if demand else ""
+
+
+def _lean(sheet: FitSheet) -> str:
+    """How the tilt makes the fixing hole's part, as a sentence; empty where it does not."""
+    return f" The fixing hole takes {_taken(sheet)}." if sheet.worked.held.tilts else ""
 
 
 def _taken(sheet: FitSheet) -> str:
@@ -156,9 +166,9 @@ def measured(sheet: FitSheet, found: Measured) -> str:
     if verdict_.allowed is None:
         why = "the size is outside its limits"
     else:
-        bonus = verdict_.allowed - tolerance.amount
-        plus = f" + bonus {length(sheet, bonus)}" if tolerance.modifier else ""
-        why = f"allowed {length(sheet, tolerance.amount)}{plus} = {length(sheet, verdict_.allowed)}"
+        bonus = length(sheet, verdict_.allowed - tolerance.amount)
+        plus = f" + bonus {bonus} = {length(sheet, verdict_.allowed)}" if tolerance.modifier else ""
+        why = f"allowed {length(sheet, tolerance.amount)}{plus}"
     if verdict_.decision is Decision.REJECT and found.at_mmc is not None:
         sum_ = f"{length(sheet, tolerance.amount)} + bonus {length(sheet, found.at_mmc - tolerance.amount)}"
         return f"{start}{why}: reject. At Ⓜ it would be accepted: {sum_} = {length(sheet, found.at_mmc)}."
