@@ -1,15 +1,16 @@
-"""Pickles parsers and patterns in their compiled state.
+"""Pickles parsers, patterns and conditions in their compiled state.
 
 By itself a pattern is pickled as its text, and to compile the patterns of a lexer again is what takes longest
 at start-up. Here it is pickled as the program for the engine of `re`. That program belongs to one version of
 Python, and so does the file it is kept in; the engine refuses a program that is none of its own.
 """
 
+import marshal
 import pickle
 import re
 from array import array
 from importlib import import_module
-from types import ModuleType
+from types import CodeType, ModuleType
 from typing import IO, Any
 
 from lark.parsers.lalr_analysis import Action
@@ -27,6 +28,8 @@ class _Pickler(pickle.Pickler):
         """How to write what would not come back ready for use."""
         if isinstance(part, re.Pattern):
             return pattern_of, _program_of(part)
+        if isinstance(part, CodeType):
+            return marshal.loads, (marshal.dumps(part),)
         if isinstance(part, Action):  # told apart by identity
             return part.name
         if isinstance(part, ModuleType):

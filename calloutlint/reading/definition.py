@@ -1,6 +1,5 @@
 """The definition of a package: what its package.toml states."""
 
-import tomllib
 from collections.abc import Callable, Iterable
 from pathlib import Path
 from typing import Any, NamedTuple
@@ -34,6 +33,8 @@ def read_definition(folder: Path) -> Definition:
     file = folder / DEFINITION
     if not is_file(file):
         return Definition(file)
+    import tomllib  # single sheets and folders without a definition do not pay for it
+
     try:
         table = tomllib.loads(read_bytes(file).decode("utf-8-sig").replace("\r\n", "\n"))
     except UnicodeDecodeError:

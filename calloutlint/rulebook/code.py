@@ -4,6 +4,7 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from decimal import Decimal
 from functools import cached_property
+from types import CodeType
 from typing import Any
 
 from calloutlint.facts.view import View
@@ -13,18 +14,23 @@ EXAMINED = "examined"
 
 @dataclass(frozen=True)
 class Code:
-    """A Python expression with the constants that it names; it can be saved and read again."""
+    """A compiled Python expression with the constants that it names; it can be saved and read again."""
 
-    expression: str
+    program: CodeType
     constants: dict[str, Any]
 
     @cached_property
     def read(self) -> Callable[[View], Any]:
         """The function of the examined view that returns the expression's value."""
-        return eval(f"lambda {EXAMINED}: {self.expression}", {"divide": divide, **self.constants})  # type: ignore[no-any-return]
+        return eval(self.program, {"divide": divide, **self.constants})  # type: ignore[no-any-return]
 
     def __reduce__(self) -> tuple[Any, ...]:
-        return Code, (self.expression, self.constants)
+        return Code, (self.program, self.constants)
+
+
+def compile_code(expression: str, constants: dict[str, Any]) -> Code:
+    """The code of an expression in which the examined view is called EXAMINED."""
+    return Code(compile(f"lambda {EXAMINED}: {expression}", "<rule>", "eval"), constants)
 
 
 def divide(dividend: Decimal | int, divisor: Decimal | int) -> Decimal | None:

@@ -66,7 +66,9 @@ def _built(texts: Sequence[SheetText]) -> Rulebook:
     written = filed_rules(sheets)
     in_force = amended(written, sheets)
     rules = build_rules(in_force)
-    return Rulebook(rules, rules if in_force == written else build_rules(written))
+    rulebook = Rulebook(rules, rules if in_force == written else build_rules(written))
+    _ = rulebook.digest  # kept with it
+    return rulebook
 
 
 def _code_stamps() -> Iterator[object]:

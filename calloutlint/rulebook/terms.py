@@ -11,7 +11,7 @@ from decimal import Decimal
 from itertools import accumulate
 from typing import Any
 
-from calloutlint.rulebook.code import EXAMINED, Code
+from calloutlint.rulebook.code import EXAMINED, Code, compile_code
 from calloutlint.rulebook.kinds import COUNT, FLAG, Kind
 from calloutlint.units import Unit
 
@@ -77,7 +77,7 @@ def code_of(form: Callable[[Writer], str]) -> Code:
     steps = ({"(": 1, ")": -1}.get(character, 0) for character in expression)
     if max(accumulate(steps), default=0) > DEEPEST:
         raise RecursionError
-    return Code(expression, writer.constants)
+    return compile_code(expression, writer.constants)
 
 
 def _operands(writer: Writer, terms: Sequence[Term]) -> tuple[str, list[str]]:
