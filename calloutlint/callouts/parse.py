@@ -6,11 +6,11 @@ from functools import cache, lru_cache
 
 from lark import Lark, Token, Tree, UnexpectedInput, UnexpectedToken
 
-from calloutlint.callouts.build import build
-from calloutlint.callouts.build.line import Line, Node
 from calloutlint.callouts.expected import expected_words
 from calloutlint.callouts.grammar import load_grammar
 from calloutlint.callouts.note import find_note
+from calloutlint.callouts.parts.assemble import assemble
+from calloutlint.callouts.parts.line import Line, Node
 from calloutlint.callouts.spelling import Normal, normalise
 from calloutlint.model.callout import Part, Unread
 from calloutlint.model.source import Span
@@ -51,7 +51,7 @@ def _parse(lines: tuple[str, ...], unit: Unit | None, decimal_comma: bool) -> tu
         line = _parse_line(index, normal, unit, framed)
         framed = any(isinstance(item, Tree) and item.data in {"frame", "segment"} for item in line.items)
         parsed.append(line)
-    return build(parsed)
+    return assemble(parsed)
 
 
 def _too_long(text: str, index: int) -> Unread:

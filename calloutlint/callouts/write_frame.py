@@ -2,8 +2,8 @@
 
 from collections.abc import Iterator, Sequence
 
-from calloutlint.callouts.build.frames import CHARACTERISTIC_OF
-from calloutlint.callouts.build.modifiers import MODIFIER_OF
+from calloutlint.callouts.parts.modifiers import MODIFIER_OF
+from calloutlint.callouts.parts.read_frame import CHARACTERISTIC_OF
 from calloutlint.callouts.writing import Style, Writing
 from calloutlint.model.frame import (
     DatumRef,

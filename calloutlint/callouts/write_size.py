@@ -2,8 +2,8 @@
 
 from decimal import Decimal
 
-from calloutlint.callouts.build.modifiers import MODIFIER_OF
-from calloutlint.callouts.build.sizes import FORMS
+from calloutlint.callouts.parts.modifiers import MODIFIER_OF
+from calloutlint.callouts.parts.read_size import FORMS
 from calloutlint.callouts.writing import Writing
 from calloutlint.model.hole import HoleStep, StepKind
 from calloutlint.model.size import (

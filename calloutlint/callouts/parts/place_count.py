@@ -2,10 +2,10 @@
 
 from lark import Token
 
-from calloutlint.callouts.build.drafts import FrameDraft
-from calloutlint.callouts.build.sizes import read_count
-from calloutlint.callouts.build.state import HOLES, Hole, State
-from calloutlint.callouts.build.take_word import as_word
+from calloutlint.callouts.parts.drafts import FrameDraft
+from calloutlint.callouts.parts.place_word import as_word
+from calloutlint.callouts.parts.read_size import read_count
+from calloutlint.callouts.parts.state import HOLES, Hole, State
 
 
 def take_count(state: State, token: Token) -> None:

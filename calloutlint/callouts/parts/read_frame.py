@@ -5,9 +5,9 @@ from dataclasses import dataclass
 
 from lark import Token
 
-from calloutlint.callouts.build.drafts import SegmentDraft
-from calloutlint.callouts.build.line import Line
-from calloutlint.callouts.build.segment import SegmentReader
+from calloutlint.callouts.parts.drafts import SegmentDraft
+from calloutlint.callouts.parts.line import Line
+from calloutlint.callouts.parts.read_segment import SegmentReader
 from calloutlint.model.frame import Characteristic
 
 CHARACTERISTIC_OF = dict(zip("⏤⏥○⌭⌒⌓∠⟂∥⌖◎⌯↗⌰", Characteristic, strict=True))

@@ -5,8 +5,8 @@ from decimal import Decimal
 
 from lark import Token, Tree
 
-from calloutlint.callouts.build.drafts import ThreadDraft
-from calloutlint.callouts.build.line import Line
+from calloutlint.callouts.parts.drafts import ThreadDraft
+from calloutlint.callouts.parts.line import Line
 from calloutlint.callouts.value import parse_value
 from calloutlint.model.source import Span
 from calloutlint.model.thread import ThreadSystem

@@ -2,19 +2,19 @@
 
 from lark import Token, Tree
 
-from calloutlint.callouts.build.drafts import DepthDraft, SizeDraft, TargetDraft
-from calloutlint.callouts.build.line import joined, tokens
-from calloutlint.callouts.build.sizes import (
+from calloutlint.callouts.expected import BY_PLACE
+from calloutlint.callouts.parts.drafts import DepthDraft, SizeDraft, TargetDraft
+from calloutlint.callouts.parts.line import joined, tokens
+from calloutlint.callouts.parts.place_hole import fits_step, place_depth, place_extent, put_in_step
+from calloutlint.callouts.parts.place_word import as_word
+from calloutlint.callouts.parts.read_size import (
     SIZE_MODIFIERS,
     add_tolerance,
     read_size,
     size_form,
     upper_and_lower,
 )
-from calloutlint.callouts.build.state import State
-from calloutlint.callouts.build.take_hole import fits_step, place_depth, place_extent, put_in_step
-from calloutlint.callouts.build.take_word import as_word
-from calloutlint.callouts.expected import BY_PLACE
+from calloutlint.callouts.parts.state import State
 from calloutlint.model.size import Limits, SizeForm, SizeStatus
 from calloutlint.model.values import Value
 

@@ -4,12 +4,12 @@ import re
 
 from lark import Token, Tree
 
-from calloutlint.callouts.build.drafts import DepthDraft, SizeDraft, StepDraft, ThreadDraft
-from calloutlint.callouts.build.line import tokens
-from calloutlint.callouts.build.state import HOLES, SPEAKS_OF_SIZE_BEFORE, State
-from calloutlint.callouts.build.take_word import as_word
-from calloutlint.callouts.build.threads import read_thread
 from calloutlint.callouts.expected import BY_PLACE
+from calloutlint.callouts.parts.drafts import DepthDraft, SizeDraft, StepDraft, ThreadDraft
+from calloutlint.callouts.parts.line import tokens
+from calloutlint.callouts.parts.place_word import as_word
+from calloutlint.callouts.parts.read_thread import read_thread
+from calloutlint.callouts.parts.state import HOLES, SPEAKS_OF_SIZE_BEFORE, State
 from calloutlint.model.callout import Words
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import SizeForm, Through

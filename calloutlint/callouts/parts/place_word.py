@@ -2,11 +2,11 @@
 
 from lark import Token, Tree
 
-from calloutlint.callouts.build.line import tokens
-from calloutlint.callouts.build.sizes import SIZE_MODIFIERS
-from calloutlint.callouts.build.state import State
 from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.note import read_note
+from calloutlint.callouts.parts.line import tokens
+from calloutlint.callouts.parts.read_size import SIZE_MODIFIERS
+from calloutlint.callouts.parts.state import State
 from calloutlint.callouts.words import is_characteristic, slip_of
 from calloutlint.model.callout import FastenerNote, TargetKind, Unread
 

@@ -4,8 +4,8 @@ import re
 
 from lark import Token, Tree
 
-from calloutlint.callouts.build.drafts import SizeDraft
-from calloutlint.callouts.build.line import Line
+from calloutlint.callouts.parts.drafts import SizeDraft
+from calloutlint.callouts.parts.line import Line
 from calloutlint.model.size import Count, Deviations, FitCode, Limits, PlusMinus, SizeForm, SizeModifier
 from calloutlint.model.values import Value
 

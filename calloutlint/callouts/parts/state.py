@@ -2,7 +2,7 @@
 
 from lark import Token, Tree
 
-from calloutlint.callouts.build.drafts import (
+from calloutlint.callouts.parts.drafts import (
     DepthDraft,
     FrameDraft,
     SizeDraft,
@@ -10,7 +10,7 @@ from calloutlint.callouts.build.drafts import (
     TargetDraft,
     ThreadDraft,
 )
-from calloutlint.callouts.build.line import Line, Node
+from calloutlint.callouts.parts.line import Line, Node
 from calloutlint.callouts.words import meanings_of, nearest_spelling
 from calloutlint.model.callout import Part, Unread, Words
 from calloutlint.model.frame import Scope

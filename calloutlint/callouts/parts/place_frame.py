@@ -5,11 +5,11 @@ from dataclasses import replace
 
 from lark import Token, Tree
 
-from calloutlint.callouts.build.drafts import FrameDraft, SizeDraft, TargetDraft
-from calloutlint.callouts.build.frames import FrameRead, read_frame
-from calloutlint.callouts.build.line import tokens
-from calloutlint.callouts.build.state import State
 from calloutlint.callouts.expected import BY_PLACE
+from calloutlint.callouts.parts.drafts import FrameDraft, SizeDraft, TargetDraft
+from calloutlint.callouts.parts.line import tokens
+from calloutlint.callouts.parts.read_frame import FrameRead, read_frame
+from calloutlint.callouts.parts.state import State
 from calloutlint.callouts.words import slip_of
 from calloutlint.model.callout import DatumFeature
 from calloutlint.model.frame import Modifier, ModifierUse, Scope, ScopeKind

@@ -4,15 +4,15 @@ from collections.abc import Callable, Sequence
 
 from lark import Token, Tree
 
-from calloutlint.callouts.build import take_count, take_frame, take_hole, take_size, take_word
-from calloutlint.callouts.build.drafts import FrameDraft, SizeDraft
-from calloutlint.callouts.build.line import Line, tokens
-from calloutlint.callouts.build.state import DRAFTS, HOLES, State
 from calloutlint.callouts.expected import BY_PLACE
+from calloutlint.callouts.parts import place_count, place_frame, place_hole, place_size, place_word
+from calloutlint.callouts.parts.drafts import FrameDraft, SizeDraft
+from calloutlint.callouts.parts.line import Line, tokens
+from calloutlint.callouts.parts.state import DRAFTS, HOLES, State
 from calloutlint.model.callout import Part, Unread, Words
 
 
-def build(lines: Sequence[Line]) -> tuple[Part, ...]:
+def assemble(lines: Sequence[Line]) -> tuple[Part, ...]:
     """The parts of a callout from its parsed lines, in reading order."""
     state = State()
     for line in lines:
@@ -36,9 +36,9 @@ def _read(state: State, line: Line) -> None:
             _take_rest(state)
             break
     state.end_words()
-    take_count.end_count(state)
+    place_count.end_count(state)
     if state.depth is not None and state.depth.size is None:
-        take_hole.place_extent(state, state.depth)
+        place_hole.place_extent(state, state.depth)
     if state.broken:
         _mark_doubtful(state)
 
@@ -104,46 +104,46 @@ def _mark_doubtful(state: State) -> None:
 
 
 _TREES: dict[str, Callable[[State, Tree[Token]], None]] = {
-    "size": take_size.take_size,
-    "stacked": take_size.take_stacked,
-    "thread": take_hole.take_thread,
-    "frame": take_frame.take_frame,
-    "segment": take_frame.take_segment,
-    "target": take_frame.take_target,
-    "lost": take_word.take_lost,
+    "size": place_size.take_size,
+    "stacked": place_size.take_stacked,
+    "thread": place_hole.take_thread,
+    "frame": place_frame.take_frame,
+    "segment": place_frame.take_segment,
+    "target": place_frame.take_target,
+    "lost": place_word.take_lost,
 }
 _TOKENS: dict[str, Callable[[State, Token], None]] = {
-    "COUNT": take_count.take_count,
-    "THRU": take_hole.take_through,
-    "DEPTH": take_hole.take_depth,
-    "DEEP": take_hole.take_deep,
-    "STEP": take_hole.take_step,
-    "DRILL_NAME": take_hole.take_drill_name,
-    "BY": take_hole.take_by,
-    "LEFT_HAND": take_hole.take_left_hand,
-    "STARTS": take_hole.take_starts,
-    "MAX": take_size.take_status,
-    "MIN": take_size.take_status,
-    "REFERENCE": take_size.take_status,
-    "BASIC": take_size.take_status,
-    "SIZE_MODIFIER": take_size.take_size_modifier,
-    "BOXED_FORM": take_size.take_boxed_form,
-    "OPEN_BOX": take_size.open_box,
-    "CLOSE_BOX": take_size.close,
-    "OPEN": take_size.open_parenthesis,
-    "CLOSE": take_size.close,
-    "PROJECTED_HEIGHT": take_frame.take_projected_height,
-    "ANGLE_SIGN": take_size.take_angle_sign,
-    "SCOPE": take_frame.take_scope,
-    "DATUM_FEATURE": take_frame.take_datum_feature,
-    "DATUM_BOX": take_frame.take_datum_feature,
-    "FASTENER": take_word.take_fastener,
-    "WORD": take_word.take_word,
-    "ON_CIRCLE": take_word.take_plain,
-    "NUMBERED_NOTE": take_word.take_plain,
-    "DESIGNATION": take_word.take_plain,
-    "WITHIN": take_word.take_plain,
-    "STRAY": take_word.as_word,
+    "COUNT": place_count.take_count,
+    "THRU": place_hole.take_through,
+    "DEPTH": place_hole.take_depth,
+    "DEEP": place_hole.take_deep,
+    "STEP": place_hole.take_step,
+    "DRILL_NAME": place_hole.take_drill_name,
+    "BY": place_hole.take_by,
+    "LEFT_HAND": place_hole.take_left_hand,
+    "STARTS": place_hole.take_starts,
+    "MAX": place_size.take_status,
+    "MIN": place_size.take_status,
+    "REFERENCE": place_size.take_status,
+    "BASIC": place_size.take_status,
+    "SIZE_MODIFIER": place_size.take_size_modifier,
+    "BOXED_FORM": place_size.take_boxed_form,
+    "OPEN_BOX": place_size.open_box,
+    "CLOSE_BOX": place_size.close,
+    "OPEN": place_size.open_parenthesis,
+    "CLOSE": place_size.close,
+    "PROJECTED_HEIGHT": place_frame.take_projected_height,
+    "ANGLE_SIGN": place_size.take_angle_sign,
+    "SCOPE": place_frame.take_scope,
+    "DATUM_FEATURE": place_frame.take_datum_feature,
+    "DATUM_BOX": place_frame.take_datum_feature,
+    "FASTENER": place_word.take_fastener,
+    "WORD": place_word.take_word,
+    "ON_CIRCLE": place_word.take_plain,
+    "NUMBERED_NOTE": place_word.take_plain,
+    "DESIGNATION": place_word.take_plain,
+    "WITHIN": place_word.take_plain,
+    "STRAY": place_word.as_word,
 }
 # Pieces that may turn out to be plain words: a run of words goes on through them.
 _MAY_BE_WORDS = {

@@ -5,9 +5,9 @@ from collections.abc import Callable, Sequence
 
 from lark import Token
 
-from calloutlint.callouts.build.drafts import SegmentDraft
-from calloutlint.callouts.build.line import Line, joined
-from calloutlint.callouts.build.modifiers import BARE_MODIFIERS, WITH_NUMBER, modifier_of
+from calloutlint.callouts.parts.drafts import SegmentDraft
+from calloutlint.callouts.parts.line import Line, joined
+from calloutlint.callouts.parts.modifiers import BARE_MODIFIERS, WITH_NUMBER, modifier_of
 from calloutlint.model.frame import (
     Characteristic,
     DatumLetter,
