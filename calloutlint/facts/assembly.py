@@ -8,7 +8,7 @@ from calloutlint.facts.fastener import stated_limits
 from calloutlint.facts.feature import leading_size
 from calloutlint.model.callout import Callout, FastenerNote
 from calloutlint.model.drawing import Drawing, Package
-from calloutlint.model.fastener import Fastener, HoleRef, Joint
+from calloutlint.model.fastener import Fastener, Hold, HoleRef, Joint
 from calloutlint.model.size import Deviations, Limits, PlusMinus, Size
 from calloutlint.model.values import Value
 from calloutlint.units import Unit, convert
@@ -39,6 +39,16 @@ class StatedJoint:
         """Every balloon that it names."""
         return (*self.holes, *self.mates)
 
+    @property
+    def clearance(self) -> tuple[Member, ...]:
+        """Balloons of its clearance holes: those named first, and those it floats through."""
+        return self.members if self.joint.hold is Hold.FLOATING else self.holes
+
+    @property
+    def fixing(self) -> tuple[Member, ...]:
+        """Balloons of the holes it is fixed in."""
+        return () if self.joint.hold is Hold.FLOATING else self.mates
+
 
 class Assembly:
     """The stated joints of a package."""
@@ -60,8 +70,8 @@ class Assembly:
             if id(callout) not in named
         ]
         self.joints = (*stated, *noted)
-        self._clearance = {id(member.callout) for joint in self.joints for member in joint.holes}
-        self._named = self._clearance | {id(member.callout) for joint in self.joints for member in joint.mates}
+        self._clearance = {id(member.callout) for joint in self.joints for member in joint.clearance}
+        self._named = {id(member.callout) for joint in self.joints for member in joint.members}
 
     def is_clearance(self, callout: Callout) -> bool:
         """Whether a stated joint has the callout as a clearance hole."""

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from dataclasses import replace
 from decimal import Decimal
 from functools import cached_property
@@ -22,6 +23,7 @@ from calloutlint.trade.pins import PinLimits, dowel_limits
 from calloutlint.trade.threads import series_has
 from calloutlint.units import Unit, convert
 
+_BESIDE = re.compile(r"\b(?:WASHERS?|NUTS?)\b", re.IGNORECASE)
 COUNTERSUNK = {Head.SOCKET_COUNTERSUNK, Head.FLAT}
 
 
@@ -87,6 +89,11 @@ class FastenerView(View):
         if self.part.thread is None:
             return self.part.pin is not None
         return self._clearance is not None and series_has(self.part.thread) is not False
+
+    @fact
+    def goes_with_one(self) -> bool:
+        """Whether it is no fastener itself but a washer or a nut."""
+        return bool(_BESIDE.search(self.part.text))
 
     @fact
     def pin(self) -> bool:

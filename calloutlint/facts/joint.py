@@ -66,18 +66,13 @@ class JointView(View):
     @cached_property
     def passages(self) -> tuple[PassageView, ...]:
         """Its clearance holes: those named first, and those it floats through; tapped ones left out."""
-        mates = self.part.mates if self.hold is Hold.FLOATING else ()
-        clear = (
-            member for member in (*self.part.holes, *mates) if member.callout and not member.callout.threads
-        )
-        fastener = self.part.joint.fastener
-        return tuple(PassageView(self._view(member), fastener, self) for member in clear if _is_hole(member))
+        clear = (member for member in self.part.clearance if _is_hole(member) and not _is_tapped(member))
+        return tuple(PassageView(self._view(member), self.part.joint.fastener, self) for member in clear)
 
     @cached_property
     def fixings(self) -> tuple[FixingView, ...]:
         """The holes it is fixed in."""
-        mates = self.part.mates if self.hold is not Hold.FLOATING else ()
-        return tuple(FixingView(self._view(member), self) for member in mates if _fixes(member))
+        return tuple(FixingView(self._view(member), self) for member in self.part.fixing if _fixes(member))
 
     @cached_property
     def members(self) -> tuple[MemberView, ...]:
@@ -87,9 +82,8 @@ class JointView(View):
 
     @property
     def _at_hand(self) -> Iterator[Member]:
-        yield from (member for member in self.part.holes if _is_hole(member))
-        suits = _is_hole if self.hold is Hold.FLOATING else _fixes
-        yield from (member for member in self.part.mates if suits(member))
+        yield from (member for member in self.part.clearance if _is_hole(member))
+        yield from (member for member in self.part.fixing if _fixes(member))
 
     def _view(self, member: Member) -> CalloutView:
         assert member.callout is not None
@@ -97,10 +91,11 @@ class JointView(View):
 
     def is_outermost(self, callout: Callout) -> bool:
         """Whether a clearance hole is in the part under the head: the first named, or one of only two."""
-        clearance = (*self.part.holes, *(self.part.mates if self.hold is Hold.FLOATING else ()))
-        parts = list(dict.fromkeys(_part_name(member) for member in clearance))
-        outer = parts[:OUTER_PARTS] if self.hold is Hold.FLOATING and len(parts) == OUTER_PARTS else parts[:1]
-        return any(_part_name(member) in outer for member in clearance if member.callout is callout)
+        parts = list(dict.fromkeys(_part_name(member) for member in self.part.clearance))
+        two = self.hold is Hold.FLOATING and len(parts) == OUTER_PARTS
+        outer = parts if two else parts[:1]
+        own = (member for member in self.part.clearance if member.callout is callout)
+        return any(_part_name(member) in outer for member in own)
 
     @fact
     def missing(self) -> tuple[str, ...]:
@@ -111,17 +106,14 @@ class JointView(View):
     @fact
     def missing_drawings(self) -> tuple[str, ...]:
         """Drawings of clearance holes that are not in the package; the part that fixes may be bought."""
-        clearance = self.part.members if self.hold is Hold.FLOATING else self.part.holes
-        lost = {m.ref.drawing for m in clearance if m.drawing is None and m.ref.drawing is not None}
+        lost = {m.ref.drawing for m in self.part.clearance if m.drawing is None and m.ref.drawing is not None}
         return tuple(sorted(lost)) if self._package.assembled else ()
 
     @fact
     def no_holes(self) -> tuple[str, ...]:
         """Balloons it names whose callout is no hole, as the joint writes them."""
-        held = self.hold is not Hold.FLOATING
-        lost = [member for member in self.part.holes if member.callout and not _is_hole(member)]
-        suits = _fixes if held else _is_hole
-        lost += [member for member in self.part.mates if member.callout and not suits(member)]
+        lost = [member for member in self.part.clearance if member.callout and not _is_hole(member)]
+        lost += [member for member in self.part.fixing if member.callout and not _fixes(member)]
         return tuple(_written(member.ref) for member in lost)
 
     @fact
@@ -207,6 +199,10 @@ def _is_hole(member: Member) -> bool:
     return (
         member.callout is not None and side_by_words(member.callout) is not False and _has_width(member.callout)
     )
+
+
+def _is_tapped(member: Member) -> bool:
+    return member.callout is not None and bool(member.callout.threads)
 
 
 def _fixes(member: Member) -> bool:

@@ -267,19 +267,25 @@ class PassageView(SeatedView):
     @fact
     def remarks(self) -> str:
         """What else a checker has to know of the arithmetic: one sentence each, a space before; or empty."""
-        lines = positions(self._callout)
-        said = [
+        source = self.fastener.limits_from
+        said = (
             (self.hold is None, "How the joint is held is not said: so much is needed either way."),
-            (len(lines) > 1, "Of its position lines the largest ⌀ tolerance counts."),
-            (self._at(Modifier.LMC), "At Ⓛ the position is largest where the hole is smallest."),
             (self.tilt_unknown, "The fixing hole is not projected; its tilt is left out, for want of P or D."),
-            (self._shifts, "The datum shift that material modifiers on the datums allow is not counted."),
+            (bool(source), f"The pin states no limits; its largest diameter is that of {source}."),
+        )
+        return _sentences(said) + self.position_remarks
+
+    @fact
+    def position_remarks(self) -> str:
+        """The same of the position tolerance alone."""
+        several = len(positions(self._callout)) > 1
+        return _sentences(
             (
-                bool(self.fastener.limits_from),
-                f"The pin states no limits; its largest diameter is that of {self.fastener.limits_from}.",
-            ),
-        ]
-        return "".join(f" {sentence}" for holds, sentence in said if holds)
+                (several, "Of its position lines the largest ⌀ tolerance counts."),
+                (self._at(Modifier.LMC), "At Ⓛ the position is largest where the hole is smallest."),
+                (self._shifts, "The datum shift that material modifiers on the datums allow is not counted."),
+            )
+        )
 
     def _at(self, kind: Modifier) -> bool:
         return self._tolerance is not None and self._tolerance.modifier is kind
@@ -288,6 +294,10 @@ class PassageView(SeatedView):
     def _shifts(self) -> bool:
         uses = {use for datum in self.position.datums for use in datum.modifiers} if self.position else set()
         return bool(uses & {Modifier.MMC, Modifier.LMC})
+
+
+def _sentences(said: tuple[tuple[bool, str], ...]) -> str:
+    return "".join(f" {sentence}" for holds, sentence in said if holds)
 
 
 def _stated(fixing: FixingView) -> Decimal | None:
