@@ -16,6 +16,9 @@ from calloutlint.facts.view import View, fact, kept
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, Package
 
+Call = tuple[str | None, str | None, str | None]
+"""Number, revision and sheet."""
+
 
 class PackageView(View):
     """Drawings reviewed together."""
@@ -89,12 +92,12 @@ class PackageView(View):
 
     def is_duplicate(self, drawing: Drawing) -> bool:
         """Whether an earlier drawing has the same number, revision and sheet."""
-        same = (drawing.number, drawing.revision, drawing.sheet)
-        if drawing.number is None:
-            return False
-        for other in self.part.drawings:
-            if other is drawing:
-                return False
-            if (other.number, other.revision, other.sheet) == same:
-                return True
-        return False
+        return drawing.number is not None and self._first_called[_called(drawing)] is not drawing
+
+    @kept
+    def _first_called(self) -> dict[Call, Drawing]:
+        return {_called(drawing): drawing for drawing in reversed(self.part.drawings)}
+
+
+def _called(drawing: Drawing) -> Call:
+    return drawing.number, drawing.revision, drawing.sheet
