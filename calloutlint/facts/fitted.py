@@ -223,14 +223,14 @@ def mating_of(size: Size, callout: CalloutView) -> MatingView | None:
 def _together(
     size: Size, callout: CalloutView, called: FitKind, limits: tuple[Decimal, Decimal]
 ) -> tuple[bool, tuple[Fit, Partner]] | None:
-    """Whether the own size is the hole, and its fit; None where no partner is known, or one is as called."""
+    """Whether the own size is the hole, and its fit, with any partner as called; None where none is known."""
     pins = [pin for pin in _pins(callout) if pin is not None]
     internal = True if pins and size.fit is None else (size.fit is not None and size.fit.letters.isupper())
     partners = pins if pins and internal else list(_coded(size, callout))
     fits = [(_fit(*limits, each, internal), each) for each in partners]
-    if not fits or any(fit.kind is called for fit, _ in fits):
+    if not fits:
         return None
-    return internal, fits[0]
+    return internal, next((each for each in fits if each[0].kind is called), fits[0])
 
 
 def _fit(smallest: Decimal, largest: Decimal, partner: Partner, internal: bool) -> Fit:
