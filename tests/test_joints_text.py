@@ -80,6 +80,7 @@ def test_lengths(text: str, amount: str, unit: Unit | None) -> None:
             "x = 4 with M6, projection 1, projection 2",
             "'projection 2' does not read; expected a length, such as",
         ),
+        ("x = " + "4 + " * 200, "803 characters; at most 500 are read as a joint"),
         ("x = 4 with M6, fixed in B:2, floating", "'floating': how the joint is held is said twice"),
     ],
 )

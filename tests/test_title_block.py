@@ -1,6 +1,7 @@
 """The title block: standards, units, general tolerances, process, and keys known and unknown."""
 
 from decimal import Decimal
+from time import perf_counter
 
 import pytest
 
@@ -233,3 +234,46 @@ def test_standards_and_tolerances_may_take_several_lines() -> None:
     assert block.general is not None
     assert [tolerance.places for tolerance in block.general.places] == [2, 3]
     assert [line.known for line in block.lines] == [True, True, True, False]
+
+
+@pytest.mark.parametrize("key", ["tolerances", "standard", "units", "process", "fastener", "joint"])
+def test_a_value_too_long_to_mean_anything_is_not_read(key: str) -> None:
+    (line,) = block_of(f"{key}: " + "4 mm + " * 100 + "x").lines
+    assert (line.known, line.reason) == (False, f"701 characters; at most 500 are read as {key}")
+
+
+def test_notes_and_titles_may_be_long() -> None:
+    block = block_of("note: " + "REMOVE BURRS. " * 100, "title: " + "COVER " * 100)
+    assert all(line.known for line in block.lines)
+    assert len(block.notes[0]) > 1000
+
+
+@pytest.mark.parametrize(
+    "line",
+    [
+        "tolerances: .XX ±.01, .XXX ±.005, castings by foundry",
+        "tolerances: " + "DIN " * 120,
+        "standard: ISO 8015",
+        "fastener: M6 x 20",
+        "joint: x = 4 with fixed in " + "4 + " * 110 + "4",
+        "joint: x" + " " * 480 + "y",
+    ],
+)
+def test_a_title_block_of_two_thousand_lines_takes_no_time(line: str) -> None:
+    begin = perf_counter()
+    block_of(*[line] * 2000)
+    assert perf_counter() - begin < 5  # a few tenths of a second; minutes if lines were read together
+
+
+def test_what_is_stated_first_holds_over_several_lines() -> None:
+    block = block_of("tolerances: ISO 2768-m", "tolerances: ISO 2768-c", "tolerances: angles ±1°, ISO 2768-2-K")
+    assert block.general is not None
+    assert (block.general.iso_2768, block.general.iso_2768_2) == ("m", "K")
+    assert block.general.unread == ("ISO 2768-c",)
+    assert [line.known for line in block.lines] == [True, False, True]
+
+
+def test_a_unit_that_is_none_stands_in_the_lines() -> None:
+    block = block_of("units: furlong")
+    assert block.unit is None
+    assert [(line.key, line.value) for line in block.lines] == [("units", "furlong")]

@@ -18,7 +18,7 @@ def add(commands: Subparsers) -> None:
     parser = commands.add_parser(
         "transcribe",
         help="write sheets in canonical text",
-        description="Write each drawing as a callout sheet in canonical text.",
+        description="Write each drawing as a callout sheet in canonical text. Comments ('# ...') are left out.",
     )
     paths_argument(parser)
     parser.add_argument(
@@ -32,10 +32,10 @@ def run(options: Namespace) -> int:
     """Transcribe the drawings that the options name; the exit status."""
     import os
 
+    from calloutlint._whole import write_whole
     from calloutlint.callouts.write import Style
     from calloutlint.reading.package import read_package
     from calloutlint.reading.transcribe import transcribe
-    from calloutlint._whole import write_whole
     from calloutlint.report.screen import draws_symbols
 
     drawings = read_package(options.paths).drawings

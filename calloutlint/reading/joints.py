@@ -13,8 +13,9 @@ from calloutlint.model.values import Value
 from calloutlint.units import Unit
 
 FORM = "NAME = HOLES with FASTENER, fixed in HOLES (or floating through HOLES), projection LENGTH"
+LONGEST_JOINT = 500
 
-_HEAD = re.compile(r"(?P<name>.*?)\s*=\s*(?P<holes>.*?)\s+with\s+(?P<rest>.+)", re.IGNORECASE | re.DOTALL)
+_WITH = re.compile(r"\swith\s", re.IGNORECASE)
 _CLAUSE = re.compile(r"\s*[,;]\s*(?=(?:floating|fixed|projection|thickness)\b)", re.IGNORECASE)
 _HELD = re.compile(r"(?P<hold>floating|fixed)(?:\s+(?:through|into|in|to|by)?\s*(?P<holes>.+))?", re.IGNORECASE)
 _LENGTH = re.compile(
@@ -31,14 +32,18 @@ class JointTextError(ValueError):
 
 def parse_joint(text: str, line: int = 0) -> Joint:
     """The joint that `text` states, at `line` of its file; `JointTextError` where it does not read."""
-    head = _HEAD.fullmatch(text.strip())
-    if head is None or not head["name"]:
-        raise JointTextError(f"{text.strip()!r} is no joint; expected {FORM}")
-    fastener, *clauses = _CLAUSE.split(head["rest"])
+    text = " ".join(text.split())
+    if len(text) > LONGEST_JOINT:
+        raise JointTextError(f"{len(text):,} characters; at most {LONGEST_JOINT} are read as a joint")
+    name, _, stated = text.partition("=")
+    holes, *rest = _WITH.split(stated, maxsplit=1)
+    if not name.strip() or not rest:
+        raise JointTextError(f"{text!r} is no joint; expected {FORM}")
+    fastener, *clauses = _CLAUSE.split(rest[0])
     hold, mates, lengths = _read_clauses(clauses)
     return Joint(
-        name=" ".join(head["name"].split()),
-        holes=parse_holes(head["holes"]),
+        name=name.strip(),
+        holes=parse_holes(holes),
         fastener=parse_fastener(spelled_fastener(fastener)),
         hold=hold,
         mates=mates,

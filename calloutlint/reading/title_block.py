@@ -9,16 +9,21 @@ from calloutlint.model.fastener import Fastener, Joint
 from calloutlint.reading.joints import JointTextError, parse_joint, spelled_fastener
 from calloutlint.reading.keys import READ, REPEATABLE
 from calloutlint.reading.standards import read_standard, read_unit
-from calloutlint.reading.tolerances import decimal_points, read_general_tolerances, read_process
+from calloutlint.reading.tolerances import ToleranceLines, decimal_points, read_process
 from calloutlint.units import Unit
+
+LONGEST_VALUE = 500
+"""Characters of a value that is read for what it means; no title block has as many."""
 
 
 @dataclass(slots=True)
 class TitleBlock:
     """What a title block states; `lines` are its lines, each marked where it could not be understood."""
 
+    tolerances: ToleranceLines
     decimal_comma: bool = False
     texts: dict[str, str] = field(default_factory=dict)
+    standards: list[str] = field(default_factory=list)
     standard: Standard | None = None
     unit: Unit | None = None
     general: GeneralTolerances | None = None
@@ -31,10 +36,18 @@ class TitleBlock:
 
 def read_title_block(pairs: Sequence[SheetLine], *, decimal_comma: bool = False) -> TitleBlock:
     """The title block of a sheet from its `key: value` lines; the unit is read first, wherever it stands."""
-    block = TitleBlock(decimal_comma=decimal_comma)
-    block.unit = next((read_unit(pair.value) for pair in pairs if pair.key == "units" and pair.value), None)
+    unit = next((_unit(pair.value) for pair in pairs if pair.key == "units" and pair.value), None)
+    block = TitleBlock(ToleranceLines(unit), decimal_comma, unit=unit)
     block.lines = [_read_line(block, pair) for pair in pairs]
+    if block.standards:
+        block.standard = read_standard(", ".join(block.standards))
+    if block.tolerances.written:
+        block.general = block.tolerances.general
     return block
+
+
+def _unit(value: str) -> Unit | None:
+    return read_unit(value) if len(value) <= LONGEST_VALUE else None
 
 
 def _read_line(block: TitleBlock, pair: SheetLine) -> SheetLine:
@@ -45,19 +58,19 @@ def _read_line(block: TitleBlock, pair: SheetLine) -> SheetLine:
         return pair
     if pair.key not in REPEATABLE and block.texts.setdefault(pair.key, pair.value) != pair.value:
         return replace(pair, known=False, reason=f"{pair.key!r} is stated a second time; the first is used")
-    reason = _TAKE[pair.key](block, pair) if pair.key in _TAKE else None
+    if pair.key in _READ_FOR_MEANING and len(pair.value) > LONGEST_VALUE:
+        reason: str | None = f"{len(pair.value):,} characters; at most {LONGEST_VALUE} are read as {pair.key}"
+    else:
+        reason = _TAKE[pair.key](block, pair) if pair.key in _TAKE else None
     return replace(pair, known=False, reason=reason) if reason else pair
 
 
 def _take_standard(block: TitleBlock, pair: SheetLine) -> None:
-    before = f"{block.standard.written}, " if block.standard else ""
-    block.standard = read_standard(before + pair.value)
+    block.standards.append(pair.value)
 
 
 def _take_tolerances(block: TitleBlock, pair: SheetLine) -> str | None:
-    before, understood = (f"{block.general.written}, ", block.general.unread) if block.general else ("", ())
-    block.general = read_general_tolerances(before + pair.value, block.unit)
-    pieces = ", ".join(repr(piece) for piece in block.general.unread if piece not in understood)
+    pieces = ", ".join(map(repr, block.tolerances.read(pair.value)))
     if not pieces:
         return None
     return f"not understood: {pieces}; expected such as .XX ±.01, X.X ±0.2, angles ±1° or ISO 2768-m"
@@ -96,3 +109,4 @@ _TAKE: Mapping[str, Callable[[TitleBlock, SheetLine], str | None]] = {
     "joint": _take_joint,
     "note": _take_note,
 }
+_READ_FOR_MEANING = (_TAKE.keys() | {"units"}) - {"note"}

@@ -1,7 +1,7 @@
 """The `tolerances` and `process` lines of a title block."""
 
 import re
-from collections.abc import Iterable
+from collections.abc import Iterable, Iterator
 from dataclasses import dataclass, field
 
 from calloutlint.callouts.value import parse_value
@@ -26,7 +26,7 @@ _ANGLE = r"[\s=:]*±\s*(?:(?P<degrees>\d*\.?\d+)\s*(?:°|(?!['\d])))?\s*(?:(?P<m
 
 _ISO_2768 = re.compile(
     r"""
-    (?:(?:DIN|EN|BS|NF)[\s-]+)* ISO\s*2768
+    (?:(?:DIN|EN|BS|NF)[\s-]+){0,3} ISO\s*2768
     (?:\s*-\s*[12](?!\d))? (?:\s*:\s*\d{4})? \s*-?\s*
     (?P<linear>fine|medium|coarse|very\ coarse|[fmcv])? \s*
     (?P<geometrical>[HKL])?
@@ -53,6 +53,7 @@ _FILLER = re.compile(
     """,
     re.IGNORECASE | re.VERBOSE,
 )
+_SEPARATOR = re.compile(r"[,;|]")
 _PROCESS = re.compile(rf"(?P<what>location|position|size)[\s=:]*(?P<amount>{_NUMBER}){_UNIT}", re.IGNORECASE)
 
 
@@ -62,20 +63,9 @@ def read_general_tolerances(written: str, unit: Unit | None) -> GeneralTolerance
     An amount without a unit of its own is in `unit`. A bare `±0.2` holds for every number of places, one for
     fractions for sizes without decimals. What is not understood is in `unread`.
     """
-    rest = text = decimal_points(_spelled(written))
-    found = _Found(unit)
-    for pattern, take in (
-        (_ISO_2768, found.iso_2768_class),
-        (_ANGLES, found.angle_tolerance),
-        (_FRACTIONS, found.for_fractions),
-        (_IN_WORDS, found.for_counted_places),
-        (_PLACES, found.for_written_places),
-        (_ANY, found.for_all_places),
-        (_FILLER, lambda match: ";"),
-    ):
-        rest = pattern.sub(take, rest)
-    unread = tuple(piece for part in re.split(r"[,;|]", rest) if (piece := part.strip(" :/-()")))
-    return GeneralTolerances(text, tuple(found.places), found.angle, found.linear, found.geometrical, unread)
+    found = ToleranceLines(unit)
+    found.read(written)
+    return found.general
 
 
 def read_process(written: str, unit: Unit | None) -> Process | None:
@@ -88,16 +78,46 @@ def read_process(written: str, unit: Unit | None) -> Process | None:
 
 
 @dataclass(slots=True)
-class _Found:
-    """What has been understood so far; each method takes one match and gives back what is left of it."""
+class ToleranceLines:
+    """The `tolerances` lines of one sheet, each read alone; what is stated first holds."""
 
     unit: Unit | None
+    written: list[str] = field(default_factory=list)
+    unread: list[str] = field(default_factory=list)
     places: list[PlacesTolerance] = field(default_factory=list)
     angle: Value | None = None
     linear: str | None = None
     geometrical: str | None = None
 
-    def iso_2768_class(self, match: re.Match[str]) -> str:
+    @property
+    def general(self) -> GeneralTolerances:
+        """What all lines read so far state together."""
+        written = ", ".join(self.written)
+        places, unread = tuple(self.places), tuple(self.unread)
+        return GeneralTolerances(written, places, self.angle, self.linear, self.geometrical, unread)
+
+    def read(self, written: str) -> tuple[str, ...]:
+        """Takes one line in; what of it is not understood."""
+        text = decimal_points(_spelled(written))
+        self.written.append(text)
+        unread = tuple(piece for clause in _SEPARATOR.split(text) for piece in self._read_clause(clause))
+        self.unread += unread
+        return unread
+
+    def _read_clause(self, rest: str) -> Iterator[str]:
+        for pattern, take in (
+            (_ISO_2768, self._iso_2768_class),
+            (_ANGLES, self._angle_tolerance),
+            (_FRACTIONS, self._for_fractions),
+            (_IN_WORDS, self._for_counted_places),
+            (_PLACES, self._for_written_places),
+            (_ANY, self._for_all_places),
+            (_FILLER, lambda match: ";"),
+        ):
+            rest = pattern.sub(take, rest)
+        yield from (piece for part in rest.split(";") if (piece := part.strip(" :/-()")))
+
+    def _iso_2768_class(self, match: re.Match[str]) -> str:
         linear = match["linear"] and match["linear"][0].lower()
         geometrical = match["geometrical"] and match["geometrical"].upper()
         if not (linear or geometrical) or (linear and self.linear) or (geometrical and self.geometrical):
@@ -105,7 +125,7 @@ class _Found:
         self.linear, self.geometrical = linear or self.linear, geometrical or self.geometrical
         return ";"
 
-    def angle_tolerance(self, match: re.Match[str]) -> str:
+    def _angle_tolerance(self, match: re.Match[str]) -> str:
         degrees, minutes = match["degrees"], match["minutes"]
         if self.angle or not (degrees or minutes):
             return match[0]
@@ -113,17 +133,17 @@ class _Found:
         self.angle = parse_value(text, Unit.DEGREE)
         return ";"
 
-    def for_fractions(self, match: re.Match[str]) -> str:
+    def _for_fractions(self, match: re.Match[str]) -> str:
         return self._add((0,), match)
 
-    def for_counted_places(self, match: re.Match[str]) -> str:
+    def _for_counted_places(self, match: re.Match[str]) -> str:
         count = match["count"].lower()
         return self._add((_COUNTS.get(count) or int(count),), match)
 
-    def for_written_places(self, match: re.Match[str]) -> str:
+    def _for_written_places(self, match: re.Match[str]) -> str:
         return self._add((len(match["places"] or ""),), match)
 
-    def for_all_places(self, match: re.Match[str]) -> str:
+    def _for_all_places(self, match: re.Match[str]) -> str:
         return self._add(range(MOST_PLACES + 1), match)
 
     def _add(self, places: Iterable[int], match: re.Match[str]) -> str:

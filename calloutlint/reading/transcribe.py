@@ -4,10 +4,11 @@ from collections.abc import Iterable, Iterator, Sequence
 
 from calloutlint.callouts.write import Style, write_callout
 from calloutlint.model.callout import Callout
-from calloutlint.model.drawing import Drawing
+from calloutlint.model.drawing import Drawing, SheetLine
 from calloutlint.model.fastener import Hold, HoleRef, Joint
 from calloutlint.model.values import Value
 from calloutlint.reading.keys import READ
+from calloutlint.reading.title_block import LONGEST_VALUE
 from calloutlint.units import Unit
 
 _KEY_WIDTH = 12
@@ -17,7 +18,10 @@ _SYMBOLIC = frozenset({"tolerances", "fastener", "joint"})
 
 
 def transcribe(drawing: Drawing, style: Style = Style.UNICODE) -> str:
-    """The sheet of a drawing. Read back, it gives an equal drawing, and the lines that were not understood."""
+    """The sheet of a drawing, without the comments of the file it was read from.
+
+    Read back, it gives an equal drawing, and the lines that were not understood.
+    """
     rows = [f"{key + ':':{_KEY_WIDTH}}{value}" for key, value in _title_block(drawing, style)]
     rows.append("")
     rows += _callouts(drawing.callouts, style, drawing.unit)
@@ -42,8 +46,13 @@ def _title_block(drawing: Drawing, style: Style) -> Iterator[tuple[str, str]]:
         if value:
             yield key, value.translate(_PLAIN) if style is Style.ASCII and key in _SYMBOLIC else value
     for line in drawing.lines:
-        if line.key and (line.key not in READ or (not line.known and line.key != "tolerances")):
+        if line.key and (line.key not in READ or not (line.known or _stands_in_general(line))):
             yield line.key, line.value
+
+
+def _stands_in_general(line: SheetLine) -> bool:
+    """General tolerances are kept as written with what was not understood in them, except where too long."""
+    return line.key == "tolerances" and len(line.value) <= LONGEST_VALUE
 
 
 def _stated(drawing: Drawing) -> Iterator[tuple[str, str | None]]:
@@ -51,13 +60,25 @@ def _stated(drawing: Drawing) -> Iterator[tuple[str, str | None]]:
     yield "revision", drawing.revision
     yield "sheet", drawing.sheet
     yield "title", drawing.title
-    yield "standard", drawing.standard.written if drawing.standard else None
+    yield from _lines_of("standard", drawing.standard.written if drawing.standard else "")
     yield "units", drawing.unit
-    yield "tolerances", drawing.general.written if drawing.general else None
+    yield from _lines_of("tolerances", drawing.general.written if drawing.general else "")
     yield "process", drawing.process.written if drawing.process else None
     yield from (("fastener", fastener.text) for fastener in drawing.fasteners)
     yield from (("joint", joint_text(joint)) for joint in drawing.joints)
     yield from (("note", note) for note in drawing.notes)
+
+
+def _lines_of(key: str, written: str) -> Iterator[tuple[str, str]]:
+    """One line, or as many as the sheet needs so that none is too long to be read."""
+    line = ""
+    for clause in written.split(", "):
+        if line and len(line) + len(clause) > LONGEST_VALUE // 3:  # ± has three characters in plain text
+            yield key, line
+            line = clause
+        else:
+            line = f"{line}, {clause}" if line else clause
+    yield key, line
 
 
 def _callouts(callouts: Sequence[Callout], style: Style, unit: Unit | None) -> Iterator[str]:
