@@ -147,6 +147,8 @@ class TestRefusals:
             ([], "'calloutlint' needs one of demo, check, redline, "),
             (["chekc", "x"], "'calloutlint' knows no 'chekc'. Was 'check' meant? It knows demo, check, "),
             (["check"], "'calloutlint check' needs a PATH: a callout sheet, or a folder of sheets."),
+            (["check", ""], "PATH: the path is empty; a callout sheet or a folder was expected."),
+            (["check", "--plain", "a.txt", " "], "PATH: the path is empty;"),
             (["check", "--plian", "x"], "There is no option '--plian'. Was '--plain' meant?"),
             (["check", "x", "--gate", "grave"], "--gate: there is no grade 'grave'. The grades are critical, "),
             (["check", "x", "--report"], "--report: expected one argument."),

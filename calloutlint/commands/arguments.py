@@ -44,7 +44,7 @@ def understand(parser: Parser, arguments: Sequence[str] | None) -> argparse.Name
     if unknown or (rest and not hasattr(options, "paths")):
         raise CalloutlintError(_unknown(command, (unknown or rest)[0]))
     if hasattr(options, "paths"):
-        options.paths = [*options.paths, *(Path(word) for index, word in enumerate(rest) if index != dashes)]
+        options.paths = [*options.paths, *(_path(word) for index, word in enumerate(rest) if index != dashes)]
         if not options.paths:
             raise CalloutlintError(f"'{command.prog}' needs a PATH: a callout sheet, or a folder of sheets.")
     return options
@@ -106,9 +106,16 @@ def _one_of(names: Sequence[str]) -> str:
 def paths_argument(parser: Parser) -> None:
     """The drawings to work on."""
     parser.add_argument(
-        "paths", type=Path, nargs="*", metavar="PATH", help="a callout sheet, or a folder of sheets"
+        "paths", type=_path, nargs="*", metavar="PATH", help="a callout sheet, or a folder of sheets"
     )
     parser.set_defaults(parser=parser)
+
+
+def _path(word: str) -> Path:
+    """A path; none at all would stand for the folder one is in, which nobody means by ''."""
+    if not word.strip():
+        raise argparse.ArgumentTypeError("the path is empty; a callout sheet or a folder was expected")
+    return Path(word)
 
 
 def plain_option(parser: Parser) -> None:

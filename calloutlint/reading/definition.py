@@ -2,15 +2,24 @@
 
 from collections.abc import Callable, Iterable
 from pathlib import Path
+from reprlib import repr as shortened
 from typing import Any, NamedTuple
 
 from calloutlint.errors import SheetError
 from calloutlint.model.fastener import HoleRef, Joint
 from calloutlint.reading.files import is_file, read_bytes
 from calloutlint.reading.joints import JointTextError, parse_joint
+from calloutlint.reading.toml import read_toml
 
 DEFINITION = "package.toml"
 GATES = ("critical", "major", "minor", "observation")
+
+_EXAMPLES = {
+    "drawings": "sg-*.txt",
+    "joints": "cover screws = SG-2207:4 with M6 socket head cap screw, fixed in SG-2210:7, projection 12",
+    "house": "rules",
+    "waivers": "waivers.toml",
+}
 
 
 class Definition(NamedTuple):
@@ -33,14 +42,11 @@ def read_definition(folder: Path) -> Definition:
     file = folder / DEFINITION
     if not is_file(file):
         return Definition(file)
-    import tomllib  # single sheets and folders without a definition do not pay for it
-
     try:
-        table = tomllib.loads(read_bytes(file).decode("utf-8-sig").replace("\r\n", "\n"))
+        text = read_bytes(file).decode("utf-8")
     except UnicodeDecodeError:
         raise SheetError(f"{file}: this is no TOML: the text is not UTF-8") from None
-    except tomllib.TOMLDecodeError as error:
-        raise SheetError(f"{file}: this is no TOML: {error}") from None
+    table = read_toml(text, str(file))
     unknown = [key for key in table if key not in _CHECKS]
     if unknown:
         raise SheetError(f"{file}: {unknown[0]!r} is no key of a package; known are {', '.join(_CHECKS)}")
@@ -49,20 +55,22 @@ def read_definition(folder: Path) -> Definition:
 
 def _text(file: Path, key: str, value: Any) -> str:
     if not isinstance(value, str) or not value.strip():
-        raise SheetError(f"{file}: {key}: {value!r} stands here; a text was expected")
+        raise SheetError(f"{file}: {key}: {shortened(value)} stands here; a text was expected")
     return value
 
 
 def _texts(file: Path, key: str, value: Any) -> tuple[str, ...]:
     if not isinstance(value, list):
-        raise SheetError(f"{file}: {key}: {value!r} stands here; a list of texts was expected")
+        expected = f'a list of texts was expected, such as {key} = ["{_EXAMPLES[key]}"]'
+        raise SheetError(f"{file}: {key}: {shortened(value)} stands here; {expected}")
     return tuple(_text(file, f"{key}[{number}]", item) for number, item in enumerate(value))
 
 
 def _gate(file: Path, key: str, value: Any) -> str:
-    if value not in GATES:
-        raise SheetError(f"{file}: {key}: {value!r} is no grade; expected {', '.join(GATES)}")
-    return str(value)
+    gate = value.strip().lower() if isinstance(value, str) else ""
+    if gate not in GATES:
+        raise SheetError(f"{file}: {key}: {shortened(value)} is no grade; expected {', '.join(GATES)}")
+    return gate
 
 
 def _joints(file: Path, key: str, value: Any) -> tuple[Joint, ...]:
