@@ -56,7 +56,7 @@ class Assembly:
     def __init__(self, package: Package) -> None:
         self._by_number: dict[str, list[Drawing]] = {}
         for drawing in package.drawings:
-            self._by_number.setdefault(drawing.name, []).append(drawing)
+            self._by_number.setdefault(drawing.name.casefold(), []).append(drawing)
         self._balloons = {
             (id(drawing), callout.balloon): callout
             for drawing in package.drawings
@@ -83,7 +83,8 @@ class Assembly:
 
     def _resolve(self, joint: Joint, home: Drawing | None) -> StatedJoint:
         holes = tuple(self._find(ref, home) for ref in joint.holes)
-        mates = tuple(self._find(ref, home) for ref in joint.mates)
+        named = next((member.drawing for member in holes if member.drawing is not None), None)
+        mates = tuple(self._find(ref, home or named) for ref in joint.mates)
         sheets = [member.drawing for member in (*holes, *mates) if member.drawing is not None]
         first = sheets[0] if sheets else home
         return StatedJoint(_in_unit(joint, first.unit if first else None), home, holes, mates)
@@ -92,7 +93,7 @@ class Assembly:
         if ref.drawing is None:
             sheets = [home] if home is not None else []
         else:
-            sheets = self._by_number.get(ref.drawing, [])
+            sheets = self._by_number.get(ref.drawing.casefold(), [])
         for sheet in sheets:
             callout = self._balloons.get((id(sheet), ref.balloon))
             if callout is not None:

@@ -159,11 +159,14 @@ class HoleView(PartView):
 
     @fact
     def depth(self) -> Length | None:
-        """Depth of the drilled hole; unknown for a through hole or where none is stated."""
-        drills = [step.extent for step in self.part.steps if step.kind is StepKind.DRILL]
-        sizes = [size.extent for size in self.part.sizes if size.form is SizeForm.DIAMETER]
-        depths = [extent.size for extent in [*sizes, *drills] if isinstance(extent, Depth) and extent.size]
-        return self._length(depths[0].nominal) if depths else None
+        """Depth of the drilled hole, its deepest part; unknown for a through hole or where none is stated."""
+        extents = [step.extent for step in self.part.steps if step.kind is StepKind.DRILL]
+        extents += [size.extent for size in self.part.sizes if size.form is SizeForm.DIAMETER]
+        if any(isinstance(extent, Through) for extent in extents):
+            return None
+        sizes = [extent.size for extent in extents if isinstance(extent, Depth) and extent.size]
+        depths = [depth for size in sizes if (depth := self._length(size.nominal)) is not None]
+        return max(depths, default=None)
 
     @fact
     def thread_depth(self) -> Length | None:
