@@ -36,6 +36,12 @@ BY_PLACE = {
     "size": ("a size before the tolerance",),
     "series": ("a thread series such as UNC or UNF",),
     "bracket": ("an opening bracket before it",),
+    "before": ("a geometric characteristic before its compartments",),
+    "letter": ("a datum letter",),
+    "second": ("one tolerance for a size",),
+    "frame in words": ("a feature control frame",),
+    "digits": ("digits only",),
+    "comma": ("a decimal point as elsewhere on the sheet",),
     "characteristic": ("a geometric characteristic",),
 }
 

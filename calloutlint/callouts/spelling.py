@@ -94,7 +94,7 @@ def _stands_between_numbers(text: str, start: int, end: int) -> bool:
     return before is not None and _NUMBER_AFTER.match(text, end) is not None
 
 
-_NUMBER_BEFORE = re.compile(r"(?<![A-Za-z\d])\d*\.?\d+\"?\s*$")
+_NUMBER_BEFORE = re.compile(r"(?i)(?<![A-Z\d])(?<!\bQTY\s)(?<!\bQTY[.:]\s)\d*\.?\d+\"?\s*$")
 _NUMBER_AFTER = re.compile(r"\s*\.?\d")
 
 
@@ -124,8 +124,23 @@ _FORMS = {"⌀", "S⌀", "□"}
 _COMMA = re.compile(r"(?<=\d),(?=\d)|(?<![\w,]),(?=\d)")
 
 _FRAME_WORDS = {s.upper() for row in CHARACTERISTICS for s in row.every if s[0].isalpha() or s in {"—", "//"}}
-_FRAME_FOLLOWS = r"(?=\s*[\]|]|[\s:=]*(?:(?i:within|tol(?:erance)?)\s+)?(?:S?⌀|%%[cC]|S?DIA\b|dia\b|-?\.?\d)%s)"
+_SAID_OF_A_DATUM = {s for s in _FRAME_WORDS if s.endswith((" TO", " WITH"))}
+_SAID_WITHIN = {s for s in _FRAME_WORDS if s.endswith(" WITHIN")}
+_TOLERANCE = r"(?:S?⌀|%%[cC]|S?DIA\b|dia\b|-?\.?\d)"
+_FRAME_FOLLOWS = rf"(?=\s*[\]|]|[\s:=]*(?:(?i:within|tol(?:erance)?)\s+)?{_TOLERANCE}%s%s)"
+_BOX_FOLLOWS = rf"|\s*\[\s*{_TOLERANCE}"
+_MAY_BE_BASIC = {"FLAT", "ANG", "CIR", "CYL"}  # `FLAT [.500]` is a flat's width
 _LONG_FOLLOWS = r"|\s+[A-Z](?![A-Za-z0-9.])"
+_DATUM = r"\s+(?:(?i:datums?)\s+)?[A-Z](?:\s*-\s*[A-Z])?(?!\w)"
+_NUMBER_WITHIN = rf"\s+{_TOLERANCE}(?!.*\b(?i:tir|fim|fir|total|per)\b|\s*[\d.]+\s*(?:°|(?i:deg)))"
+_WITHIN_FOLLOWS = rf"\s+(?i:within){_NUMBER_WITHIN}"
+_SAID = rf"(?={_WITHIN_FOLLOWS}|{_NUMBER_WITHIN}\S*(?:\s+(?:⌀|dia\b|DIA\b))?\s+(?i:to|with){_DATUM})"
+_FRAME_PHRASES = {
+    **dict.fromkeys(("PERPENDICULAR", "PARALLEL"), _SAID),
+    **dict.fromkeys(_SAID_OF_A_DATUM, rf"(?={_DATUM}{_WITHIN_FOLLOWS})"),
+    **dict.fromkeys(_SAID_WITHIN, rf"(?={_NUMBER_WITHIN})"),
+}
+_DEVIATION_FOLLOWS = r"(?=\s*(?:\d*\.\d|\d+(?:\s*[/,]?\s*(?i:minus|plus)\b|\s*$)))"
 _NUMBER_FOLLOWS = r"(?=\s*[(\[]?\s*\.?\d)"
 _RADIUS_FOLLOWS = rf"(?:(?<!\d\sR)(?<!\dR){_NUMBER_FOLLOWS}|(?=\s*\d*\.\d|\s*[(\[]\s*\.?\d))"
 
@@ -134,10 +149,15 @@ def _ending(spelling: str) -> str:
     """What must stand after a spelling for it to be read as such."""
     whole = spelling[-1].isalpha() and spelling[0].isalpha()
     ending = "(?![A-Za-z])" if whole else r"(?!\d)" if spelling[-1] == "." else ""
+    if spelling in _FRAME_PHRASES:
+        return ending + _FRAME_PHRASES[spelling]
     if spelling in _FRAME_WORDS:
-        return ending + _FRAME_FOLLOWS % (_LONG_FOLLOWS if len(spelling) > 7 else "")
+        boxed = _BOX_FOLLOWS + (r"[^\[\]]*\]\s*\[" if spelling in _MAY_BE_BASIC else "")
+        return ending + _FRAME_FOLLOWS % (boxed, _LONG_FOLLOWS if len(spelling) > 7 else "")
     if spelling == "R":
         return ending + _RADIUS_FOLLOWS
+    if spelling in {"PLUS", "MINUS"}:
+        return ending + _DEVIATION_FOLLOWS
     return ending + (_NUMBER_FOLLOWS if spelling in {"CR", "SR"} else "")
 
 

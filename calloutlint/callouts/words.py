@@ -48,6 +48,8 @@ _KNOWN = sorted(
     }
 )
 _CHARACTERISTICS = {spelling.upper() for row in CHARACTERISTICS for spelling in row.every}
+_LOOK_ALIKE = str.maketrans("OIL", "011")
+_PLAIN_NUMBER = re.compile(r"(?:S?⌀|±|R)?\s*(?:\d+\.?\d*|\.\d+)").fullmatch
 _LEAST_FOR_ONE_SLIP, _LEAST_FOR_TWO_SLIPS = 6, 9
 
 
@@ -80,10 +82,23 @@ def nearest_spelling(word: str) -> str | None:
         return None
     if upper == "PROFILE":
         return "PROFILE OF A SURFACE"
+    if upper in _KNOWN or upper in ORDINARY:
+        return None
+    if (number := mistyped_number(word)) is not None:
+        return number
+    if " " in upper:
+        return None
     if (slip := slip_of(word)) is not None:
         return slip
     close = get_close_matches(upper, _KNOWN, n=1, cutoff=0.6)
     return close[0] if close else None
+
+
+def mistyped_number(word: str) -> str | None:
+    """The number that a word is with its letters O, I and L as digits; None if it is no number then either."""
+    written = word.upper().strip("|[],;:() ")
+    digits = written.translate(_LOOK_ALIKE)
+    return digits if digits != written and _PLAIN_NUMBER(digits) else None
 
 
 def is_characteristic(spelling: str) -> bool:

@@ -2,6 +2,7 @@
 
 from collections.abc import Iterator, Sequence
 
+from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.note import names_fastener
 from calloutlint.callouts.spelling import normalise
 from calloutlint.callouts.write_frame import write_frame, write_scope, write_segment
@@ -23,6 +24,8 @@ from calloutlint.model.size import Count, Size
 from calloutlint.model.thread import Thread
 from calloutlint.units import Unit
 
+_IN_ZONE = (BY_PLACE["zone"], BY_PLACE["bar"])
+
 __all__ = ["Style", "write_callout", "write_part"]
 
 
@@ -41,8 +44,7 @@ def write_parts(parts: Sequence[Part], style: Style, unit: Unit | None = None) -
         written = write_part(part, style, unit=unit)
         every = [written] if isinstance(written, str) else written
         if at and lines and _joins(parts, at):
-            bar = " |" if isinstance(part, Unread) and isinstance(parts[at - 1], Frame) else ""
-            lines[-1] = f"{lines[-1]}{bar} {every[0]}"
+            lines[-1] = _joined(lines[-1], every[0], part, parts[at - 1])
             every = every[1:]
         lines += every
     return lines
@@ -110,10 +112,34 @@ def _joins(parts: Sequence[Part], at: int) -> bool:
         return getattr(before, "doubtful", False) or (isinstance(before, Frame) and part.in_frame)
     if isinstance(before, Unread):
         return getattr(part, "doubtful", False)
+    if isinstance(part, Words) and isinstance(before, Count):
+        return not isinstance(following, Size | Thread | HoleStep) and not _is_keyword(part)
     if isinstance(part, Words):
         tapped = isinstance(before, Thread) and part.text == "TAP"
         return tapped or (isinstance(before, Size | Thread | HoleStep) and _trails(part, following))
     return isinstance(before, Words) and isinstance(part, Size | Thread) and _leads(before)
+
+
+def _joined(line: str, text: str, part: Part, before: Part) -> str:
+    """A line with the text of one more part; what is wrong in a tolerance goes back beside it."""
+    if not isinstance(part, Unread):
+        return f"{line} {text}"
+    if isinstance(before, Frame):
+        return _with_wrong_zone(line, text, before) if part.expected in _IN_ZONE else f"{line} | {text}"
+    return f"{line} | {text}" if part.in_frame and isinstance(before, Unread) else f"{line} {text}"
+
+
+def _with_wrong_zone(line: str, text: str, frame: Frame) -> str:
+    """The last line of a frame with text that is wrong in its tolerance compartment."""
+    compartments = line.split(" | ")
+    zone = 0 if line[0] == "|" else 1
+    if len(compartments) <= zone + (frame.segments[-1].zone is not None):
+        return f"{line} | {text}"
+    if frame.segments[-1].zone is None:
+        compartments.insert(zone, text)
+    else:
+        compartments[zone] += f" {text}"
+    return " | ".join(compartments)
 
 
 def _trails(words: Words, following: Part | None) -> bool:

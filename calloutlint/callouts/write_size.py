@@ -18,6 +18,8 @@ from calloutlint.model.size import (
     Through,
 )
 from calloutlint.model.thread import Thread, ThreadSystem
+from calloutlint.model.values import Value
+from calloutlint.units import Unit
 
 _SYMBOL_OF_FORM = {form: symbol for symbol, form in FORMS.items()}
 _SYMBOL_OF_MODIFIER = {modifier.value: symbol for symbol, modifier in MODIFIER_OF.items()}
@@ -69,9 +71,16 @@ def _body(size: Size, writing: Writing) -> str:
     if size.fit is not None:
         words.append(str(size.fit))
     if size.tolerance is not None:
-        tolerance = _tolerance(size.tolerance, writing)
+        tolerance = _tolerance(size.tolerance, _after_mark(size.nominal, writing))
         words.append(f"({tolerance})" if size.fit is not None else tolerance)
     return " ".join(words)
+
+
+def _after_mark(nominal: Value | None, writing: Writing) -> Writing:
+    """How to write the tolerance of a size: the unit marked on its nominal holds for it."""
+    if nominal is None or nominal.unit not in {Unit.INCH, Unit.MM} or writing.unit is None:
+        return writing
+    return Writing(writing.style, nominal.unit)
 
 
 def _tolerance(tolerance: PlusMinus | Deviations | Limits, writing: Writing) -> str:
@@ -79,10 +88,13 @@ def _tolerance(tolerance: PlusMinus | Deviations | Limits, writing: Writing) -> 
         return writing.symbol("±") + writing.value(tolerance.amount)
     if isinstance(tolerance, Deviations):
         return f"{writing.value(tolerance.upper)} {writing.value(tolerance.lower)}"
-    first, second = writing.value(tolerance.first), writing.value(tolerance.second)
     if tolerance.named:
-        return f"{first} MAX {second} MIN"
-    return f"{first} - {second}" if " " in first + second else f"{first}-{second}"
+        return f"{writing.value(tolerance.first)} MAX {writing.value(tolerance.second)} MIN"
+    first = _after_mark(tolerance.second, writing).value(tolerance.first)
+    second = _after_mark(tolerance.first, writing).value(tolerance.second)
+    if tolerance.first.unit is tolerance.second.unit:
+        second = writing.value(tolerance.second)
+    return f"{first} - {second}" if " " in first + tolerance.second.text else f"{first}-{second}"
 
 
 def _extent(extent: Through | Depth | None, writing: Writing) -> str:

@@ -1,6 +1,7 @@
 """What holds for every callout: canonical text is read back, spellings do not matter, nothing crashes."""
 
 import random
+import re
 
 from hypothesis import given, settings
 from hypothesis import strategies as st
@@ -36,11 +37,15 @@ def test_spelling_variants_give_the_same_model(part: Part, seed: int) -> None:
 _SAFE = {"Ⓜ", "Ⓛ", "Ⓟ", "Ⓕ", "Ⓣ", "⌀", "±", "↧", "⌴", "⌵", "⌖", "⟂", "∥", "⏥", "⌓", "⌭", "↗", "⌰", "◎", "⌯"}
 
 
+_LEFT_OUT = {"DEPTH", "SQUARENESS", "—", "PERPENDICULAR", "PARALLEL"}
+_SAID = re.compile(r" (?:TO|WITH|WITHIN)$").search  # read only where the rest of the sentence follows
+
+
 def _respelled(line: str, chance: random.Random) -> str:
     """The line with each symbol in one of its spellings, in either case, and bars drawn or narrow."""
     for row in SPELLINGS:
         if row.symbol in _SAFE and row.symbol in line and not (row.symbol == "⌀" and "S⌀" in line):
-            spelling = chance.choice([text for text in row.every if text not in {"DEPTH", "SQUARENESS", "—"}])
+            spelling = chance.choice([text for text in row.every if text not in _LEFT_OUT and not _SAID(text)])
             spaced = f" {spelling} " if spelling[0].isalpha() else spelling
             line = line.replace(row.symbol, spaced)
     return line.replace(" | ", chance.choice([" | ", "|", " │ ", "¦"]))

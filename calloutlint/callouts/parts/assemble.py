@@ -136,13 +136,16 @@ _TOKENS: dict[str, Callable[[State, Token], None]] = {
     "ANGLE_SIGN": place_size.take_angle_sign,
     "SCOPE": place_frame.take_scope,
     "DATUM_FEATURE": place_frame.take_datum_feature,
-    "DATUM_BOX": place_frame.take_datum_feature,
+    "DATUM_BOX": place_frame.take_boxed_letter,
+    "COMPARTMENT": place_frame.take_compartment,
+    "NUMBERED_DATUM": place_frame.take_numbered_datum,
     "FASTENER": place_word.take_fastener,
     "WORD": place_word.take_word,
     "ON_CIRCLE": place_word.take_plain,
     "NUMBERED_NOTE": place_word.take_plain,
     "DESIGNATION": place_word.take_plain,
     "WITHIN": place_word.take_plain,
+    "SPOKEN": place_word.take_spoken,
     "STRAY": place_word.as_word,
 }
 # Pieces that may turn out to be plain words: a run of words goes on through them.
@@ -163,6 +166,9 @@ _MAY_BE_WORDS = {
     "LEFT_HAND",
     "STARTS",
     "DATUM_FEATURE",
+    "DATUM_BOX",
+    "COMPARTMENT",
+    "NUMBERED_DATUM",
     "target",
     "lost",
 }

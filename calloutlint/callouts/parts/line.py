@@ -46,9 +46,13 @@ class Line:
         """The number `text` in the unit of the callout."""
         return parse_value(str(text), self.unit)
 
+    def in_unit(self, unit: Unit | None) -> "Line":
+        """The same line with lengths in `unit`."""
+        return self if unit is self.unit else replace(self, unit=unit)
+
     def in_other_unit(self) -> "Line":
         """The same line with lengths in the other unit, for a dual dimension."""
-        return replace(self, unit=None if self.unit is None else _OTHER.get(self.unit))
+        return self.in_unit(None if self.unit is None else _OTHER.get(self.unit))
 
 
 def tokens(tree: Tree[Token]) -> list[Token]:

@@ -25,9 +25,10 @@ _WORDS = {modifier.value: modifier for modifier in Modifier if len(modifier.valu
 
 
 def modifier_of(text: str) -> Modifier:
-    """The modifier that a MODIFIER or MODIFIER_WORD piece names: `Ⓜ`, `CZ`, `[PL]`."""
+    """The modifier that a piece names: `Ⓜ`, `CZ`, `[PL]`, `[M]`."""
     known = MODIFIER_OF.get(text)
     if known is not None:
         return known
     plain = text.replace(" ", "").replace("‹", "").replace("›", "")
-    return MODIFIER_OF.get(plain) or _WORDS[plain.strip("[]")]
+    inside = plain.strip("[]")
+    return MODIFIER_OF.get(plain) or BARE_MODIFIERS.get(inside) or _WORDS[inside]

@@ -5,6 +5,7 @@ from lark import Token, Tree
 from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.parts.drafts import DepthDraft, SizeDraft, TargetDraft
 from calloutlint.callouts.parts.line import joined, tokens
+from calloutlint.callouts.parts.place_count import as_count
 from calloutlint.callouts.parts.place_hole import fits_step, place_depth, place_extent, put_in_step
 from calloutlint.callouts.parts.place_word import as_word
 from calloutlint.callouts.parts.read_size import (
@@ -15,6 +16,7 @@ from calloutlint.callouts.parts.read_size import (
     upper_and_lower,
 )
 from calloutlint.callouts.parts.state import State
+from calloutlint.model.callout import Unread
 from calloutlint.model.size import Limits, SizeForm, SizeStatus
 from calloutlint.model.values import Value
 
@@ -35,6 +37,9 @@ def take_size(state: State, tree: Tree[Token]) -> None:
     if state.dual_of is not None:
         _take_dual(state.dual_of, draft)
         return
+    if isinstance(state.last, Unread) and _is_nil_after(draft, state.last):
+        state.unread_span(draft.span, state.last.expected)
+        return
     state.size = draft
     if not _belongs_elsewhere(state, draft):
         _append(state, draft)
@@ -43,6 +48,12 @@ def take_size(state: State, tree: Tree[Token]) -> None:
     if state.status is not None:
         status, state.status = state.status, None
         _set_status(state, status, draft)
+
+
+def _is_nil_after(draft: SizeDraft, lost: Unread) -> bool:
+    """Whether a bare 0 is the other deviation of one that could not be read: `⌀12,5 +0,1 0`."""
+    nil = draft.bare and draft.nominal is not None and not draft.nominal.amount
+    return nil and ("+" in lost.text or "-" in lost.text)
 
 
 def _take_dual(size: SizeDraft, draft: SizeDraft) -> None:
@@ -143,7 +154,8 @@ def take_stacked(state: State, tree: Tree[Token]) -> None:
     above = state.parts[-1] if state.parts else None
     for piece in tokens(tree):
         if isinstance(above, SizeDraft) and above.tolerance is None and above.fit is None:
-            add_tolerance(above, piece, state.line)
+            unit = above.nominal.unit if above.nominal and above.form is not SizeForm.ANGLE else state.line.unit
+            add_tolerance(above, piece, state.line.in_unit(unit))
             state.size = above
         else:
             state.unread(piece, BY_PLACE["size"])
@@ -214,6 +226,7 @@ def close(state: State, token: Token) -> None:
         state.unread(token, BY_PLACE["bracket"])
     elif state.box is SizeStatus.REFERENCE:
         _join_fit(state)
+        as_count(state)
     if state.dual_of is not None and state.dual_of.dual is not None:
         _name_dual(state.dual_of.dual, state.dual_statuses)
     state.dual_statuses = []

@@ -1,16 +1,20 @@
 """Second pass: plain words, slips of known spellings, and text that cannot be read."""
 
+import re
+
 from lark import Token, Tree
 
 from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.note import read_note
+from calloutlint.callouts.parts.drafts import SizeDraft
 from calloutlint.callouts.parts.line import tokens
 from calloutlint.callouts.parts.read_size import SIZE_MODIFIERS
 from calloutlint.callouts.parts.state import State
-from calloutlint.callouts.words import is_characteristic, slip_of
+from calloutlint.callouts.words import is_characteristic, mistyped_number, slip_of
 from calloutlint.model.callout import FastenerNote, TargetKind, Unread
 
 _TARGET_KINDS = {"LINE": TargetKind.LINE, "AREA": TargetKind.AREA, "POINT": TargetKind.POINT}
+_TOLERANCE = re.compile(r"[±+-]\s*\.?\d").match
 _PUNCTUATION = set(",;.:/")
 
 
@@ -41,12 +45,18 @@ def as_word(state: State, token: Token) -> None:
         state.words.append(token)
     else:
         state.end_words()
-        state.unread(token, BY_PLACE["number"])
+        state.unread(token, _tolerance_expected(state, token) or BY_PLACE["number"])
 
 
 def take_plain(state: State, token: Token) -> None:
     """Words with numbers in them that are no sizes: `ON ⌀3.000 BC`, `SEE NOTE 3`."""
     state.words.append(token)
+
+
+def take_spoken(state: State, token: Token) -> None:
+    """A geometric tolerance in words that do not say enough for a frame: `CONCENTRIC TO A WITHIN .003`."""
+    state.end_words()
+    state.unread(token, BY_PLACE["frame in words"])
 
 
 def take_fastener(state: State, token: Token) -> None:
@@ -63,7 +73,8 @@ def take_lost(state: State, tree: Tree[Token]) -> None:
     text = state.line.written(span)
     if text[:1] != "|":
         state.end_words()
-        state.unread_span(span, state.line.expected.get(token.start_pos or 0) or BY_PLACE["word"])
+        meant = mistyped_number(state.line.written(state.line.span(token)))
+        state.unread_span(span, _expected(state, token, text), meant)
         return
     wrong = state.words.pop() if state.words else None
     state.end_words()
@@ -73,3 +84,18 @@ def take_lost(state: State, tree: Tree[Token]) -> None:
         state.add_words(text, span)
     else:
         state.unread(token, BY_PLACE["characteristic"], in_frame=True)
+
+
+def _expected(state: State, token: Token, text: str) -> tuple[str, ...]:
+    if token.type == "MISTYPED":
+        return BY_PLACE["digits"]
+    by_grammar = state.line.expected.get(token.start_pos or 0)
+    return _tolerance_expected(state, text) or by_grammar or BY_PLACE["word"]
+
+
+def _tolerance_expected(state: State, text: str) -> tuple[str, ...] | None:
+    """What a tolerance is missing where none can stand: a size, or a size that has none yet."""
+    if not _TOLERANCE(text):
+        return None
+    size = state.last
+    return BY_PLACE["second"] if isinstance(size, SizeDraft) and size.tolerance else BY_PLACE["size"]

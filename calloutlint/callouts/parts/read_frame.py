@@ -28,10 +28,11 @@ def read_frame(pieces: Sequence[Token], line: Line, above: Characteristic | None
     """The segments on one line; `above` is the characteristic that a composite's lower segment goes on with."""
     characteristic = above or CHARACTERISTIC_OF[pieces[0][-1]]
     content = pieces if above else pieces[1:]
-    barred = any(piece.type == "BAR" for piece in content)
+    bars = [piece.type in {"BAR", "OPEN_BOX"} for piece in content]
+    boxed = bars[:1] == [True] and sum(bars[:-1]) > 1
     read = FrameRead([], [], [], [])
     for segment in _split(content, characteristic):
-        reader = SegmentReader(line, barred=barred)
+        reader = SegmentReader(line, barred=any(bars), boxed=boxed)
         reader.read(segment)
         first = segment[0] if read.segments else pieces[0]
         span = line.span(first, segment[-1] if segment else first)

@@ -55,11 +55,15 @@ class _Datum:
 
 
 class SegmentReader:
-    """Takes the pieces of a segment; what it cannot place is in `unread`, words after it in `words`."""
+    """Takes the pieces of a segment; what it cannot place is in `unread`, words after it in `words`.
 
-    def __init__(self, line: Line, *, barred: bool) -> None:
+    `barred` where bars part any compartments, `boxed` where they part the tolerance from what is around it.
+    """
+
+    def __init__(self, line: Line, *, barred: bool, boxed: bool = False) -> None:
         self.line = line
         self.barred = barred
+        self.boxed = boxed
         self.shape = ZoneShape.WIDTH
         self.value: Value | None = None
         self.uses: list[ModifierUse] = []
@@ -70,6 +74,7 @@ class SegmentReader:
         self.datums: list[_Datum] = []
         self.compartment = 0
         self.filled = False
+        self.turned_back = False
         self.loose: Token | None = None
         self.scope: Token | None = None
         self.following: Token | None = None
@@ -98,7 +103,7 @@ class SegmentReader:
 
     @property
     def _in_zone(self) -> bool:
-        return self.compartment == 0 and not self.datums
+        return self.turned_back or (self.compartment == 0 and not self.datums)
 
     def _refuse_words(self, place: str) -> None:
         self.unread += [(word, place) for word in self.words]
@@ -112,7 +117,7 @@ class SegmentReader:
         self._refuse_words("datum")
         if self.filled or self.compartment:
             self.compartment += 1
-        self.filled = False
+        self.filled = self.turned_back = False
 
     def _word(self, piece: Token) -> None:
         if piece.type == "UNREAD" or not self.filled:
@@ -194,7 +199,10 @@ class SegmentReader:
             datum.spans.append(span)
         elif self._is_bare_modifier(piece, datum):
             self._add(BARE_MODIFIERS[piece], piece)
+        elif self.boxed and self.compartment == 0 and self.value is not None:
+            self._refuse(piece)
         else:
+            self.turned_back = False
             self.compartment = max(self.compartment, 1)
             self.datums.append(_Datum(str(piece), self.line.span(piece)))
             self.filled = True
@@ -233,8 +241,12 @@ class SegmentReader:
     def _scope(self, piece: Token) -> None:
         self.scope = piece
 
+    def _filler(self, piece: Token) -> None:
+        """In words the tolerance may follow the datum: `PERPENDICULAR TO A WITHIN .002`."""
+        self.turned_back = piece.lower().startswith("within") and not self.zone_spans
+
     def _nothing(self, piece: Token) -> None:
-        """Brackets and filling words say nothing of their own."""
+        """Closing brackets say nothing of their own."""
 
 
 _TAKE: dict[str, Callable[[SegmentReader, Token], None]] = {
@@ -249,12 +261,14 @@ _TAKE: dict[str, Callable[[SegmentReader, Token], None]] = {
     "MAX": SegmentReader._max,
     "MODIFIER": SegmentReader._modifier,
     "MODIFIER_WORD": SegmentReader._modifier,
+    "MODIFIER_BOX": SegmentReader._modifier,
     "LETTERS": SegmentReader._letters,
     "HYPHEN": SegmentReader._hyphen,
     "FREEDOMS": SegmentReader._freedoms,
     "CLOSE_GROUP": SegmentReader._close_group,
     "OPEN_GROUP": SegmentReader._nothing,
+    "OPEN_BOX": SegmentReader._bar,
     "CLOSE_BOX": SegmentReader._nothing,
-    "FILLER": SegmentReader._nothing,
+    "FILLER": SegmentReader._filler,
     "SCOPE": SegmentReader._scope,
 }

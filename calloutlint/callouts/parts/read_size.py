@@ -1,6 +1,7 @@
 """From the pieces of a size to the size."""
 
 import re
+from collections.abc import Sequence
 
 from lark import Token, Tree
 
@@ -8,6 +9,7 @@ from calloutlint.callouts.parts.drafts import SizeDraft
 from calloutlint.callouts.parts.line import Line
 from calloutlint.model.size import Count, Deviations, FitCode, Limits, PlusMinus, SizeForm, SizeModifier
 from calloutlint.model.values import Value
+from calloutlint.units import Unit
 
 FORMS = {
     "⌀": SizeForm.DIAMETER,
@@ -31,8 +33,10 @@ _UNIT = r"(?:\"|mm|MM|[iI][nN]\.?)"
 _ANGLE_PARTS = r"°(?:\s*\d+\.?\d*\s*')?(?:\s*\d+\.?\d*\s*\")?"
 _NUMBER = rf"(?:(?:\d+[ -])?\d+/\d+(?!\d)|\d+\.?\d*|\.\d+)\s*{_UNIT}?(?:{_ANGLE_PARTS}|')?"
 _LIMIT = r"(?:\d+\.?\d*|\.\d+)\s*(?:\"|mm|MM|[iI][nN]\.?|°)?"
+_FRACTION = r"(?:\d+[ -])?\d+/\d+(?=\s*-)"
 _PAIR = re.compile(rf"\s*([+-]?\s*{_NUMBER})\s*[/,]?\s*([+-]?\s*{_NUMBER})\s*").fullmatch
-_LIMITS = re.compile(rf"\s*({_LIMIT})(?:-|\s+-\s+|\s*/\s*|\s+)⌀?({_LIMIT}|{_NUMBER})\s*").fullmatch
+_LIMITS = re.compile(rf"\s*({_FRACTION}|{_LIMIT})(?:-|\s+-\s+|\s*/\s*|\s+)⌀?({_LIMIT}|{_NUMBER})\s*").fullmatch
+_MARK = re.compile(r"\"|(?<![a-z])(?:mm|in)(?![a-z])", re.IGNORECASE).search
 _COUNTED = re.compile(r"(\d+)").search
 _WIDEST_LIMITS = 10  # `30-0.1` is neither: a deviation needs a space before its sign
 _WORDS = "ONE TWO THREE FOUR FIVE SIX SEVEN EIGHT NINE TEN ELEVEN TWELVE"
@@ -48,6 +52,7 @@ def read_size(tree: Tree[Token], line: Line) -> SizeDraft:
     """The size that a `size` node states."""
     pieces = [child for child in tree.children if isinstance(child, Token)]
     draft = SizeDraft(SizeForm.LINEAR, None, line.span(pieces[0], pieces[-1]))
+    line = line.in_unit(_marked_unit(pieces) or line.unit)
     for piece in pieces:
         if piece.type in {"NUMBER", "NEGATIVE"}:
             draft.nominal = line.value(piece)
@@ -60,6 +65,15 @@ def read_size(tree: Tree[Token], line: Line) -> SizeDraft:
         else:
             add_tolerance(draft, piece, line)
     return draft
+
+
+def _marked_unit(pieces: Sequence[Token]) -> Unit | None:
+    """The unit marked on any number of a size: it holds for the others too."""
+    for piece in pieces:
+        mark = None if "°" in piece or piece.type == "FIT" else _MARK(piece)
+        if mark:
+            return Unit.MM if mark[0].lower() == "mm" else Unit.INCH
+    return None
 
 
 def add_tolerance(draft: SizeDraft, piece: Token, line: Line) -> None:
@@ -142,6 +156,10 @@ def _canonical_count(text: str, number: int | None) -> str:
         return "TYP"
     if "‹TYP›" in text:
         return f"{number} TYP"
+    if text.startswith("Q"):
+        return f"QTY {number}"
+    if text == f"({number})":
+        return text
     noun = text.strip("()").split()[-1]
     if "‹PL›" in text:
         return f"{number} PL"

@@ -1,7 +1,10 @@
 """What the second pass knows while it reads: the parts so far, and what waits for its partner on this line."""
 
+import re
+
 from lark import Token, Tree
 
+from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.parts.drafts import (
     DepthDraft,
     FrameDraft,
@@ -10,7 +13,7 @@ from calloutlint.callouts.parts.drafts import (
     TargetDraft,
     ThreadDraft,
 )
-from calloutlint.callouts.parts.line import Line, Node
+from calloutlint.callouts.parts.line import Line, Node, joined
 from calloutlint.callouts.words import meanings_of, nearest_spelling
 from calloutlint.model.callout import Part, Unread, Words
 from calloutlint.model.frame import Scope
@@ -20,6 +23,7 @@ from calloutlint.model.source import Span
 
 Draft = SizeDraft | ThreadDraft | StepDraft | FrameDraft | TargetDraft
 Hole = SizeDraft | ThreadDraft | StepDraft
+_COMMA = re.compile(r"\d,\d").search
 DRAFTS = (SizeDraft, ThreadDraft, StepDraft, FrameDraft, TargetDraft)
 HOLES = (SizeDraft, ThreadDraft, StepDraft)
 SPEAKS_OF_SIZE_BEFORE = {StepKind.DRILL, StepKind.REAM, StepKind.TAP}
@@ -121,6 +125,16 @@ class State:
         self, span: Span, expected: tuple[str, ...], nearest: str | None = None, *, in_frame: bool = False
     ) -> None:
         """Adds a stretch of text that cannot be read."""
-        text = self.line.written(span)
         self.broken = True
+        last = self.last
+        if isinstance(last, Unread) and last.in_frame is in_frame and self._touch(last.span, span):
+            span, expected, nearest = joined((last.span, span)), last.expected, last.nearest or nearest
+            self.parts.pop()
+        text = self.line.written(span)
+        if _COMMA(self.line.normal.text) and _COMMA(text):
+            expected = BY_PLACE["comma"]
         self.parts.append(Unread(text, expected, nearest or nearest_spelling(text), in_frame, span))
+
+    def _touch(self, one: Span, other: Span) -> bool:
+        """Whether nothing but spaces stands between two stretches of this line."""
+        return not self.line.normal.source[one.end : other.start].strip()
