@@ -127,6 +127,23 @@ def test_a_stray_line_and_an_unknown_key_say_why() -> None:
     ]
 
 
+@pytest.mark.parametrize(
+    ("line", "what"),
+    [
+        ("⌖ | ⌀.014 Ⓜ | A", "frame"),
+        ("   POS|.014(M)|A", "frame"),
+        ("   | ⌀.006 | A", "frame"),
+        ("   DATUM A", "datum"),
+        ("-A-", "datum"),
+    ],
+)
+def test_a_blank_line_between_a_callout_and_its_frame_is_said(line: str, what: str) -> None:
+    drawing = parse_sheet(f"1) ⌀.500 ±.003 THRU\n\n{line}\n{line}\nnote: PAINT\n{line}", "a")
+    parted = f"a {what} without a callout: no blank line may stand between a callout and its {what}"
+    stray = "the line belongs to no callout; a balloon such as 12) opens one"
+    assert [reason for _, _, reason in unknown(drawing)] == [parted, parted, stray]
+
+
 @pytest.mark.parametrize("line", ["units:mm", "UNITS : mm", "  Units:\tmm"])
 def test_a_key_that_is_known_needs_no_space(line: str) -> None:
     assert parse_sheet(line, "a").unit is Unit.MM

@@ -46,8 +46,13 @@ def parse_sheet(text: str, file: str, remarks: tuple[str, ...] = ()) -> Drawing:
         notes=tuple(title.notes),
         callouts=tuple(_callouts(layout.blocks, title.unit, commas)),
         lines=_outside_lines(title, layout),
-        remarks=remarks,
+        remarks=(*remarks, *_remarks(layout)),
     )
+
+
+def _remarks(layout: Layout) -> Iterator[str]:
+    if layout.style:
+        yield f"balloons are written as {layout.style.name}"
 
 
 def has_decimal_commas(layout: Layout) -> bool:

@@ -25,7 +25,8 @@ def transcribe(drawing: Drawing, style: Style = Style.UNICODE) -> str:
     rows = [f"{key + ':':{_KEY_WIDTH}}{value}" for key, value in _title_block(drawing, style)]
     rows.append("")
     rows += _callouts(drawing.callouts, style, drawing.unit)
-    strays = [line.text for line in drawing.lines if line.key is None]
+    standing = {line.number for callout in drawing.callouts for line in callout.source}
+    strays = [line.text for line in drawing.lines if line.key is None and line.number not in standing]
     return "\n".join([*rows, "", *strays] if strays else rows) + "\n"
 
 
