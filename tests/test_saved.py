@@ -6,7 +6,7 @@ from pathlib import Path
 import pytest
 
 from calloutlint import _saved
-from calloutlint.callouts.grammar import load_grammar
+from calloutlint._grammar import load_grammar
 from calloutlint.callouts.parse import FRAGMENTS
 
 LINES = ("4X ⌀.281 +.007 -.002 ‹THRU›", "⌖ | ⌀.014 Ⓜ | A | B Ⓜ | C", ".250-20 UNC-2B ↧ .50")

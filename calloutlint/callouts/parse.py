@@ -6,8 +6,8 @@ from functools import cache, lru_cache
 
 from lark import Lark, Token, Tree, UnexpectedInput, UnexpectedToken
 
+from calloutlint._grammar import load_grammar
 from calloutlint.callouts.expected import expected_words
-from calloutlint.callouts.grammar import load_grammar
 from calloutlint.callouts.note import find_note
 from calloutlint.callouts.parts.assemble import assemble
 from calloutlint.callouts.parts.line import Line, Node

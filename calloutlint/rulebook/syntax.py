@@ -7,7 +7,7 @@ from typing import Literal
 from lark import Lark, Token, Tree
 from lark.exceptions import UnexpectedCharacters, UnexpectedInput, UnexpectedToken
 
-from calloutlint._resources import read_text
+from calloutlint._grammar import load_grammar
 from calloutlint.rulebook.text_error import TextError
 
 Syntax = Tree[Token] | Token
@@ -34,8 +34,7 @@ _UNSAID = {"MEASURE", "SIGN", "QUANTIFIER", "COUNT_OF", "COUNT_EACH", "KNOWN", "
 
 @cache
 def _parser() -> Lark:
-    grammar = read_text("grammar", "condition.lark")
-    return Lark(grammar, parser="lalr", start=["either", "changes"], maybe_placeholders=False)
+    return load_grammar(("condition",), ("either", "changes"), maybe_placeholders=False)
 
 
 def parse(text: str, start: Start = "either") -> Tree[Token]:
