@@ -9,7 +9,7 @@ import pytest
 
 from calloutlint.callouts.parse import parse_callout
 from calloutlint.callouts.value import parse_size, parse_value
-from calloutlint.model.callout import FastenerNote, Meaning, Part, Unread, Words
+from calloutlint.model.callout import Callout, DatumFeature, FastenerNote, Meaning, Part, Unread, Words
 from calloutlint.model.fastener import Hold
 from calloutlint.model.frame import Frame, Modifier, ZoneShape
 from calloutlint.model.hole import HoleStep
@@ -315,6 +315,118 @@ def test_unreadable_text_is_kept_with_its_place(written: str, wrong: str) -> Non
     assert unread.text == wrong
     assert written[unread.span.start : unread.span.end] == wrong
     assert unread.expected
+
+
+@pytest.mark.parametrize(
+    ("written", "wrong", "expected"),
+    [
+        ("⌀..250 ±.002 THRU", "⌀..250 ±.002", "a number"),
+        ("⌀.28l +.005 -.000", "⌀.28l +.005 -.000", "digits only"),
+        ("⌀O.500 ±.002", "⌀O.500 ±.002", "digits only"),
+        ("12,5 ±0,1", "12,5 ±0,1", "a decimal point as elsewhere on the sheet"),
+        ("⌀12,5 +0,1 0", "⌀12,5 +0,1 0", "a decimal point as elsewhere on the sheet"),
+        ("⌀.500 +0.1 -0.2 ±0.3", "±0.3", "one tolerance for a size"),
+        ("⌀.500 ±.005 +.003 -.001", "+.003 -.001", "one tolerance for a size"),
+        ("POLISH ±.005", "±.005", "a size before the tolerance"),
+        ("DATUM 1", "DATUM 1", "a datum letter"),
+        ("[DIA .014] [A] [B]", "[A] [B]", "a geometric characteristic before its compartments"),
+        ("[A] [B] [C]", "[A] [B] [C]", "a geometric characteristic before its compartments"),
+        ("⌀.500 ±.002 [A] [B]", "[A] [B]", "a geometric characteristic before its compartments"),
+        ("CONCENTRIC TO A WITHIN .003", "CONCENTRIC TO A WITHIN .003", "a feature control frame"),
+        ("SQUARE WITHIN .005 TIR", "SQUARE WITHIN .005 TIR", "a feature control frame"),
+        ("⌀.500 .002 TIR", ".002 TIR", "a feature control frame"),
+        ("TIR .002", "TIR .002", "a feature control frame"),
+        ("⟂ | ⌀.002 Q | A", "Q", "a tolerance"),
+    ],
+)
+def test_one_slip_is_told_once_with_what_should_stand_there(written: str, wrong: str, expected: str) -> None:
+    (unread,) = [part for part in read(written) if isinstance(part, Unread)]
+    assert unread.text == wrong
+    assert unread.expected[0] == expected
+
+
+@pytest.mark.parametrize(
+    ("written", "meant"),
+    [("O.500", "0.500"), (".O10", ".010"), ("⌀.5OO", "⌀.500"), ("⌀.28l +.005 -.000", "⌀.281"), ("I.5", "1.5")],
+)
+def test_letters_among_digits_are_told_with_the_number_meant(written: str, meant: str) -> None:
+    (unread,) = read(written)
+    assert isinstance(unread, Unread)
+    assert unread.nearest == meant
+
+
+@pytest.mark.parametrize("written", ["⌖ | ⌀.014 | A | MAX", "DATUM 1", "⌀.500 DIA"])
+def test_what_is_spelled_rightly_has_no_nearest_spelling(written: str) -> None:
+    assert all(part.nearest is None for part in read(written) if isinstance(part, Unread))
+
+
+@pytest.mark.parametrize("written", ["[A]", "⌀.500 ±.002 THRU [A]", "⏥ .003 [A]", "⟂ | .002 | B ¶ [A]"])
+def test_one_letter_in_a_bracket_that_ends_a_line_is_a_datum_feature(written: str) -> None:
+    assert read(*written.split(" ¶ "))[-1] == DatumFeature("A")
+
+
+@pytest.mark.parametrize(
+    "written", ["[DIA .014] [A] [B]", "[A] [B]", "TP [.014] [A] [B]", "SEE VIEW [A]", "⟂ .002 [A]"]
+)
+def test_brackets_in_a_row_are_never_a_datum_feature(written: str) -> None:
+    assert not any(isinstance(part, DatumFeature) for part in read(written))
+
+
+@pytest.mark.parametrize(
+    ("written", "unit", "marked"),
+    [
+        ("⌀6.6 mm ±0.2", Unit.INCH, Unit.MM),
+        ("⌀6.6 mm +0.2 0", Unit.INCH, Unit.MM),
+        ("25.0-25.2 mm", Unit.INCH, Unit.MM),
+        ("⌀6.6 mm ¶ ±0.2", Unit.INCH, Unit.MM),
+        ("1 in ±.5", Unit.MM, Unit.INCH),
+        ('1.000"-1.002"', Unit.MM, Unit.INCH),
+    ],
+)
+def test_a_unit_marked_on_one_number_holds_for_the_size(written: str, unit: Unit, marked: Unit) -> None:
+    (size,) = read(*written.split(" ¶ "), unit=unit)
+    assert isinstance(size, Size)
+    assert size.tolerance is not None
+    assert {value.unit for value in size.tolerance.values} == {marked}
+    assert size.nominal is None or size.nominal.unit is marked
+
+
+@pytest.mark.parametrize(
+    ("written", "number"),
+    [("4 OFF", 4), ("QTY 4", 4), ("QTY. 12", 12), ("(4)", 4), ("4 REQD", 4), ("6 HOLES", 6)],
+)
+def test_a_count_in_words_stands_before_or_after_its_size(written: str, number: int) -> None:
+    for text in (f"{written} ⌀.281 THRU", f"⌀.281 THRU {written}"):
+        (size,) = read(text)
+        assert isinstance(size, Size)
+        assert size.count is not None
+        assert size.count.number == number
+        assert size.count.in_words
+
+
+@pytest.mark.parametrize(
+    ("count", "meaning"),
+    [
+        ("4 HOLES", Meaning.HOLE),
+        ("2 SLOTS", Meaning.SLOT),
+        ("3 SURFACES", Meaning.SURFACE),
+        ("2 BOSSES", Meaning.BOSS),
+    ],
+)
+def test_a_count_says_what_it_counts(count: str, meaning: Meaning) -> None:
+    for text in (count, f"{count} .250 ±.005"):
+        assert meaning in Callout("1", read(text)).meanings
+
+
+def test_the_text_of_a_number_is_plain_text() -> None:
+    (size,) = read("⌀.281 ±.002")
+    assert isinstance(size, Size)
+    assert size.nominal is not None
+    assert type(size.nominal.text) is str
+    frame = read("⌖ | ⌀.014 Ⓟ .50 | A")[0]
+    assert isinstance(frame, Frame)
+    assert frame.segments[0].zone is not None
+    assert {type(use.value.text) for use in frame.segments[0].zone.modifiers if use.value} == {str}
 
 
 @pytest.mark.parametrize(

@@ -29,7 +29,7 @@ def parse_value(text: str, unit: Unit | None) -> Value:
         ValueError: `text` is not one number.
     """
     if _CLEAN(text):
-        return Value(text, Decimal(text), unit)
+        return Value(str(text), Decimal(text), unit)
     match = _NUMBER.fullmatch(text)
     if match is None:
         raise ValueError(f"'{text.strip()}' is not a number. Expected one like .250, 6.35, 1 1/4 or 30°.")

@@ -39,14 +39,8 @@ _FIND = [
 # `DOWEL PIN HOLE` is a hole.
 _INTERNAL = {Meaning.HOLE, Meaning.SLOT, Meaning.GROOVE, Meaning.BORE}
 _EXTERNAL = {Meaning.PIN, Meaning.SHAFT, Meaning.BOSS, Meaning.TAB}
-_KNOWN = sorted(
-    {
-        spelling.upper()
-        for row in SPELLINGS
-        for spelling in row.every
-        if spelling.replace("'", "").isalpha() and spelling.isascii() and len(spelling) > 3
-    }
-)
+_SPELLINGS = {spelling.upper() for row in SPELLINGS for spelling in row.every}
+_KNOWN = sorted(s for s in _SPELLINGS if s.replace("'", "").isalpha() and s.isascii() and len(s) > 3)
 _CHARACTERISTICS = {spelling.upper() for row in CHARACTERISTICS for spelling in row.every}
 _LOOK_ALIKE = str.maketrans("OIL", "011")
 _PLAIN_NUMBER = re.compile(r"(?:S?⌀|±|R)?\s*(?:\d+\.?\d*|\.\d+)").fullmatch
@@ -82,7 +76,7 @@ def nearest_spelling(word: str) -> str | None:
         return None
     if upper == "PROFILE":
         return "PROFILE OF A SURFACE"
-    if upper in _KNOWN or upper in ORDINARY:
+    if upper in _SPELLINGS or upper in ORDINARY:
         return None
     if (number := mistyped_number(word)) is not None:
         return number

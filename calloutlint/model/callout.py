@@ -49,6 +49,12 @@ class Words:
     span: Span = field(default=NOWHERE, compare=False)
 
 
+def _counted(count: Count) -> set[Meaning]:
+    """What a count says it counts: `4 HOLES` counts holes."""
+    noun = count.written.rpartition(" ")[2].lower()
+    return {meaning for meaning in Meaning if noun in {meaning.value, f"{meaning}s", f"{meaning}es"}}
+
+
 @dataclass(frozen=True, slots=True)
 class FastenerNote:
     """A fastener named in the callout: `FOR .250-20 UNC SCREW`, `CLEARANCE FOR M6 FLOATING`."""
@@ -155,8 +161,10 @@ class Callout:
 
     @property
     def meanings(self) -> frozenset[Meaning]:
-        """What the plain words of the callout say."""
-        return frozenset(m for part in self.parts if isinstance(part, Words) for m in part.meanings)
+        """What the plain words of the callout say, those of its counts (`4 HOLES`) included."""
+        said = {meaning for part in self.parts if isinstance(part, Words) for meaning in part.meanings}
+        counts = (part if isinstance(part, Count) else getattr(part, "count", None) for part in self.parts)
+        return frozenset(said.union(*(_counted(count) for count in counts if count is not None)))
 
     @property
     def count(self) -> Count | None:

@@ -24,9 +24,9 @@ class HoleStep:
     """One step of a hole after its main size: `⌴ ⌀.438 ↧ .25`, `⌵ ⌀.50 X 82°`, `#7 DRILL ↧ .75`.
 
     `size` is the step's diameter, None where it is missing; `angle` a countersink's included angle; `drill`
-    the stock name where a drill is called by one (`#7`, `F`, `17/64`). A bare THRU or depth that follows a
-    size or thread is that part's `extent`, not a step. REAM or DRILL after a size (`⌀.250 REAM`) is a step
-    without a size of its own that speaks of the size before it.
+    the stock name where a drill is called by number or letter (`#7`, `F`). A bare THRU or depth that follows
+    a size or thread is that part's `extent`, not a step. REAM or DRILL after a size (`⌀.250 REAM`,
+    `17/64 DRILL`) is a step without a size of its own that speaks of the size before it.
     """
 
     kind: StepKind

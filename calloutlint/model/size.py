@@ -83,7 +83,6 @@ class FitCode:
         return self.letters + self.grade
 
 
-
 class SizeModifier(StrEnum):
     """Symbols that may follow a size."""
 
