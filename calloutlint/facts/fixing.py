@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from decimal import Decimal
+from decimal import ROUND_CEILING, Decimal
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.fastener import FastenerView, basic_major
@@ -22,6 +22,8 @@ if TYPE_CHECKING:
     from calloutlint.facts.callout import CalloutView
     from calloutlint.facts.frame import FrameView
     from calloutlint.facts.joint import JointView
+
+HEIGHTS = {Unit.INCH: Decimal("0.001"), Unit.MM: Decimal("0.01")}
 
 
 class FixingView(PartView):
@@ -83,6 +85,13 @@ class FixingView(PartView):
     def needed_height(self) -> Length | None:
         """What the projected zone has to reach: the projection, else the thickness of what is fastened."""
         return amount_in(self._joint.reach, self.unit)
+
+    @fact
+    def drawn_height(self) -> Length | None:
+        """That height as a drawing states it: a length from the other unit rounded up."""
+        if self.needed_height is None or self.unit not in HEIGHTS:
+            return None
+        return self.needed_height.quantize(HEIGHTS[self.unit], ROUND_CEILING)
 
     @fact
     def tilt_spoils(self) -> bool:

@@ -1,212 +1,26 @@
-"""Facts about a clearance hole in a joint: whether the fastener goes through, in the worst case.
-
-The formulas are those of `facts.fastening`; their sources stand there. What decides is computed in
-millimetres, into which inches convert without rounding, so that line to line stays exact across drawings.
-"""
+"""Facts about a clearance hole that is too tight: what would cure it, and what has to be said with the sum."""
 
 from __future__ import annotations
 
-from decimal import Decimal
-from typing import TYPE_CHECKING
+from collections.abc import Mapping
+from decimal import ROUND_CEILING, ROUND_FLOOR, Decimal
 
-from calloutlint.facts import fastening
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance, allowed, inner_boundary
-from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.fixing import FixingView
-from calloutlint.facts.located import is_located, positions, tolerance_of, widest_position
-from calloutlint.facts.onward import amount_in
-from calloutlint.facts.seated import SeatedView
+from calloutlint.facts.located import positions
+from calloutlint.facts.passing import PassingView
 from calloutlint.facts.view import Length, fact
-from calloutlint.model.callout import Callout
-from calloutlint.model.fastener import Fastener, Hold
 from calloutlint.model.frame import Modifier
-from calloutlint.units import Unit, convert
+from calloutlint.units import Unit
 
-if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
-    from calloutlint.facts.frame import FrameView
-    from calloutlint.facts.joint import JointView
+SHOWN = {Unit.INCH: 5, Unit.MM: 4}
+"""Places that messages show; what comes from another unit is rounded to them on the safe side."""
+DRAWN = {Unit.INCH: 3, Unit.MM: 2}
+"""Places that a corrected tolerance has at least."""
 
 
-class PassageView(SeatedView):
+class PassageView(PassingView):
     """A clearance hole that a fastener passes, by a stated joint or by assumption."""
 
     subject = "passage"
-    part: Callout
-
-    def __init__(self, callout: CalloutView, fastener: Fastener, joint: JointView | None) -> None:
-        super().__init__(callout.part, callout)
-        self._fastener = fastener
-        self._joint = joint
-
-    @fact
-    def joint(self) -> JointView | None:
-        """The stated joint; unknown where the hole is only taken for a clearance hole."""
-        return self._joint
-
-    @fact
-    def stated(self) -> bool:
-        """Whether a stated joint names it."""
-        return self._joint is not None
-
-    @fact
-    def fastener(self) -> FastenerView:
-        """The fastener that passes it."""
-        return FastenerView(self._fastener, self.unit)
-
-    @fact
-    def hold(self) -> Hold | None:
-        """Floating or fixed; unknown where it is not said."""
-        return self._joint.hold if self._joint else None
-
-    @fact
-    def under_head(self) -> bool:
-        """Whether the head, or the nut, bears on it: an outermost part, as far as the joint tells."""
-        return self._joint is None or self._joint.is_outermost(self.part)
-
-    @fact
-    def located(self) -> bool | None:
-        """Whether something locates it; unknown where a general tolerance may."""
-        return is_located(self._callout)
-
-    @fact
-    def position(self) -> FrameView | None:
-        """The line with its largest ⌀ position tolerance; unknown where none is stated."""
-        return widest_position(self._callout)
-
-    @property
-    def size(self) -> FeatureOfSize | None:
-        """The hole by its limits; None where they are not known, or in the wrong order."""
-        mmc, lmc = self._callout.hole.mmc, self._callout.hole.lmc
-        return None if mmc is None or lmc is None or mmc > lmc else FeatureOfSize(mmc, lmc)
-
-    @property
-    def _tolerance(self) -> GeometricTolerance | None:
-        return tolerance_of(self.position, self.unit) if self.position else None
-
-    @fact
-    def tolerance(self) -> Length | None:
-        """Its largest ⌀ position tolerance as stated."""
-        return self._tolerance.amount if self._tolerance else None
-
-    @fact
-    def tolerance_at_mmc(self) -> Length | None:
-        """That tolerance at the hole's smallest size: as stated, but at Ⓛ with the whole bonus."""
-        return self._allowed(self.size.mmc) if self.size else None
-
-    @fact
-    def tolerance_at_lmc(self) -> Length | None:
-        """That tolerance at the hole's largest size: at Ⓜ with the whole bonus."""
-        return self._allowed(self.size.lmc) if self.size else None
-
-    def _allowed(self, size: Decimal) -> Decimal | None:
-        if self.size is None or self._tolerance is None:
-            return None
-        return allowed(self.size, self._tolerance, size)
-
-    @fact
-    def inner_boundary(self) -> Length | None:
-        """The room that is always free: the smallest of hole size less the position allowed at that size."""
-        if self.size is None or self._tolerance is None:
-            return None
-        return inner_boundary(self.size, self._tolerance)
-
-    @fact
-    def play(self) -> Length | None:
-        """Smallest hole less the fastener; negative: it cannot enter."""
-        return self._here(self._less_fastener(self.size.mmc if self.size else None))
-
-    @fact
-    def room(self) -> Length | None:
-        """What the inner boundary leaves around the fastener; negative: they interfere."""
-        return self._here(self._room)
-
-    @property
-    def _room(self) -> Decimal | None:
-        return self._less_fastener(self.inner_boundary)
-
-    def _less_fastener(self, length: Decimal | None) -> Decimal | None:
-        """A length of this drawing less the fastener's largest size, in mm."""
-        fastener = amount_in(self.fastener.largest, Unit.MM)
-        if length is None or fastener is None or self.unit not in {Unit.INCH, Unit.MM}:
-            return None
-        return convert(length, self.unit, Unit.MM) - fastener
-
-    def _here(self, millimetres: Decimal | None) -> Decimal | None:
-        return None if millimetres is None or self.unit is None else convert(millimetres, Unit.MM, self.unit)
-
-    @fact
-    def fixing(self) -> FixingView | None:
-        """The fixing hole that asks for most; unknown where none is at hand or none has a position."""
-        if self._joint is None or self.hold is not Hold.FIXED:
-            return None
-        fixings = [fixing for fixing in self._joint.fixings if self._need(fixing) is not None]
-        return max(fixings, key=lambda fixing: self._need(fixing) or Decimal(0), default=None)
-
-    def _need(self, fixing: FixingView) -> Decimal | None:
-        """What a fixing hole needs, in mm: its tolerance, with the tilt where that is known."""
-        tolerance = _stated(fixing)
-        reach, depth = self._reach, fixing.full_thread_in(Unit.MM)
-        if tolerance is None:
-            return None
-        if fixing.is_projected or reach is None or depth is None or depth <= 0:
-            return tolerance
-        return fastening.fixing_demand(tolerance, reach, depth)
-
-    @property
-    def _reach(self) -> Decimal | None:
-        reach = amount_in(self._joint.reach, Unit.MM) if self._joint else None
-        return reach if reach is None or reach >= 0 else None
-
-    @fact
-    def fixing_tolerance(self) -> Length | None:
-        """Position tolerance of that fixing hole, in this drawing's unit."""
-        return self._here(_stated(self.fixing)) if self.fixing else None
-
-    @fact
-    def fixing_need(self) -> Length | None:
-        """What that fixing hole needs: its tolerance, times 1 + 2P/D where it is not projected."""
-        return self._here(self._need(self.fixing)) if self.fixing else None
-
-    @fact
-    def reach(self) -> Length | None:
-        """P: the projection, else the thickness of the clearance parts; unknown where neither is stated."""
-        return self._here(self._reach)
-
-    @fact
-    def engagement(self) -> Length | None:
-        """D: the smallest full thread or engagement depth of that fixing hole."""
-        return self.fixing.full_thread_in(self.unit) if self.fixing else None
-
-    @fact
-    def tilts(self) -> bool:
-        """Whether the fastener's tilt counts: the fixing hole is not projected, and P and D are known."""
-        return self.fixing is not None and self._need(self.fixing) != _stated(self.fixing)
-
-    @fact
-    def tilt_spoils(self) -> bool:
-        """Whether it would fit if the fixing hole were projected, and does not because it is not."""
-        if self.fixing is None or self.room is None or self.spare is None or not self.tilts:
-            return False
-        return self.spare < 0 <= self.room - (self.fixing_tolerance or 0)
-
-    @fact
-    def tilt_unknown(self) -> bool:
-        """Whether the fixing hole is not projected, and P or D is not known, so that the tilt is left out."""
-        fixing = self.fixing
-        if fixing is None or fixing.is_projected:
-            return False
-        return self._reach is None or fixing.full_thread is None
-
-    @fact
-    def spare(self) -> Length | None:
-        """Clearance left over: the room, less what the fixing hole needs where the fastener is fixed."""
-        if self._room is None:
-            return None
-        if self.hold is Hold.FLOATING:
-            return self.room
-        need = self._need(self.fixing) if self.fixing else None
-        return None if need is None else self._here(self._room - need)
 
     @fact
     def least_short(self) -> Length | None:
@@ -226,22 +40,31 @@ class PassageView(SeatedView):
         """The largest position tolerance of this hole that fits; unknown where none does."""
         if self.tolerance is None or self.least_short is None:
             return None
-        largest = self.tolerance - self.least_short
+        largest = self._rounded(self.tolerance - self.least_short, SHOWN, ROUND_FLOOR)
         return largest if largest >= 0 else None
 
     @fact
     def fair_tolerance(self) -> Length | None:
-        """That tolerance where it is at least half of the present one; unknown where it is not."""
+        """That tolerance as drawings state it, where half of the present one or more is left; else unknown."""
         if self.fitting_tolerance is None or self.tolerance is None:
             return None
-        return self.fitting_tolerance if 2 * self.fitting_tolerance >= self.tolerance else None
+        places = {unit: max(least, places_of(self.tolerance)) for unit, least in DRAWN.items()}
+        fair = self._rounded(self.fitting_tolerance, places, ROUND_FLOOR)
+        return fair if 2 * fair >= self.tolerance else None
+
+    def _rounded(self, amount: Decimal, places: Mapping[Unit, int], way: str) -> Decimal:
+        """An amount in no more places than its unit has."""
+        most = places.get(self.unit, 0) if self.unit else 0
+        return (
+            amount.quantize(Decimal(1).scaleb(-most), way) if places_of(amount.normalize()) > most else amount
+        )
 
     @fact
     def fitting_smallest(self) -> Length | None:
         """The smallest hole that fits with the present tolerances: what the hole lacks, added to it."""
         if self.size is None or self._lacks is None:
             return None
-        return self.size.mmc + self._lacks
+        return self._rounded(self.size.mmc + self._lacks, SHOWN, ROUND_CEILING)
 
     @fact
     def fitting_hole(self) -> Length | None:
@@ -296,13 +119,10 @@ class PassageView(SeatedView):
         return bool(uses & {Modifier.MMC, Modifier.LMC})
 
 
+def places_of(amount: Decimal) -> int:
+    """Decimal places of an amount as it is written."""
+    return max(0, -int(amount.as_tuple().exponent))
+
+
 def _sentences(said: tuple[tuple[bool, str], ...]) -> str:
     return "".join(f" {sentence}" for holds, sentence in said if holds)
-
-
-def _stated(fixing: FixingView) -> Decimal | None:
-    """Position tolerance of a fixing hole in mm; None where none is stated, or its drawing states no unit."""
-    zone = fixing.position.part.zone if fixing.position else None
-    if zone is None or zone.value is None or zone.value.unit not in {Unit.INCH, Unit.MM}:
-        return None
-    return amount_in(zone.value, Unit.MM)
