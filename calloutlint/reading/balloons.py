@@ -105,14 +105,19 @@ def in_other_styles(callouts: Sequence[Numbered]) -> Iterator[tuple[SourceLine, 
     They carry the number that would come next, which no other callout has; where it may be a count too, the
     callout after it goes on from there.
     """
-    taken = {_order(callout.balloon)[0] for callout in callouts}
-    for callout, following in zip(callouts, [*callouts[1:], None], strict=True):
-        number = _order(callout.balloon)[0]
-        limit = _order(following.balloon)[0] if following else None
-        for line in callout.lines[1:]:
-            if line.text[0] in "([0123456789" and _reads_on(line.text, number + 1, limit, taken):
+    if not any(_may_be_tagged(line) for callout in callouts for line in callout.lines[1:]):
+        return
+    numbers = [_order(callout.balloon)[0] for callout in callouts]
+    taken = frozenset(numbers)
+    for callout, number, limit in zip(callouts, numbers, [*numbers[1:], None], strict=True):
+        for line in filter(_may_be_tagged, callout.lines[1:]):
+            if _reads_on(line.text, number + 1, limit, taken):
                 number += 1
                 yield line, str(number)
+
+
+def _may_be_tagged(line: SourceLine) -> bool:
+    return line.text[0] in "([0123456789"
 
 
 def _reads_on(text: str, number: int, limit: int | None, taken: Collection[int]) -> bool:

@@ -138,7 +138,7 @@ def _by_features(run: Sequence[SourceLine]) -> Iterator[list[SourceLine]]:
 
 
 def _is_comment(line: str) -> bool:
-    return line.startswith(("# ", "#\t")) or _INDENTED_COMMENT.match(line) is not None
+    return "#" in line and (line.startswith(("# ", "#\t")) or _INDENTED_COMMENT.match(line) is not None)
 
 
 def _source(number: int, line: str, start: int = 0) -> SourceLine:
