@@ -267,6 +267,6 @@ def test_the_checked_rules_are_kept_and_read_back_the_same(tmp_path: Path) -> No
     told = [str(len(book.rules)), book.digest]
     assert run_apart(tmp_path) == [*told, "lark", "pydantic.main", "tomllib"]
     assert run_apart(tmp_path) == told
-    (kept,) = (tmp_path / "calloutlint").glob("*.tables")
-    kept.write_bytes(b"not a pickle")
+    for kept in (tmp_path / "calloutlint").glob("*.tables"):
+        kept.write_bytes(b"not a pickle")
     assert run_apart(tmp_path)[:2] == told

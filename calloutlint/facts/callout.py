@@ -32,16 +32,14 @@ class CalloutView(View):
 
     subject = "callout"
     part: Callout
+    drawing_model: Drawing
+    callout_model: Callout
 
     def __init__(self, part: Callout, drawing: DrawingView) -> None:
         self.part = self.callout_model = part
+        self.drawing_model = drawing.part
         self._drawing = drawing
         self.unit = drawing.unit
-
-    @property
-    def drawing_model(self) -> Drawing:
-        """The drawing as read."""
-        return self._drawing.part
 
     @fact
     def drawing(self) -> DrawingView:

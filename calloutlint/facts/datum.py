@@ -27,13 +27,9 @@ class DatumView(PartView):
 
     def __init__(self, part: DatumRef, frame: FrameView, place: int) -> None:
         super().__init__(part, frame.callout)
+        self.doubtful = frame.doubtful
         self._frame = frame
         self._place = place
-
-    @property
-    def doubtful(self) -> bool:
-        """Whether unread text stands in its frame line."""
-        return self._frame.part.doubtful
 
     @fact
     def frame(self) -> FrameView:

@@ -71,7 +71,6 @@ class LineView(View):
     def __init__(self, part: SheetLine, drawing: DrawingView) -> None:
         self.part = part
         self.unit = drawing.unit
-        self.callout_model = None
         self.drawing_model = drawing.part
 
     @fact
@@ -108,7 +107,6 @@ class DrawingView(View):
 
     def __init__(self, part: Drawing, package: PackageView) -> None:
         self.part = self.drawing_model = part
-        self.callout_model = None
         self.unit = part.unit
         self.package = package
         self._first: dict[str, Callout] = {}

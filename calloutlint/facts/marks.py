@@ -41,12 +41,8 @@ class SymbolView(PartView):
         self._kind = kind
         self._frame = frame
         self._on_datum = on_datum
-
-    @property
-    def doubtful(self) -> bool:
-        """Whether unread text stands beside its size or in its frame line."""
-        bearer = self._frame.part if self._frame else self.part
-        return bool(getattr(bearer, "doubtful", False))
+        if frame is not None:
+            self.doubtful = frame.doubtful
 
     @fact
     def kind(self) -> Modifier | None:

@@ -30,20 +30,16 @@ def amount_in(value: Value | None, unit: Unit | None) -> Decimal | None:
 class PartView(View):
     """A part of a callout. `part` is the model object that a finding marks and a redline changes."""
 
+    drawing_model: Drawing
+    callout_model: Callout
+
     def __init__(self, part: Any, callout: CalloutView) -> None:
         self.part = part
-        self._callout = callout
+        self.drawing_model = callout.drawing_model
+        self.callout_model = callout.callout_model
+        self.doubtful = getattr(part, "doubtful", False)
         self.unit = callout.unit
-
-    @property
-    def callout_model(self) -> Callout:
-        """The callout as read."""
-        return self._callout.callout_model
-
-    @property
-    def drawing_model(self) -> Drawing:
-        """The drawing as read."""
-        return self._callout.drawing_model
+        self._callout = callout
 
     def _length(self, value: Value | None) -> Decimal | None:
         return amount_in(value, self.unit)

@@ -29,8 +29,6 @@ class PackageView(View):
     def __init__(self, part: Package) -> None:
         self.part = part
         self.unit = None
-        self.callout_model = None
-        self.drawing_model = None
 
     @fact
     def name(self) -> str:

@@ -21,6 +21,8 @@ from functools import cache
 from types import NoneType
 from typing import Annotated, Any, ClassVar, Generic, Self, TypeVar, get_args, get_type_hints, overload
 
+from calloutlint.model.callout import Callout
+from calloutlint.model.drawing import Drawing
 from calloutlint.model.source import Span
 from calloutlint.units import Unit
 
@@ -75,12 +77,17 @@ class View:
     """Base of everything a rule can ask.
 
     `subject` is its name in rule sheets; `part` the model object it speaks of, where a finding about it
-    stands and what a redline changes; `unit` the unit that its lengths are in.
+    stands and what a redline changes; `unit` the unit that its lengths are in. `drawing_model` and
+    `callout_model` are what it stands on, where it stands on one; rules leave alone what is `doubtful`
+    because unread text stands beside it.
     """
 
     subject: ClassVar[str]
     unit: Unit | None
     part: Any = None
+    drawing_model: Drawing | None = None
+    callout_model: Callout | None = None
+    doubtful: bool = False
 
     @property
     def span(self) -> Span | None:

@@ -46,11 +46,11 @@ class Engine:
         found: list[tuple[View, Finding]] = []
         drawing, agendas = None, self._agendas_under(None)
         for view in views:
-            own = getattr(view, "drawing_model", None)
+            own = view.drawing_model
             if own is not drawing:
                 drawing, agendas = own, self._agendas_under(own.standard if own else None)
             agenda = agendas.get(view.subject)
-            if agenda is None or getattr(view.part, "doubtful", False) or getattr(view, "doubtful", False):
+            if agenda is None or view.doubtful:
                 continue
             for broken, rule in agenda.asked(view):
                 if broken(view) and (finding := rule.judge(view)):

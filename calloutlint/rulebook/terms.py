@@ -46,24 +46,15 @@ class Term:
 
     def value(self, writer: Writer) -> str:
         """Python for the value, None where it is unknown."""
-        return self._value(writer)
+        return f"(True if {self.holds(writer)} else False if {self.fails(writer)} else None)"
 
     def holds(self, writer: Writer) -> str:
         """Python that is true where this is certainly true."""
-        return self._holds(writer)
+        return f"({self.value(writer)} is True)" if self.optional else self.value(writer)
 
     def fails(self, writer: Writer) -> str:
         """Python that is true where this is certainly false."""
-        return self._fails(writer)
-
-    def _value(self, writer: Writer) -> str:
-        return f"(True if {self._holds(writer)} else False if {self._fails(writer)} else None)"
-
-    def _holds(self, writer: Writer) -> str:
-        return f"({self._value(writer)} is True)" if self.optional else self._value(writer)
-
-    def _fails(self, writer: Writer) -> str:
-        return f"({self._value(writer)} is False)" if self.optional else f"(not {self._value(writer)})"
+        return f"({self.value(writer)} is False)" if self.optional else f"(not {self.value(writer)})"
 
 
 def code_of(form: Callable[[Writer], str]) -> Code:
@@ -101,7 +92,7 @@ class Constant(Term):
     kind: Kind
     optional: bool = False
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         return writer.constant(self.constant)
 
 
@@ -113,7 +104,7 @@ class Measure(Term):
     kind: Kind
     optional: bool = True
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         return f"{writer.constant(self.by_unit)}.get({EXAMINED}.unit)"
 
 
@@ -125,7 +116,7 @@ class Variable(Term):
     kind: Kind
     optional: bool = False
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         return self.name
 
 
@@ -138,7 +129,7 @@ class Fact(Term):
     kind: Kind
     optional: bool
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         test, (owner,) = _operands(writer, [self.owner])
         return f"({owner}.{self.name} if {test} else None)" if test else f"{owner}.{self.name}"
 
@@ -152,7 +143,7 @@ class EachFact(Term):
     kind: Kind
     optional: bool = True
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         items, found = writer.fresh(), writer.fresh()
         each = f"({found} := tuple(each.{self.name} for each in {items}))"
         known = f"({items} := {self.items.value(writer)}) is not None and None not in {each}"
@@ -172,7 +163,7 @@ class Arithmetic(Term):
     def __post_init__(self) -> None:
         self.optional = self.left.optional or self.right.optional or self.operator == "/"
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         test, (left, right) = _operands(writer, [self.left, self.right])
         code = f"divide({left}, {right})" if self.operator == "/" else f"({left} {self.operator} {right})"
         return f"({code} if {test} else None)" if test else code
@@ -191,10 +182,10 @@ class Comparison(Term):
     def __post_init__(self) -> None:
         self.optional = self.left.optional or self.right.optional
 
-    def _holds(self, writer: Writer) -> str:
+    def holds(self, writer: Writer) -> str:
         return self._written(writer, self.operator)
 
-    def _fails(self, writer: Writer) -> str:
+    def fails(self, writer: Writer) -> str:
         return self._written(writer, OPPOSITE[self.operator])
 
     def _written(self, writer: Writer, operator: str) -> str:
@@ -214,10 +205,10 @@ class Negation(Term):
     def __post_init__(self) -> None:
         self.optional = self.inner.optional
 
-    def _holds(self, writer: Writer) -> str:
+    def holds(self, writer: Writer) -> str:
         return self.inner.fails(writer)
 
-    def _fails(self, writer: Writer) -> str:
+    def fails(self, writer: Writer) -> str:
         return self.inner.holds(writer)
 
 
@@ -233,10 +224,10 @@ class Junction(Term):
     def __post_init__(self) -> None:
         self.optional = any(term.optional for term in self.inner)
 
-    def _holds(self, writer: Writer) -> str:
+    def holds(self, writer: Writer) -> str:
         return "(" + f" {self.word} ".join(term.holds(writer) for term in self.inner) + ")"
 
-    def _fails(self, writer: Writer) -> str:
+    def fails(self, writer: Writer) -> str:
         opposite = "or" if self.word == "and" else "and"
         return "(" + f" {opposite} ".join(term.fails(writer) for term in self.inner) + ")"
 
@@ -255,10 +246,10 @@ class Quantified(Term):
     def __post_init__(self) -> None:
         self.optional = self.items.optional or self.condition.optional
 
-    def _holds(self, writer: Writer) -> str:
+    def holds(self, writer: Writer) -> str:
         return self._written(writer, "all" if self.every else "any", self.condition.holds(writer))
 
-    def _fails(self, writer: Writer) -> str:
+    def fails(self, writer: Writer) -> str:
         return self._written(writer, "any" if self.every else "all", self.condition.fails(writer))
 
     def _written(self, writer: Writer, function: str, condition: str) -> str:
@@ -278,7 +269,7 @@ class CountOf(Term):
     def __post_init__(self) -> None:
         self.optional = self.items.optional
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         test, (items,) = _operands(writer, [self.items])
         return f"(len({items}) if {test} else None)" if test else f"len({items})"
 
@@ -293,7 +284,7 @@ class CountWhere(Term):
     kind: Kind = COUNT
     optional: bool = True
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         items, name = writer.fresh(), self.variable.name
         holds, fails = self.condition.holds(writer), self.condition.fails(writer)
         known = f"all({holds} or {fails} for {name} in {items})"
@@ -309,8 +300,8 @@ class Known(Term):
     kind: Kind = FLAG
     optional: bool = False
 
-    def _value(self, writer: Writer) -> str:
+    def value(self, writer: Writer) -> str:
         return f"({self.inner.value(writer)} is not None)"
 
-    def _fails(self, writer: Writer) -> str:
+    def fails(self, writer: Writer) -> str:
         return f"({self.inner.value(writer)} is None)"
