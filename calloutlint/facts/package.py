@@ -60,10 +60,10 @@ class PackageView(View):
     def listed_fasteners(self) -> Iterator[FastenerView]:
         """Fasteners of joints, and those of the parts lists that no joint of their drawing uses."""
         yield from (joint.fastener for joint in self.joints)
+        used = {(id(joint.drawing_model), joint.fastener.part.text) for joint in self.joints}
         for drawing in self.part.drawings:
-            used = {joint.fastener.part.text for joint in self.joints if joint.drawing_model is drawing}
             for fastener in drawing.fasteners:
-                if fastener.text not in used:
+                if (id(drawing), fastener.text) not in used:
                     yield FastenerView(fastener, drawing.unit, drawing)
 
     @kept

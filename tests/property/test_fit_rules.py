@@ -1,4 +1,4 @@
-"""The FIT rules against the formulas of ASME Y14.5, Appendix B, worked out in fractions apart from the program."""
+"""The FIT rules against the formulas of ASME Y14.5, Appendix B, worked out apart, in fractions."""
 
 from dataclasses import dataclass
 from fractions import Fraction
