@@ -1,13 +1,16 @@
 """Fastener designations in the spellings that parts lists and notes use."""
 
+import time
+
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from calloutlint.callouts.fastener import parse_fastener
+from calloutlint.callouts.fastener import LONGEST_DESIGNATION, parse_fastener
+from calloutlint.callouts.parse import parse_callout
 from calloutlint.model.fastener import Fastener, Head
 from calloutlint.model.size import Deviations, Limits, PlusMinus, Size, SizeForm
-from calloutlint.model.thread import ThreadSystem
+from calloutlint.model.thread import Thread, ThreadSystem
 from calloutlint.units import Unit
 
 
@@ -250,3 +253,25 @@ def test_no_text_breaks_it(text: str) -> None:
 @given(st.text(max_size=60))
 def test_no_character_breaks_it(text: str) -> None:
     assert parse_fastener(text).text == " ".join(text.split())
+
+
+@pytest.mark.parametrize("repeated", ["4X ", "1/4-20 ", "M6 x ", "⌀6 m6 ", "FLAT "])
+def test_a_designation_of_any_length_is_read_at_once(repeated: str) -> None:
+    """Far more time is allowed than it takes, so that only a time that grows with the square fails."""
+    started = time.process_time()
+    assert parse_fastener(repeated * 4000) == Fastener((repeated * 4000).strip())
+    parse_fastener((repeated * 200)[:LONGEST_DESIGNATION])
+    assert time.process_time() - started < 1
+
+
+@pytest.mark.parametrize(
+    ("written", "size"),
+    [("10-32 UNF", "#10"), ("1-64 UNC", "#1"), ("1-32 UN", "1"), ("2-12 UN", "2"), ("0-80 UNF", "#0")],
+)
+def test_a_whole_number_is_the_same_size_in_a_thread_and_a_fastener(written: str, size: str) -> None:
+    """Source: ASME B1.1, standard series, from memory."""
+    (thread,) = parse_callout([written], Unit.INCH)
+    fastener = parse_fastener(written).thread
+    assert isinstance(thread, Thread)
+    assert fastener is not None
+    assert thread.size == fastener.size == size

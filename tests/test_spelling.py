@@ -1,9 +1,15 @@
 """The spelling table, the normaliser and its way back to the source columns."""
 
+import re
+
 import pytest
 
+from calloutlint._resources import read_text
+from calloutlint.callouts import table
+from calloutlint.callouts.parse import FRAGMENTS
 from calloutlint.callouts.spelling import SPELLINGS, normalise, opens_feature
-from calloutlint.callouts.table import CHARACTERISTICS, Spelling
+from calloutlint.callouts.symbols import ANY_CHARACTERISTIC, CHARACTERISTICS, MODIFIERS
+from calloutlint.callouts.table import Spelling
 
 
 @pytest.mark.parametrize(
@@ -64,8 +70,8 @@ def test_no_spelling_stands_for_two_things() -> None:
 
 
 def test_every_characteristic_has_an_ascii_form_that_is_read() -> None:
-    assert len(CHARACTERISTICS) == 14
-    for row in CHARACTERISTICS:
+    assert len(table.CHARACTERISTICS) == 14
+    for row in table.CHARACTERISTICS:
         assert normalise(f"{row.ascii} | .014").text == f"{row.symbol} | .014"
 
 
@@ -73,7 +79,7 @@ def test_every_characteristic_has_an_ascii_form_that_is_read() -> None:
 def test_both_canonical_forms_of_a_row_are_read_alike(row: Spelling) -> None:
     assert row.ascii.isascii()
     before, after = (
-        ("1 ", "") if row.symbol in {"°", "'", '"'} else ("", " | 1" if row in CHARACTERISTICS else " 1")
+        ("1 ", "") if row.symbol in {"°", "'", '"'} else ("", " | 1" if row in table.CHARACTERISTICS else " 1")
     )
     assert normalise(f"{before}{row.ascii}{after}").text == normalise(f"{before}{row.symbol}{after}").text
 
@@ -115,3 +121,19 @@ def test_a_size_a_thread_or_a_hole_opens_a_feature(line: str) -> None:
 )
 def test_what_speaks_of_a_feature_above_opens_none(line: str) -> None:
     assert not opens_feature(line)
+
+
+def test_every_symbol_of_the_table_has_its_meaning() -> None:
+    """The trade's name of a characteristic has the words of its name in the model."""
+    assert {row.symbol for row in table.MODIFIERS} <= set(MODIFIERS)
+    assert [row.symbol for row in table.CHARACTERISTICS] == list(CHARACTERISTICS)
+    for row in table.CHARACTERISTICS:
+        words = row.name.replace(" of a", "").split()
+        assert sorted(words) == sorted(CHARACTERISTICS[row.symbol].value.split())
+
+
+def test_the_grammar_names_every_characteristic() -> None:
+    """Inside its patterns it has to write them out."""
+    for fragment in FRAGMENTS:
+        for written in re.findall("⏤[^\\]]*", read_text("grammar", f"{fragment}.lark")):
+            assert written.startswith(ANY_CHARACTERISTIC)

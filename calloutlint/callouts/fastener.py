@@ -7,14 +7,15 @@ from functools import lru_cache
 
 from calloutlint.callouts import fastener_words as words
 from calloutlint.callouts.pin import find_pin
-from calloutlint.callouts.value import parse_value
+from calloutlint.callouts.value import number_value, parse_value
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.thread import Thread, ThreadSystem
 from calloutlint.model.values import Value
-from calloutlint.trade.inches import number_diameter
+from calloutlint.trade.inches import is_number_size
 from calloutlint.trade.metric import is_plausible_pitch, series_has
 from calloutlint.units import Unit
 
+LONGEST_DESIGNATION = 200
 _SPELLINGS = (
     (r"[×✕*]", "x"),
     (r"[″”“]|''", '"'),
@@ -60,11 +61,13 @@ class _Found:
 def parse_fastener(text: str, unit: Unit | None = None) -> Fastener:
     """The fastener that a designation names; never raises.
 
-    A designation that is not understood has neither `thread` nor `pin`. A thread's diameter is the basic
-    major diameter in inches or mm; a pitch that is not written stays None. `unit` is the drawing's: a pin is
-    in it unless its own spelling shows another.
+    A designation that is not understood, or longer than any is, has neither `thread` nor `pin`. A thread's
+    diameter is the basic major diameter in inches or mm; a pitch that is not written stays None. `unit` is the
+    drawing's: a pin is in it unless its own spelling shows another.
     """
     folded = " ".join(text.split())
+    if len(folded) > LONGEST_DESIGNATION:
+        return Fastener(folded)
     standard, rest = words.standard_in(_spelled(folded))
     if words.is_otherwise_sized(rest):
         return Fastener(folded, head=words.head_in(rest, standard), standard=standard)
@@ -98,7 +101,8 @@ def _find_thread(text: str) -> _Found:
     metric = _METRIC.search(text)
     if metric:
         return _metric(metric, text)
-    found = (_inch(match, text) for match in _INCH.finditer(text))
+    screw = words.names_screw(text)
+    found = (_inch(match, text, screw) for match in _INCH.finditer(text))
     return next((one for one in found if one.thread), _Found())
 
 
@@ -136,11 +140,11 @@ def _metric_tail(size: Decimal, text: str, place: int) -> tuple[Value | None, st
     return pitch, class_, length
 
 
-def _inch(match: re.Match[str], text: str) -> _Found:
+def _inch(match: re.Match[str], text: str, screw: bool) -> _Found:
     series = _SERIES.match(text, match.end())
     end = series.end() if series else match.end()
     length = _INCH_LENGTH.match(text, end)
-    size = _inch_size(match, named=bool(series) or words.names_screw(text) or _stands_alone(match, text))
+    size = _inch_size(match, named=bool(series) or screw or _stands_alone(match, text))
     if size is None:
         return _Found()
     name, diameter = size
@@ -169,11 +173,11 @@ def _inch_size(match: re.Match[str], named: bool) -> tuple[str, Value] | None:
     written = (match["size"] or "").replace("-", " ")
     if not (match["tpi"] or (named and not match.string[: match.start()].rstrip().endswith("⌀"))):
         return None
-    number = match["number"] or (written if _is_number_size(written, match["tpi"]) else None)
+    numbered = match["tpi"] and written.isdecimal() and is_number_size(int(written), Decimal(match["tpi"]))
+    number = match["number"] or (written if numbered else None)
     if number is not None:
-        diameter = number_diameter(int(number))
-        text = f"{diameter}".removeprefix("0")
-        return (f"#{int(number)}", Value(text, diameter, Unit.INCH)) if diameter is not None else None
+        diameter = number_value(int(number))
+        return None if diameter is None else (f"#{int(number)}", diameter)
     told = match["tpi"] or match["mark"] or not written.isdecimal()
     return (written, parse_value(written, Unit.INCH)) if told else None
 
@@ -183,14 +187,6 @@ def _stands_alone(match: re.Match[str], text: str) -> bool:
     length = _INCH_LENGTH.match(text, match.end())
     rest = text[: match.start()] + text[length.end() if length else match.end() :]
     return not rest.strip(" ;,-")
-
-
-def _is_number_size(written: str, tpi: str | None) -> bool:
-    """Whether a whole number before a pitch is a number size: `10-32`, `1-64` are; `1-8`, `2-12` are not."""
-    if not tpi or not written.isdecimal() or int(written) > 12:
-        return False
-    finest_inch = {0: 0, 1: 33}.get(int(written), 23)
-    return Decimal(tpi) > finest_inch
 
 
 def _said_length(text: str, unit: Unit) -> Value | None:

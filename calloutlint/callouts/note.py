@@ -3,10 +3,12 @@
 import re
 
 from calloutlint.callouts.fastener import parse_fastener
+from calloutlint.callouts.symbols import ANY_CHARACTERISTIC
 from calloutlint.model.fastener import Fastener, Hold
 
 _NAMED = re.compile(
-    r"(?<!\w)(?P<clear>(?:clearance|clear|clr)\.?\s+(?:holes?\s+)?)?for\s+(?:an?\s+)?(?P<what>[^|⏤⏥○⌭⌒⌓∠⟂∥⌖◎⌯↗⌰▲]+)",
+    r"(?<!\w)(?P<clear>(?:clearance|clear|clr)\.?\s+(?:holes?\s+)?)?"
+    rf"for\s+(?:an?\s+)?(?P<what>[^|{ANY_CHARACTERISTIC}▲]+)",
     re.IGNORECASE,
 )
 _STOPS = re.compile(

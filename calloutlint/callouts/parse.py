@@ -12,6 +12,7 @@ from calloutlint.callouts.note import find_note
 from calloutlint.callouts.parts.assemble import assemble
 from calloutlint.callouts.parts.line import Line, Node
 from calloutlint.callouts.spelling import Normal, normalise
+from calloutlint.callouts.symbols import ANY_CHARACTERISTIC
 from calloutlint.model.callout import Part, Unread
 from calloutlint.model.source import Span
 from calloutlint.units import Unit
@@ -23,7 +24,7 @@ _WORD = re.compile(r"[^\s|\[\]\uFFFD]+|[|\[\]]")
 _LOWER = re.compile(
     r"\s*(?:\||S?⌀?\s*-?(?:\d+\.?\d*|\.\d+)\s*(?:\||(?:/[\d.×Xx]+|[ⓂⓁⓈⓅⓉⒻ]|\s+\.?\d*\.?\d+)*\s*(?:\||(?:\s[A-Z]{1,2}(?:-[A-Z])?\s*[ⓂⓁ]?)+\s*$)))"
 ).match
-_OPENS_FRAME = re.compile(r"\s*[|\[]?\s*[⏤⏥○⌭⌒⌓∠⟂∥⌖◎⌯↗⌰]").match
+_OPENS_FRAME = re.compile(rf"\s*[|\[]?\s*[{ANY_CHARACTERISTIC}]").match
 
 
 @cache

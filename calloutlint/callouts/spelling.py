@@ -10,6 +10,7 @@ from collections.abc import Iterable
 from typing import NamedTuple
 
 from calloutlint._saved import compiled
+from calloutlint.callouts.symbols import ANY_CHARACTERISTIC
 from calloutlint.callouts.table import CHARACTERISTICS, SPELLINGS
 
 __all__ = ["SPELLINGS", "Normal", "normalise", "opens_feature"]
@@ -79,7 +80,7 @@ def opens_feature(line: str) -> bool:
 
 
 _LONGEST_OPENING = 200
-_FEATURE_ENDS = re.compile(r"[⏤⏥○⌭⌒⌓∠⟂∥⌖◎⌯↗⌰▲]|(?<!\S)-[A-Z]-")
+_FEATURE_ENDS = re.compile(rf"[{ANY_CHARACTERISTIC}▲]|(?<!\S)-[A-Z]-")
 _OPENS = re.compile(
     r"\s*(?:[^\W\d_][\w'./&-]*\s+|\d+\s?[Xx×](?!\w)\s*)*(?:S?⌀|□|‹[CS]?R›|[\[(]?\.?\d|#\s?\d|MJ?\d|Tr\s?\d|G\s?\d)"
 ).match

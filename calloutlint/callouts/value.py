@@ -7,6 +7,7 @@ from functools import lru_cache
 
 from calloutlint.model.size import Size
 from calloutlint.model.values import Value
+from calloutlint.trade.inches import number_diameter
 from calloutlint.units import Unit
 
 _UNITS = {'"': Unit.INCH, "IN": Unit.INCH, "IN.": Unit.INCH, "MM": Unit.MM}
@@ -39,6 +40,12 @@ def parse_value(text: str, unit: Unit | None) -> Value:
         return _angle(match)
     digits = match["sign2"] + match["decimal"].removesuffix(".")
     return Value(digits, Decimal(digits), _stated_unit(match["unit"], unit))
+
+
+def number_value(number: int) -> Value | None:
+    """Basic major diameter of a number size, `.1900` in for 10; None if there is no such size."""
+    diameter = number_diameter(number)
+    return None if diameter is None else Value(f"{diameter}".removeprefix("0"), diameter, Unit.INCH)
 
 
 def parse_size(text: str, unit: Unit | None) -> Size:

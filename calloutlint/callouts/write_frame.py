@@ -2,8 +2,7 @@
 
 from collections.abc import Iterator, Sequence
 
-from calloutlint.callouts.parts.modifiers import MODIFIER_OF
-from calloutlint.callouts.parts.read_frame import CHARACTERISTIC_OF
+from calloutlint.callouts.symbols import CHARACTERISTICS, MODIFIERS, ZONE_SHAPES
 from calloutlint.callouts.writing import Style, Writing
 from calloutlint.model.frame import (
     DatumRef,
@@ -14,13 +13,12 @@ from calloutlint.model.frame import (
     ScopeKind,
     Segment,
     Zone,
-    ZoneShape,
 )
 
-_SYMBOL_OF = {characteristic: symbol for symbol, characteristic in CHARACTERISTIC_OF.items()}
-_MODIFIER_SYMBOLS = {modifier: symbol for symbol, modifier in MODIFIER_OF.items()}
+_SYMBOL_OF = {characteristic: symbol for symbol, characteristic in CHARACTERISTICS.items()}
+_MODIFIER_SYMBOLS = {modifier: symbol for symbol, modifier in MODIFIERS.items()}
 _BOXED = {Modifier.POINT, Modifier.LINE, Modifier.PLANE}
-_SHAPES = {ZoneShape.WIDTH: "", ZoneShape.DIAMETER: "⌀", ZoneShape.SPHERE: "S⌀"}
+_SYMBOL_OF_SHAPE = {shape: symbol for symbol, shape in ZONE_SHAPES.items()}
 
 
 def write_frame(frame: Frame, writing: Writing) -> Iterator[str]:
@@ -51,7 +49,8 @@ def write_scope(scope: Scope, writing: Writing) -> str:
 
 
 def _zone(zone: Zone, writing: Writing) -> str:
-    shape = writing.form(_SHAPES[zone.shape]) if _SHAPES[zone.shape] else ""
+    symbol = _SYMBOL_OF_SHAPE[zone.shape]
+    shape = writing.form(symbol) if symbol else ""
     first = shape + (writing.value(zone.value) if zone.value is not None else "")
     if zone.per is not None:
         first += f"/{writing.value(zone.per.length)}"

@@ -2,10 +2,9 @@
 
 from decimal import Decimal
 
-from calloutlint.callouts.parts.modifiers import MODIFIER_OF
-from calloutlint.callouts.parts.read_size import FORMS
+from calloutlint.callouts.symbols import SIZE_FORMS, SIZE_MODIFIERS, STEPS
 from calloutlint.callouts.writing import Writing
-from calloutlint.model.hole import HoleStep, StepKind
+from calloutlint.model.hole import HoleStep
 from calloutlint.model.size import (
     Count,
     Depth,
@@ -21,17 +20,9 @@ from calloutlint.model.thread import Thread, ThreadSystem
 from calloutlint.model.values import Value
 from calloutlint.units import Unit
 
-_SYMBOL_OF_FORM = {form: symbol for symbol, form in FORMS.items()}
-_SYMBOL_OF_MODIFIER = {modifier.value: symbol for symbol, modifier in MODIFIER_OF.items()}
-_STEP_SYMBOLS = {
-    StepKind.COUNTERBORE: "⌴",
-    StepKind.SPOTFACE: "SF",
-    StepKind.COUNTERSINK: "⌵",
-    StepKind.DRILL: "DRILL",
-    StepKind.REAM: "REAM",
-    StepKind.BORE: "BORE",
-    StepKind.TAP: "TAP",
-}
+_SYMBOL_OF_FORM = {form: symbol for symbol, form in SIZE_FORMS.items()}
+_SYMBOL_OF_MODIFIER = {modifier: symbol for symbol, modifier in SIZE_MODIFIERS.items()}
+_SYMBOL_OF_STEP = {kind: symbol for symbol, kind in STEPS.items()}
 _ENCLOSED = {SizeStatus.BASIC: "[]", SizeStatus.REFERENCE: "()"}
 
 
@@ -42,7 +33,7 @@ def write_size(size: Size, writing: Writing) -> str:
         body = _ENCLOSED[size.status][0] + body + _ENCLOSED[size.status][1]
     words = [body]
     words += {SizeStatus.MAXIMUM: ["MAX"], SizeStatus.MINIMUM: ["MIN"]}.get(size.status, [])
-    words += [writing.symbol(_SYMBOL_OF_MODIFIER.get(use.value, use.value)) for use in size.modifiers]
+    words += [writing.symbol(_SYMBOL_OF_MODIFIER[use]) for use in size.modifiers]
     if size.dual is not None:
         words.append(f"[{_dual(size.dual, size.form, writing)}]")
     return _counted(size.count, " ".join(words) + _extent(size.extent, writing))
@@ -164,7 +155,7 @@ _WRITERS = {
 def write_step(step: HoleStep, writing: Writing) -> str:
     """`⌴ ⌀.438 ↧ .25`, `⌵ ⌀.50 X 82°`, `#7 DRILL ↧ .75`."""
     words = [] if step.drill is None else [step.drill]
-    words.append(writing.symbol(_STEP_SYMBOLS[step.kind]))
+    words.append(writing.symbol(_SYMBOL_OF_STEP[step.kind]))
     if step.size is not None:
         words.append(write_size(step.size, writing))
     if step.angle is not None:

@@ -50,6 +50,16 @@ def number_diameter(number: int) -> Decimal | None:
     return _NUMBER_START + number * _NUMBER_STEP if number in _NUMBERS else None
 
 
+def is_number_size(number: int, tpi: Decimal) -> bool:
+    """Whether a whole number before a pitch is a number size: `10-32`, `1-64` are, `2-12`, `1-32` are not.
+
+    Source: ASME B1.1. The coarsest number sizes have 24 threads per inch; of whole inches only 1 has finer
+    series, up to 32.
+    """
+    finest_of_inches = {0: Decimal(0), 1: Decimal(32)}.get(number, Decimal(23))
+    return number in _NUMBERS and tpi > finest_of_inches
+
+
 @lru_cache(maxsize=1024)
 def nominal_size(diameter: Decimal) -> NominalSize | None:
     """The nominal size that a diameter in inches stands for, as written or rounded to three places.

@@ -10,20 +10,12 @@ from calloutlint.callouts.parts.line import tokens
 from calloutlint.callouts.parts.place_word import as_word
 from calloutlint.callouts.parts.read_thread import read_thread
 from calloutlint.callouts.parts.state import HOLES, SPEAKS_OF_SIZE_BEFORE, State
+from calloutlint.callouts.symbols import STEPS
 from calloutlint.model.callout import Words
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import SizeForm, Through
 from calloutlint.model.source import Span
 from calloutlint.model.thread import ThreadSystem
-
-_STEPS = {
-    "⌴": StepKind.COUNTERBORE,
-    "⌵": StepKind.COUNTERSINK,
-    "‹SF›": StepKind.SPOTFACE,
-    "‹DRILL›": StepKind.DRILL,
-    "‹REAM›": StepKind.REAM,
-    "‹TAP›": StepKind.TAP,
-}
 
 
 def take_thread(state: State, tree: Tree[Token]) -> None:
@@ -71,7 +63,7 @@ def take_starts(state: State, token: Token) -> None:
 
 def take_step(state: State, token: Token) -> None:
     """A counterbore, countersink, spotface, drill, ream or tap."""
-    kind = _STEPS[token]
+    kind = STEPS[token.strip("‹›")]
     if (kind is StepKind.TAP and _is_plain_tap(state)) or _is_plain_word(state, kind):
         as_word(state, token)
         return

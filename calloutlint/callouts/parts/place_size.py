@@ -9,13 +9,13 @@ from calloutlint.callouts.parts.place_count import as_count
 from calloutlint.callouts.parts.place_hole import fits_step, place_depth, place_extent, put_in_step
 from calloutlint.callouts.parts.place_word import as_word
 from calloutlint.callouts.parts.read_size import (
-    SIZE_MODIFIERS,
     add_tolerance,
     read_size,
     size_form,
     upper_and_lower,
 )
 from calloutlint.callouts.parts.state import State
+from calloutlint.callouts.symbols import SIZE_MODIFIERS
 from calloutlint.model.callout import Unread
 from calloutlint.model.size import Limits, SizeForm, SizeStatus
 from calloutlint.model.values import Value

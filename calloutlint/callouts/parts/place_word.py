@@ -8,13 +8,19 @@ from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.note import read_note
 from calloutlint.callouts.parts.drafts import SizeDraft
 from calloutlint.callouts.parts.line import tokens
-from calloutlint.callouts.parts.read_size import SIZE_MODIFIERS
 from calloutlint.callouts.parts.state import State
+from calloutlint.callouts.symbols import SIZE_MODIFIERS
 from calloutlint.callouts.words import is_characteristic, mistyped_number, slip_of
 from calloutlint.model.callout import FastenerNote, TargetKind, Unread
+from calloutlint.model.size import SizeModifier
 
 _TARGET_KINDS = {"LINE": TargetKind.LINE, "AREA": TargetKind.AREA, "POINT": TargetKind.POINT}
 _TOLERANCE = re.compile(r"[±+-]\s*\.?\d").match
+_SIZE_MODIFIERS = {
+    **SIZE_MODIFIERS,
+    "CF": SizeModifier.CONTINUOUS_FEATURE,
+    "ST": SizeModifier.STATISTICAL,
+}
 _PUNCTUATION = set(",;.:/")
 
 
@@ -27,8 +33,8 @@ def take_word(state: State, token: Token) -> None:
         state.target.movable = True
     elif token in _PUNCTUATION:
         state.end_words()
-    elif token in SIZE_MODIFIERS and state.size is not None:
-        state.size.modifiers.append(SIZE_MODIFIERS[token])
+    elif token in _SIZE_MODIFIERS and state.size is not None:
+        state.size.modifiers.append(_SIZE_MODIFIERS[token])
     elif upper == "PROFILE" and state.follows("size"):
         state.end_words()
         state.unread(token, BY_PLACE["characteristic"], in_frame=True)

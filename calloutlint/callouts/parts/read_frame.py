@@ -8,9 +8,9 @@ from lark import Token
 from calloutlint.callouts.parts.drafts import SegmentDraft
 from calloutlint.callouts.parts.line import Line
 from calloutlint.callouts.parts.read_segment import SegmentReader
+from calloutlint.callouts.symbols import CHARACTERISTICS
 from calloutlint.model.frame import Characteristic
 
-CHARACTERISTIC_OF = dict(zip("⏤⏥○⌭⌒⌓∠⟂∥⌖◎⌯↗⌰", Characteristic, strict=True))
 _COMPOSITE = {Characteristic.POSITION, Characteristic.SURFACE_PROFILE, Characteristic.LINE_PROFILE}
 
 
@@ -26,7 +26,7 @@ class FrameRead:
 
 def read_frame(pieces: Sequence[Token], line: Line, above: Characteristic | None = None) -> FrameRead:
     """The segments on one line; `above` is the characteristic that a composite's lower segment goes on with."""
-    characteristic = above or CHARACTERISTIC_OF[pieces[0][-1]]
+    characteristic = above or CHARACTERISTICS[pieces[0][-1]]
     content = pieces if above else pieces[1:]
     bars = [piece.type in {"BAR", "OPEN_BOX"} for piece in content]
     boxed = bars[:1] == [True] and sum(bars[:-1]) > 1

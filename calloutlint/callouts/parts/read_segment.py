@@ -8,6 +8,7 @@ from lark import Token
 from calloutlint.callouts.parts.drafts import SegmentDraft
 from calloutlint.callouts.parts.line import Line, joined
 from calloutlint.callouts.parts.modifiers import BARE_MODIFIERS, WITH_NUMBER, modifier_of
+from calloutlint.callouts.symbols import ZONE_SHAPES
 from calloutlint.model.frame import (
     Characteristic,
     DatumLetter,
@@ -21,7 +22,6 @@ from calloutlint.model.frame import (
 from calloutlint.model.source import Span
 from calloutlint.model.values import Value
 
-_SHAPES = {"⌀": ZoneShape.DIAMETER, "S⌀": ZoneShape.SPHERE}
 _PER = re.compile(r"/⌀?\s*(.+?)(?:\s?[xX×]\s?(.+))?").fullmatch
 _FREEDOM = re.compile("[a-z]")
 _WORDS = {"WORD", "UNREAD", "ON_CIRCLE"}
@@ -132,7 +132,7 @@ class SegmentReader:
         self.filled = True
         self.zone_spans.append(self.line.span(piece))
         if self.value is None or not self.uses:
-            self.shape = _SHAPES[piece]
+            self.shape = ZONE_SHAPES[piece]
 
     def _number(self, piece: Token) -> None:
         self.filled = True

@@ -7,28 +7,11 @@ from lark import Token, Tree
 
 from calloutlint.callouts.parts.drafts import SizeDraft
 from calloutlint.callouts.parts.line import Line
-from calloutlint.model.size import Count, Deviations, FitCode, Limits, PlusMinus, SizeForm, SizeModifier
+from calloutlint.callouts.symbols import SIZE_FORMS
+from calloutlint.model.size import Count, Deviations, FitCode, Limits, PlusMinus, SizeForm
 from calloutlint.model.values import Value
 from calloutlint.units import Unit
 
-FORMS = {
-    "⌀": SizeForm.DIAMETER,
-    "S⌀": SizeForm.SPHERICAL_DIAMETER,
-    "R": SizeForm.RADIUS,
-    "CR": SizeForm.CONTROLLED_RADIUS,
-    "SR": SizeForm.SPHERICAL_RADIUS,
-    "□": SizeForm.SQUARE,
-}
-SIZE_MODIFIERS = {
-    "⟨ST⟩": SizeModifier.STATISTICAL,
-    "⟨CF⟩": SizeModifier.CONTINUOUS_FEATURE,
-    "Ⓔ": SizeModifier.ENVELOPE,
-    "Ⓘ": SizeModifier.INDEPENDENCY,
-    "Ⓕ": SizeModifier.FREE_STATE,
-    "CT": SizeModifier.COMMON_TOLERANCE,
-    "CF": SizeModifier.CONTINUOUS_FEATURE,
-    "ST": SizeModifier.STATISTICAL,
-}
 _UNIT = r"(?:\"|mm|MM|[iI][nN]\.?)"
 _ANGLE_PARTS = r"°(?:\s*\d+\.?\d*\s*')?(?:\s*\d+\.?\d*\s*\")?"
 _NUMBER = rf"(?:(?:\d+[ -])?\d+/\d+(?!\d)|\d+\.?\d*|\.\d+)\s*{_UNIT}?(?:{_ANGLE_PARTS}|')?"
@@ -45,7 +28,7 @@ _NUMBER_WORDS = _WORDS.split()
 
 def size_form(token: str) -> SizeForm:
     """The form that a symbol before or after a number stands for."""
-    return FORMS[token.strip("‹›")]
+    return SIZE_FORMS[token.strip("‹›")]
 
 
 def read_size(tree: Tree[Token], line: Line) -> SizeDraft:

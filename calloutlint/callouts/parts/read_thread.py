@@ -7,11 +7,11 @@ from lark import Token, Tree
 
 from calloutlint.callouts.parts.drafts import ThreadDraft
 from calloutlint.callouts.parts.line import Line
-from calloutlint.callouts.value import parse_value
+from calloutlint.callouts.value import number_value, parse_value
 from calloutlint.model.source import Span
 from calloutlint.model.thread import ThreadSystem
 from calloutlint.model.values import Value
-from calloutlint.trade.inches import number_diameter
+from calloutlint.trade.inches import is_number_size
 from calloutlint.units import Unit
 
 _UNIFIED = re.compile(
@@ -26,7 +26,6 @@ _PIPE = re.compile(
     r"\s*-?\s*(?P<series>[A-Z][A-Z\d-]+)"
 ).fullmatch
 _PARALLEL_PIPE = re.compile(r"(G|R[cp])\s?([\d /-]+?)\s?([AB]?)", re.IGNORECASE).fullmatch
-_LAST_NUMBER, _NUMBER_SIZES_FROM = 12, 24  # `10-32` is #10, `2-12` is two inches: no number size is coarser
 
 
 def read_thread(tree: Tree[Token], line: Line) -> ThreadDraft:
@@ -48,10 +47,7 @@ def read_thread(tree: Tree[Token], line: Line) -> ThreadDraft:
 
 def _inch_diameter(size: str) -> Value | None:
     """Basic major diameter of an inch thread size: `.250`, `1/4`, `#10`; None for a number that is no size."""
-    if not size.startswith("#"):
-        return parse_value(size, Unit.INCH)
-    amount = number_diameter(int(size[1:]))
-    return None if amount is None else Value(f"{amount:f}".removeprefix("0"), amount, Unit.INCH)
+    return number_value(int(size[1:])) if size.startswith("#") else parse_value(size, Unit.INCH)
 
 
 def _unified(text: str, span: Span) -> ThreadDraft:
@@ -60,7 +56,7 @@ def _unified(text: str, span: Span) -> ThreadDraft:
         raise ValueError(f"'{text}' is not an inch thread.")
     tpi = Value(match["tpi"], Decimal(match["tpi"]), None)
     size = _inch_size(match["size"])
-    if size.isdigit() and int(size) <= _LAST_NUMBER and tpi.amount >= _NUMBER_SIZES_FROM:
+    if size.isdigit() and is_number_size(int(size), tpi.amount):
         size = f"#{size}"
     return ThreadDraft(ThreadSystem.UNIFIED, size, _inch_diameter(size), "", span, tpi=tpi)
 
