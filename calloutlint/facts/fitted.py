@@ -205,7 +205,6 @@ def paired(size: Size, callout: CalloutView) -> FitCode | None:
 
 def mating_of(size: Size, callout: CalloutView) -> MatingView | None:
     """The fit of a callout's leading size; None where no words call it any, or its partner is not known."""
-    meanings = callout.part.meanings
     called = {kind for meaning, kind in CALLED.items() if meaning in callout.meanings}
     if len(called) != 1 or size is not leading_size(callout.part):
         return None
