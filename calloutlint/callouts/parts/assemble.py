@@ -1,11 +1,12 @@
 """The second pass: groups the pieces of all lines into the parts of a callout."""
 
-from collections.abc import Callable, Sequence
+from collections.abc import Sequence
 
 from lark import Token, Tree
 
 from calloutlint.callouts.expected import BY_PLACE
-from calloutlint.callouts.parts import place_count, place_frame, place_hole, place_size, place_word
+from calloutlint.callouts.parts import place_count, place_extent
+from calloutlint.callouts.parts.dispatch import MAY_BE_WORDS, TOKENS, TREES
 from calloutlint.callouts.parts.drafts import FrameDraft, SizeDraft
 from calloutlint.callouts.parts.line import Line, tokens
 from calloutlint.callouts.parts.state import DRAFTS, HOLES, State
@@ -25,12 +26,12 @@ def _read(state: State, line: Line) -> None:
     state.begin(line)
     for state.at, item in enumerate(line.items):
         kind = item.data if isinstance(item, Tree) else item.type
-        if kind not in _MAY_BE_WORDS:
+        if kind not in MAY_BE_WORDS:
             state.end_words()
         if isinstance(item, Tree):
             _take_tree(state, item)
         else:
-            _TOKENS[kind](state, item)
+            TOKENS[kind](state, item)
         state.previous = item
         if state.broken and _is_misspelled_frame(state):
             _take_rest(state)
@@ -38,7 +39,7 @@ def _read(state: State, line: Line) -> None:
     state.end_words()
     place_count.end_count(state)
     if state.depth is not None and state.depth.size is None:
-        place_hole.place_extent(state, state.depth)
+        place_extent.place_extent(state, state.depth)
     if state.broken:
         _mark_doubtful(state)
 
@@ -46,7 +47,7 @@ def _read(state: State, line: Line) -> None:
 def _take_tree(state: State, tree: Tree[Token]) -> None:
     """Takes a node; one whose numbers make no sense, such as `1/0-20 UNC`, cannot be read."""
     try:
-        _TREES[tree.data](state, tree)
+        TREES[tree.data](state, tree)
     except ValueError:
         pieces = tokens(tree)
         state.unread_span(state.line.span(pieces[0], pieces[-1]), BY_PLACE["value"])
@@ -101,74 +102,3 @@ def _mark_doubtful(state: State) -> None:
                 neighbour.doubtful = True
             elif isinstance(neighbour, FrameDraft):
                 neighbour.segments[-1 if beside is not here[at + 1 :] else 0].doubtful = True
-
-
-_TREES: dict[str, Callable[[State, Tree[Token]], None]] = {
-    "size": place_size.take_size,
-    "stacked": place_size.take_stacked,
-    "thread": place_hole.take_thread,
-    "frame": place_frame.take_frame,
-    "segment": place_frame.take_segment,
-    "target": place_frame.take_target,
-    "lost": place_word.take_lost,
-}
-_TOKENS: dict[str, Callable[[State, Token], None]] = {
-    "COUNT": place_count.take_count,
-    "THRU": place_hole.take_through,
-    "DEPTH": place_hole.take_depth,
-    "DEEP": place_hole.take_deep,
-    "STEP": place_hole.take_step,
-    "DRILL_NAME": place_hole.take_drill_name,
-    "BY": place_hole.take_by,
-    "LEFT_HAND": place_hole.take_left_hand,
-    "STARTS": place_hole.take_starts,
-    "MAX": place_size.take_status,
-    "MIN": place_size.take_status,
-    "REFERENCE": place_size.take_status,
-    "BASIC": place_size.take_status,
-    "SIZE_MODIFIER": place_size.take_size_modifier,
-    "BOXED_FORM": place_size.take_boxed_form,
-    "OPEN_BOX": place_size.open_box,
-    "CLOSE_BOX": place_size.close,
-    "OPEN": place_size.open_parenthesis,
-    "CLOSE": place_size.close,
-    "PROJECTED_HEIGHT": place_frame.take_projected_height,
-    "ANGLE_SIGN": place_size.take_angle_sign,
-    "SCOPE": place_frame.take_scope,
-    "DATUM_FEATURE": place_frame.take_datum_feature,
-    "DATUM_BOX": place_frame.take_boxed_letter,
-    "COMPARTMENT": place_frame.take_compartment,
-    "NUMBERED_DATUM": place_frame.take_numbered_datum,
-    "FASTENER": place_word.take_fastener,
-    "WORD": place_word.take_word,
-    "ON_CIRCLE": place_word.take_plain,
-    "NUMBERED_NOTE": place_word.take_plain,
-    "DESIGNATION": place_word.take_plain,
-    "WITHIN": place_word.take_plain,
-    "SPOKEN": place_word.take_spoken,
-    "STRAY": place_word.as_word,
-}
-# Pieces that may turn out to be plain words: a run of words goes on through them.
-_MAY_BE_WORDS = {
-    "WORD",
-    "ON_CIRCLE",
-    "NUMBERED_NOTE",
-    "DESIGNATION",
-    "WITHIN",
-    "DEPTH",
-    "STRAY",
-    "STEP",
-    "MAX",
-    "MIN",
-    "REFERENCE",
-    "BASIC",
-    "SIZE_MODIFIER",
-    "LEFT_HAND",
-    "STARTS",
-    "DATUM_FEATURE",
-    "DATUM_BOX",
-    "COMPARTMENT",
-    "NUMBERED_DATUM",
-    "target",
-    "lost",
-}

@@ -3,7 +3,7 @@
 from lark import Token
 
 from calloutlint.callouts.parts.drafts import FrameDraft, SizeDraft, ThreadDraft
-from calloutlint.callouts.parts.read_size import read_count
+from calloutlint.callouts.parts.read_count import read_count
 from calloutlint.callouts.parts.state import HOLES, Hole, State
 from calloutlint.model.size import Count, SizeForm
 from calloutlint.units import MM_PER_INCH

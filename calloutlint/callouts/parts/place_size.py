@@ -1,32 +1,23 @@
-"""Second pass: where a size, its status and its brackets belong."""
+"""Second pass: where a size, or a tolerance under one, belongs."""
 
 from lark import Token, Tree
 
 from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.parts.drafts import DepthDraft, SizeDraft, TargetDraft
 from calloutlint.callouts.parts.line import joined, tokens
-from calloutlint.callouts.parts.place_count import as_count
-from calloutlint.callouts.parts.place_hole import fits_step, place_depth, place_extent, put_in_step
-from calloutlint.callouts.parts.place_word import as_word
+from calloutlint.callouts.parts.place_bracket import take_dual
+from calloutlint.callouts.parts.place_extent import place_depth, place_extent
+from calloutlint.callouts.parts.place_status import STATUSES, set_status
+from calloutlint.callouts.parts.place_step import fits_step, put_in_step
 from calloutlint.callouts.parts.read_size import (
     add_tolerance,
     read_size,
-    size_form,
     upper_and_lower,
 )
 from calloutlint.callouts.parts.state import State
-from calloutlint.callouts.symbols import SIZE_MODIFIERS
 from calloutlint.model.callout import Unread
 from calloutlint.model.size import Limits, SizeForm, SizeStatus
 from calloutlint.model.values import Value
-
-_STATUSES = {
-    "MAX": SizeStatus.MAXIMUM,
-    "MIN": SizeStatus.MINIMUM,
-    "REFERENCE": SizeStatus.REFERENCE,
-    "BASIC": SizeStatus.BASIC,
-}
-_EXTREMES = {SizeStatus.MAXIMUM, SizeStatus.MINIMUM}
 
 
 def take_size(state: State, tree: Tree[Token]) -> None:
@@ -35,7 +26,7 @@ def take_size(state: State, tree: Tree[Token]) -> None:
     if state.form is not None:
         draft.form, state.form = state.form, None
     if state.dual_of is not None:
-        _take_dual(state.dual_of, draft)
+        take_dual(state.dual_of, draft)
         return
     if isinstance(state.last, Unread) and _is_nil_after(draft, state.last):
         state.unread_span(draft.span, state.last.expected)
@@ -47,23 +38,13 @@ def take_size(state: State, tree: Tree[Token]) -> None:
         draft.status = state.box
     if state.status is not None:
         status, state.status = state.status, None
-        _set_status(state, status, draft)
+        set_status(state, status, draft)
 
 
 def _is_nil_after(draft: SizeDraft, lost: Unread) -> bool:
     """Whether a bare 0 is the other deviation of one that could not be read: `⌀12,5 +0,1 0`."""
     nil = draft.bare and draft.nominal is not None and not draft.nominal.amount
     return nil and ("+" in lost.text or "-" in lost.text)
-
-
-def _take_dual(size: SizeDraft, draft: SizeDraft) -> None:
-    """The bracketed size in the other unit; a second number in the bracket is its other limit."""
-    first = size.dual
-    if first is None:
-        draft.form = size.form if draft.form is SizeForm.LINEAR else draft.form
-        size.dual = draft
-    elif first.nominal is not None and draft.nominal is not None and first.plain:
-        first.tolerance, first.nominal = Limits(first.nominal, draft.nominal), None
 
 
 def _belongs_elsewhere(state: State, draft: SizeDraft) -> bool:
@@ -128,7 +109,7 @@ def _is_second_limit(state: State, draft: SizeDraft) -> bool:
         return False
     if above.deviation is not None:
         return _complete(above, draft.nominal)
-    marked = state.status is not None or state.box is not None or any(map(state.follows, _STATUSES))
+    marked = state.status is not None or state.box is not None or any(map(state.follows, STATUSES))
     if marked or state.count is not None or not above.plain or not _near(above.nominal, draft.nominal):
         return False
     above.tolerance, above.nominal = Limits(above.nominal, draft.nominal), None
@@ -161,98 +142,5 @@ def take_stacked(state: State, tree: Tree[Token]) -> None:
             state.unread(piece, BY_PLACE["size"])
 
 
-def take_status(state: State, token: Token) -> None:
-    """MAX, MIN, REF or BSC: of the size before it, else of the one after it."""
-    status, size = _STATUSES[token.type], state.size
-    if state.dual_of is not None:
-        state.dual_statuses.append(status)
-        return
-    taken = size is not None and size.status in _EXTREMES and state.follows("size")
-    if size is not None and state.after_size and not taken:
-        _set_status(state, status, size)
-    elif state.follows("size"):
-        state.status = status
-    else:
-        as_word(state, token)
-
-
-def _set_status(state: State, status: SizeStatus, size: SizeDraft) -> None:
-    size.status = status
-    pair = [part for part in state.parts[-2:] if isinstance(part, SizeDraft)]
-    if len(pair) < 2 or {part.status for part in pair} != _EXTREMES:
-        return
-    upper, lower = sorted(pair, key=lambda part: part.status is SizeStatus.MINIMUM)
-    if upper.nominal is None or lower.nominal is None or upper.tolerance or lower.tolerance:
-        return
-    whole = pair[0]
-    whole.tolerance = Limits(upper.nominal, lower.nominal, named=True)
-    whole.nominal, whole.status = None, SizeStatus.TOLERANCED
-    state.parts.pop()
-    state.size = whole
-
-
-def take_size_modifier(state: State, token: Token) -> None:
-    """⟨ST⟩, ⟨CF⟩, Ⓔ …: of the size before it."""
-    if state.size is None:
-        as_word(state, token)
-    else:
-        state.size.modifiers.append(SIZE_MODIFIERS[token])
-
-
-def take_boxed_form(state: State, token: Token) -> None:
-    """A symbol before a bracket: `⌀[3.000]`."""
-    state.form = size_form(token)
-
-
 def take_angle_sign(state: State, token: Token) -> None:
     """`∠` before an angle says nothing that its degree sign does not."""
-
-
-def open_box(state: State, token: Token) -> None:
-    """`[`: a dual dimension right after a size, else a basic one."""
-    behind = isinstance(state.previous, Token) and state.previous.type in {*_STATUSES, "THRU"}
-    state.box = SizeStatus.BASIC
-    state.dual_of = state.size if state.after_size or behind else None
-
-
-def open_parenthesis(state: State, token: Token) -> None:
-    """`(`: a reference dimension."""
-    state.box, state.dual_of = SizeStatus.REFERENCE, None
-
-
-def close(state: State, token: Token) -> None:
-    """`]` or `)`."""
-    if state.box is None:
-        state.unread(token, BY_PLACE["bracket"])
-    elif state.box is SizeStatus.REFERENCE:
-        _join_fit(state)
-        as_count(state)
-    if state.dual_of is not None and state.dual_of.dual is not None:
-        _name_dual(state.dual_of.dual, state.dual_statuses)
-    state.dual_statuses = []
-    state.box = state.dual_of = None
-
-
-def _name_dual(dual: SizeDraft, statuses: list[SizeStatus]) -> None:
-    """MAX and MIN written inside the bracket."""
-    limits = dual.tolerance
-    if isinstance(limits, Limits) and set(statuses) == _EXTREMES:
-        pair = (limits.first, limits.second)
-        upper, lower = pair if statuses[0] is SizeStatus.MAXIMUM else pair[::-1]
-        dual.tolerance = Limits(upper, lower, named=True)
-    elif len(statuses) == 1:
-        dual.status = statuses[0]
-
-
-def _join_fit(state: State) -> None:
-    """`30.000-29.979 (30 f7)`: the limits and the code they come from are one size."""
-    if len(state.parts) < state.first + 2:
-        return
-    limits, coded = state.parts[-2:]
-    if not isinstance(limits, SizeDraft) or not isinstance(coded, SizeDraft):
-        return
-    unnamed = isinstance(limits.tolerance, Limits) and limits.nominal is None
-    if unnamed and coded.fit is not None and coded.tolerance is None:
-        limits.nominal, limits.fit = coded.nominal, coded.fit
-        state.parts.pop()
-        state.size = limits

@@ -11,7 +11,7 @@ from calloutlint.callouts.parts.line import tokens
 from calloutlint.callouts.parts.state import State
 from calloutlint.callouts.symbols import SIZE_MODIFIERS
 from calloutlint.callouts.words import is_characteristic, mistyped_number, slip_of
-from calloutlint.model.callout import FastenerNote, TargetKind, Unread
+from calloutlint.model.callout import FastenerNote, TargetKind, Unread, Words
 from calloutlint.model.size import SizeModifier
 
 _TARGET_KINDS = {"LINE": TargetKind.LINE, "AREA": TargetKind.AREA, "POINT": TargetKind.POINT}
@@ -52,6 +52,12 @@ def as_word(state: State, token: Token) -> None:
     else:
         state.end_words()
         state.unread(token, _tolerance_expected(state, token) or BY_PLACE["number"])
+
+
+def take_by(state: State, token: Token) -> None:
+    """X between two numbers; in a hole step and a target it is understood."""
+    if state.step is None and state.target is None:
+        state.parts.append(Words("X", (), state.line.span(token)))
 
 
 def take_plain(state: State, token: Token) -> None:

@@ -5,14 +5,13 @@ from collections.abc import Callable, Sequence
 
 from lark import Token
 
+from calloutlint.callouts.parts.compartment import Compartment
 from calloutlint.callouts.parts.drafts import SegmentDraft
 from calloutlint.callouts.parts.line import Line, joined
 from calloutlint.callouts.parts.modifiers import BARE_MODIFIERS, WITH_NUMBER, modifier_of
 from calloutlint.callouts.symbols import ZONE_SHAPES
 from calloutlint.model.frame import (
     Characteristic,
-    DatumLetter,
-    DatumRef,
     Modifier,
     ModifierUse,
     PerUnit,
@@ -26,32 +25,6 @@ _PER = re.compile(r"/⌀?\s*(.+?)(?:\s?[xX×]\s?(.+))?").fullmatch
 _FREEDOM = re.compile("[a-z]")
 _WORDS = {"WORD", "UNREAD", "ON_CIRCLE"}
 _KEEPS_WORDS = _WORDS | {"BAR", "CLOSE_BOX", "SCOPE"}
-
-
-class _Datum:
-    """A datum compartment in the making. `joining` while a hyphen waits for its letter."""
-
-    __slots__ = ("closed", "freedoms", "joining", "letters", "shared", "spans")
-
-    def __init__(self, letter: str, span: Span) -> None:
-        self.letters: list[tuple[str, Span, list[ModifierUse]]] = [(letter, span, [])]
-        self.shared: list[ModifierUse] = []
-        self.freedoms: tuple[str, ...] = ()
-        self.joining = self.closed = False
-        self.spans = [span]
-
-    def add(self, use: ModifierUse) -> None:
-        """Gives a modifier to the last letter, or to the whole group `(A-B)`."""
-        (self.shared if self.closed and len(self.letters) > 1 else self.letters[-1][2]).append(use)
-        self.spans.append(use.span)
-
-    def finish(self) -> DatumRef:
-        span = joined(self.spans)
-        if len(self.letters) > 1:
-            letters = tuple(DatumLetter(letter, tuple(uses), at) for letter, at, uses in self.letters)
-            return DatumRef(letters, tuple(self.shared), self.freedoms, span)
-        letter, at, uses = self.letters[0]
-        return DatumRef((DatumLetter(letter, (), at),), tuple(uses), self.freedoms, span)
 
 
 class SegmentReader:
@@ -71,7 +44,7 @@ class SegmentReader:
         self.per_follows = False
         self.maximum: Value | None = None
         self.zone_spans: list[Span] = []
-        self.datums: list[_Datum] = []
+        self.datums: list[Compartment] = []
         self.compartment = 0
         self.filled = False
         self.turned_back = False
@@ -204,10 +177,10 @@ class SegmentReader:
         else:
             self.turned_back = False
             self.compartment = max(self.compartment, 1)
-            self.datums.append(_Datum(str(piece), self.line.span(piece)))
+            self.datums.append(Compartment(str(piece), self.line.span(piece)))
             self.filled = True
 
-    def _is_bare_modifier(self, piece: Token, datum: _Datum | None) -> bool:
+    def _is_bare_modifier(self, piece: Token, datum: Compartment | None) -> bool:
         """Whether a letter is a modifier typed without its circle: `.014 M A M B`."""
         if piece not in BARE_MODIFIERS:
             return False

@@ -8,7 +8,7 @@ from lark import Token, Tree
 from calloutlint.callouts.parts.drafts import SizeDraft
 from calloutlint.callouts.parts.line import Line
 from calloutlint.callouts.symbols import SIZE_FORMS
-from calloutlint.model.size import Count, Deviations, FitCode, Limits, PlusMinus, SizeForm
+from calloutlint.model.size import Deviations, FitCode, Limits, PlusMinus, SizeForm
 from calloutlint.model.values import Value
 from calloutlint.units import Unit
 
@@ -20,10 +20,7 @@ _FRACTION = r"(?:\d+[ -])?\d+/\d+(?=\s*-)"
 _PAIR = re.compile(rf"\s*([+-]?\s*{_NUMBER})\s*[/,]?\s*([+-]?\s*{_NUMBER})\s*").fullmatch
 _LIMITS = re.compile(rf"\s*({_FRACTION}|{_LIMIT})(?:-|\s+-\s+|\s*/\s*|\s+)⌀?({_LIMIT}|{_NUMBER})\s*").fullmatch
 _MARK = re.compile(r"\"|(?<![a-z])(?:mm|in)(?![a-z])", re.IGNORECASE).search
-_COUNTED = re.compile(r"(\d+)").search
 _WIDEST_LIMITS = 10  # `30-0.1` is neither: a deviation needs a space before its sign
-_WORDS = "ONE TWO THREE FOUR FIVE SIX SEVEN EIGHT NINE TEN ELEVEN TWELVE"
-_NUMBER_WORDS = _WORDS.split()
 
 
 def size_form(token: str) -> SizeForm:
@@ -121,31 +118,3 @@ def _improper(text: str) -> bool:
     """Whether a fraction is none: `10/8` states limits."""
     over, slash, under = text.partition("/")
     return bool(slash) and over.isdigit() and under.isdigit() and int(over) >= int(under)
-
-
-def read_count(token: Token, line: Line) -> Count:
-    """The count that a COUNT token states, in its canonical spelling."""
-    text = str(token).upper()
-    first = text.split()[0]
-    counted = _COUNTED(text)
-    number = int(counted[1]) if counted else None
-    if number is None and first in _NUMBER_WORDS:
-        number = _NUMBER_WORDS.index(first) + 1
-    return Count(number, _canonical_count(text, number), line.span(token))
-
-
-def _canonical_count(text: str, number: int | None) -> str:
-    if number is None:
-        return "TYP"
-    if "‹TYP›" in text:
-        return f"{number} TYP"
-    if text.startswith("Q"):
-        return f"QTY {number}"
-    if text == f"({number})":
-        return text
-    noun = text.strip("()").split()[-1]
-    if "‹PL›" in text:
-        return f"{number} PL"
-    if noun[-1] in "X×-":
-        return f"{number}X"
-    return f"{number} {noun}"
