@@ -304,7 +304,7 @@ def test_a_limit_is_a_plain_amount(text: str, amount: str) -> None:
 
 
 def test_a_limit_cannot_ask_a_fact() -> None:
-    with pytest.raises(TextError, match="a limit is a number, or a length or an angle with its unit"):
+    with pytest.raises(TextError, match="a number, or a length or an angle with its unit"):
         limit("bore", Scope(ValveView))
 
 

@@ -103,8 +103,8 @@ def test_every_broken_sheet_is_told(house: Path) -> None:
     with pytest.raises(RuleSheetError) as caught:
         load_rulebook([house])
     told = str(caught.value)
-    assert "c.toml: key 'title': field required" in told
-    assert "d.toml: this is not TOML" in told
+    assert "c.toml: key 'title' is missing" in told
+    assert "d.toml: this is no TOML" in told
 
 
 def test_a_missing_folder_and_a_file_that_is_no_text_are_told(house: Path) -> None:

@@ -25,6 +25,8 @@ say      = "{tolerance} is not round"
 redline  = "add diameter to tolerance"
 """
 
+LIMIT = 'a number, or a length or an angle with its unit such as "0.05 mm", "0.002 in" or "0.5 deg" is expected'
+
 
 def build(text: str) -> Rule:
     sheet = read_sheet(text, "h.toml")
@@ -52,7 +54,7 @@ def test_a_sheet_states_a_rule() -> None:
         (
             '"minor"',
             '"mnior"',
-            "h.toml: key 'grade': input should be 'critical', 'major', 'minor' or 'observation', not 'mnior'",
+            "h.toml: key 'grade': expected is critical, major, minor or observation, not 'mnior'",
         ),
         (
             '"HOUSE-01"',
@@ -60,9 +62,9 @@ def test_a_sheet_states_a_rule() -> None:
             "h.toml: key 'id': 'house-1' is no rule id: "
             "expected capitals, a hyphen and a number, such as HOUSE-01",
         ),
-        ("title    =", "#", "h.toml: key 'title': field required"),
+        ("title    =", "#", "h.toml: key 'title' is missing"),
         ('"frame"', '"fram"', "h.toml: key 'examine': 'fram' is no subject; the nearest is 'frame'"),
-        ('"ISO GPS"', "3", "h.toml: key 'holds.2': input should be a valid string, not 3"),
+        ('"ISO GPS"', "3", "h.toml: key 'holds.2': a text is expected, not 3"),
         (
             '"ISO GPS"',
             '"ISO"',
@@ -79,7 +81,7 @@ def test_a_sheet_states_a_rule() -> None:
         (
             "holds    = [",
             "holds = [] #",
-            "h.toml: key 'holds': list should have at least 1 item after validation, not 0",
+            "h.toml: key 'holds': this list is empty",
         ),
         (
             "add diameter",
@@ -118,9 +120,28 @@ def test_a_sheet_states_a_rule() -> None:
         (
             "redline ",
             "limits.reach = 'three'\nredline ",
-            "h.toml: key 'limits.reach': 'three' is not known here",
+            "h.toml: key 'limits.reach': " + LIMIT + "\n    three\n    ^^^^^",
         ),
-        ("redline ", "figures = ['hole.mcm']\nredline ", "h.toml: key 'figures': a hole has no fact 'mcm'"),
+        (
+            "redline ",
+            "assumed = '{reach}'\nlimits.reach = '3 km'\nredline ",
+            "h.toml: key 'limits.reach': " + LIMIT + "\n    3 km\n    ^^^^",
+        ),
+        ("redline ", "limits.reach = true\nredline ", f"h.toml: key 'limits.reach': {LIMIT}, not True"),
+        ("redline ", "limits = 3\nredline ", "h.toml: key 'limits': a table is expected, not 3"),
+        ('["ASME Y14.5", "ISO GPS"]', "3", "h.toml: key 'holds': a list is expected, not 3"),
+        ('"common practice"', '""', "h.toml: key 'basis': this is empty: a text is expected"),
+        (
+            "tolerance.shape is diameter",
+            "tolerance.value 3",
+            "h.toml: key 'demand': '3' cannot stand here: expected 'and', 'has', 'in', 'is', 'not', 'or', "
+            "an operator or the end\n    tolerance.value 3\n                    ^",
+        ),
+        (
+            "redline ",
+            "figures = ['hole.mmc', 'hole.mcm']\nredline ",
+            "h.toml: key 'figures.2': a hole has no fact 'mcm'; the nearest is 'mmc'\n    hole.mcm\n         ^^^",
+        ),
     ],
 )
 def test_each_mistake_names_the_file_and_the_key(old: str, new: str, message: str) -> None:
@@ -145,9 +166,9 @@ def test_mistakes_in_variants_and_cases_are_told_with_their_number() -> None:
     variant = "\n[[variant]]\nwhen = 'composite'\n[[variant]]\nwhen = 'composit'\n"
     assert problems(SHEET + variant).startswith("h.toml: key 'variant.2.when': 'composit' is not known here")
     assert problems(SHEET + variant + "greade = 'minor'\n") == (
-        "h.toml: key 'greade' is not known; the nearest is 'grade'"
+        "h.toml: key 'variant.2.greade' is not known; the nearest is 'grade'"
     )
-    assert problems(SHEET + "\n[[case]]\nsheet = ''\n") == "h.toml: key 'case.1.finds': field required"
+    assert problems(SHEET + "\n[[case]]\nsheet = ''\n") == "h.toml: key 'case.1.finds' is missing"
 
 
 @pytest.mark.parametrize("deep", ["(never or " * 400 + "composite" + ")" * 400, "not " * 3000 + "composite"])
@@ -164,13 +185,13 @@ def test_a_long_sum_is_refused_before_python_chokes_on_it() -> None:
 
 
 def test_what_is_not_toml_says_where() -> None:
-    assert problems("id = HOUSE").startswith("h.toml: this is not TOML: Invalid value (at line 1, column 6)")
+    assert problems("id = HOUSE").startswith("h.toml: this is no TOML: Invalid value (at line 1, column 6)")
 
 
 @pytest.mark.parametrize(
     ("text", "problem"),
     [
-        ("retires = 'FIT-06'", "h.toml: key 'why': field required"),
+        ("retires = 'FIT-06'", "h.toml: key 'why' is missing"),
         ("amends = 'FIT-06'\nwhy = 'x'", "h.toml: amends FIT-06, but states neither a grade nor a limit"),
         (
             "retires = 'FIT-06'\nwhy = 'x'\ngrade = 'minor'",
@@ -183,6 +204,15 @@ def test_an_amendment_must_change_one_thing_and_say_why(text: str, problem: str)
     with pytest.raises(RuleSheetError) as caught:
         read_sheet(text, "h.toml")
     assert str(caught.value).startswith(problem)
+
+
+@pytest.mark.parametrize("text", ["", "# nothing yet\n", "title = 'A gauge'"])
+def test_a_sheet_that_is_about_no_rule_is_told_in_one_line(text: str) -> None:
+    assert problems(text) == "h.toml: a rule sheet needs 'id', 'amends' or 'retires'"
+
+
+def test_toml_that_is_nested_without_end_is_refused() -> None:
+    assert problems("id = " + "[" * 5000) == "h.toml: this is no TOML that is read: it is nested too deeply"
 
 
 def test_an_amendment_is_read() -> None:

@@ -13,12 +13,12 @@ from calloutlint.rulebook.correction import Correction
 from calloutlint.rulebook.finding import GRADES
 from calloutlint.rulebook.holds import holding
 from calloutlint.rulebook.index import required_words
-from calloutlint.rulebook.kinds import FLAG, Thing, single
+from calloutlint.rulebook.kinds import FLAG, QUANTITIES, Thing, single
 from calloutlint.rulebook.message import Message
 from calloutlint.rulebook.resolve import condition, expression
 from calloutlint.rulebook.rule import Rule, Wording
 from calloutlint.rulebook.scope import Scope
-from calloutlint.rulebook.sheet import Filed, LimitAmount, Sheet
+from calloutlint.rulebook.sheet import LIMIT_FORM, Filed, LimitAmount, Sheet
 from calloutlint.rulebook.template import message, slot
 from calloutlint.rulebook.terms import Constant, Junction, Measure, Negation, Term, code_of
 from calloutlint.rulebook.text_error import TextError, nearest
@@ -59,6 +59,7 @@ def build_rule(filed: Filed, subjects: Mapping[str, type[View]]) -> Rule:
         raise RuleSheetError(f"{filed.file}: key 'examine': {problem}")
     reader = _Reader(filed.file, Scope(view))
     reader.scope = Scope(view, dict(_limits(sheet.limits, reader)))
+    reader.stop_at_problems()  # texts that name a wrong limit would be told as wrong too
     when = reader.condition("when", sheet.when) if sheet.when else ALWAYS
     demand = reader.condition("demand", sheet.demand)
     rule = Rule(
@@ -69,8 +70,7 @@ def build_rule(filed: Filed, subjects: Mapping[str, type[View]]) -> Rule:
         wordings=(*_variants(sheet, reader), _own_wording(sheet, reader)),
         place=reader.read("stands_on", sheet.stands_on, _place, None) if sheet.stands_on else None,
     )
-    if reader.problems:
-        raise RuleSheetError("\n".join(reader.problems))
+    reader.stop_at_problems()
     return rule
 
 
@@ -94,13 +94,18 @@ class _Reader:
             )
         return otherwise
 
+    def stop_at_problems(self) -> None:
+        """Raise what is wrong so far as one `RuleSheetError`."""
+        if self.problems:
+            raise RuleSheetError("\n".join(self.problems))
+
     def condition(self, key: str, text: str) -> Term:
         return self.read(key, text, _runnable, ALWAYS)
 
     def message(self, key: str, text: str | None, figures: list[str]) -> Message | None:
         if text is None:
             return None
-        slots = [self.read("figures", name, slot, None) for name in figures]
+        slots = [self.read(f"figures.{number}", name, slot, None) for number, name in enumerate(figures, 1)]
         said = self.read(key, text, message, Message(()))
         return Message(said.pieces, tuple(slot for slot in slots if slot))
 
@@ -162,7 +167,10 @@ def limit(text: str, scope: Scope) -> Term | None:
     Raises:
         TextError: it is not a plain number, or a length or an angle with its unit.
     """
-    term = expression(text, scope)
-    if not isinstance(term, Constant | Measure):
-        raise TextError("a limit is a number, or a length or an angle with its unit", 0, len(text))
+    try:
+        term = expression(text, scope)
+    except TextError:
+        term = ALWAYS
+    if not isinstance(term, Constant | Measure) or term.kind not in QUANTITIES:
+        raise TextError(f"{LIMIT_FORM} is expected", 0, len(text))
     return term

@@ -1,17 +1,19 @@
 """The rule sheet: one TOML file with a rule, its wording and its proof."""
 
 import re
-import tomllib
-from collections.abc import Mapping
 from dataclasses import dataclass
 from decimal import Decimal
+from reprlib import repr as shortened
 from typing import Annotated, Any, Literal
 
 from pydantic import AfterValidator, BaseModel, ConfigDict, Field, ValidationError
 
-from calloutlint.errors import RuleSheetError
+from calloutlint.errors import RuleSheetError, SheetError
+from calloutlint.reading.toml import read_toml
 from calloutlint.rulebook.holds import holding
-from calloutlint.rulebook.text_error import nearest
+from calloutlint.rulebook.sheet_problems import problems
+
+LIMIT_FORM = 'a number, or a length or an angle with its unit such as "0.05 mm", "0.002 in" or "0.5 deg"'
 
 
 def _known_standard(text: str) -> str:
@@ -25,10 +27,17 @@ def _rule_id(text: str) -> str:
     return text
 
 
+def _limit_amount(given: object) -> object:
+    if isinstance(given, bool) or not isinstance(given, str | int | Decimal):
+        raise ValueError(f"{LIMIT_FORM} is expected, not {shortened(given)}")
+    return given
+
+
 RuleId = Annotated[str, AfterValidator(_rule_id)]
 GradeWord = Literal["critical", "major", "minor", "observation"]
 Text = Annotated[str, Field(min_length=1)]
-LimitAmount = str | int | Decimal
+LimitAmount = Annotated[Any, AfterValidator(_limit_amount)]
+"""A text, a whole number or a `Decimal`."""
 
 
 class Form(BaseModel):
@@ -117,22 +126,24 @@ def read_sheet(text: str, file: str) -> Sheet | Amendment:
     Raises:
         RuleSheetError: the text is not TOML, or a key is unknown, missing or wrong.
     """
-    data = _toml(text, file)
+    data = _table(text, file)
+    if not {"id", "amends", "retires"} & data.keys():
+        raise RuleSheetError(f"{file}: a rule sheet needs 'id', 'amends' or 'retires'")
     model: type[Sheet] | type[Amendment] = Amendment if {"retires", "amends"} & data.keys() else Sheet
     try:
         sheet = model.model_validate(data)
     except ValidationError as error:
-        raise RuleSheetError("\n".join(_problem(file, detail, model) for detail in error.errors())) from None
+        raise RuleSheetError(problems(file, error, model)) from None
     if isinstance(sheet, Amendment):
         _check_amendment(sheet, file)
     return sheet
 
 
-def _toml(text: str, file: str) -> dict[str, Any]:
+def _table(text: str, file: str) -> dict[str, Any]:
     try:
-        return tomllib.loads(text, parse_float=Decimal)
-    except tomllib.TOMLDecodeError as error:
-        raise RuleSheetError(f"{file}: this is not TOML: {error}") from None
+        return read_toml(text, file)
+    except SheetError as error:
+        raise RuleSheetError(str(error)) from None
 
 
 def _check_amendment(sheet: Amendment, file: str) -> None:
@@ -141,26 +152,3 @@ def _check_amendment(sheet: Amendment, file: str) -> None:
         raise RuleSheetError(f"{file}: a sheet that retires a rule can change nothing else")
     if sheet.amends and not changes:
         raise RuleSheetError(f"{file}: amends {sheet.amends}, but states neither a grade nor a limit")
-
-
-def _problem(file: str, detail: Any, model: type[Form]) -> str:
-    """One line for one thing that pydantic found: the file, the key, what is wrong."""
-    path = [part for part in detail["loc"] if isinstance(part, int) or part in _keys()]
-    key = ".".join(str(part + 1) if isinstance(part, int) else part for part in path)
-    if detail["type"] == "extra_forbidden":
-        *_, last = detail["loc"]
-        return f"{file}: key '{last}' is not known{nearest(str(last), _keys_of(model, detail['loc']))}"
-    message = detail["msg"].removeprefix("Value error, ")
-    given = detail["input"]
-    shown = "" if isinstance(given, Mapping | list) or detail["type"] == "value_error" else f", not {given!r}"
-    return f"{file}: key '{key}': {message[0].lower()}{message[1:]}{shown}"
-
-
-def _keys() -> set[str]:
-    models: tuple[type[Form], ...] = (Sheet, Amendment, Variant, Case)
-    return {name for model in models for name in model.model_fields}
-
-
-def _keys_of(model: type[Form], path: tuple[str | int, ...]) -> list[str]:
-    inner: dict[str, type[Form]] = {"variant": Variant, "case": Case}
-    return list((inner.get(str(path[0]), model) if len(path) > 1 else model).model_fields)

@@ -5,7 +5,7 @@ from functools import cache
 from typing import Literal
 
 from lark import Lark, Token, Tree
-from lark.exceptions import UnexpectedCharacters, UnexpectedInput, UnexpectedToken
+from lark.exceptions import UnexpectedInput, UnexpectedToken
 
 from calloutlint._grammar import load_grammar
 from calloutlint.rulebook.text_error import TextError
@@ -46,24 +46,31 @@ def parse(text: str, start: Start = "either") -> Tree[Token]:
     try:
         return _parser().parse(text, start=start)
     except UnexpectedInput as error:
-        raise _unexpected(error, text) from None
+        raise _unexpected(error, text, start) from None
 
 
-def _unexpected(error: UnexpectedInput, text: str) -> TextError:
+def _unexpected(error: UnexpectedInput, text: str, start: Start) -> TextError:
+    if isinstance(error, UnexpectedToken) and error.token.type == "$END":
+        problem = f"the text ends too early: expected {_listed(error.accepts)}"
+        return TextError(problem, len(text), len(text))
+    place = error.pos_in_stream or 0
     if isinstance(error, UnexpectedToken):
-        if error.token.type == "$END":
-            problem = f"the text ends too early: expected {_listed(error.expected)}"
-            return TextError(problem, len(text), len(text))
-        start = error.token.start_pos or 0
-        message = f"'{error.token}' cannot stand here: expected {_listed(error.expected)}"
-        return TextError(message, start, start + len(error.token))
-    start = error.pos_in_stream or 0
-    expected = error.allowed if isinstance(error, UnexpectedCharacters) else ()
-    return TextError(f"'{text[start]}' cannot stand here: expected {_listed(expected or ())}", start, start + 1)
+        wrong, expected = str(error.token), error.accepts
+    else:
+        wrong, expected = text[place], _accepted_after(text[:place], start)
+    return TextError(f"'{wrong}' cannot stand here: expected {_listed(expected)}", place, place + len(wrong))
 
 
-def _listed(terminals: Iterable[str]) -> str:
-    names = {_EXPECTED.get(name, f"'{name.lower()}'") for name in terminals if name not in _UNSAID}
+def _accepted_after(text: str, start: Start) -> set[str]:
+    """The terminals that may follow a text which is right so far."""
+    parser = _parser().parse_interactive(text, start=start)
+    parser.exhaust_lexer()
+    accepted: set[str] = parser.accepts()  # type: ignore[no-untyped-call]  # lark leaves it untyped
+    return accepted
+
+
+def _listed(terminals: Iterable[str] | None) -> str:
+    names = {_EXPECTED.get(name, f"'{name.lower()}'") for name in terminals or () if name not in _UNSAID}
     *others, last = sorted(names) or ["a condition"]
     return f"{', '.join(others)} or {last}" if others else last
 
