@@ -67,6 +67,8 @@ SHEETS = st.builds(
     st.lists(st.one_of(KEYS, LINES), max_size=2),
 )
 UNTAGGED = st.lists(st.one_of(KEYS, LINES, LINES, st.just(""), st.just("# remark")), min_size=1, max_size=12)
+STYLED = st.builds(lambda text, style: text.replace(") ", style), SHEETS, st.sampled_from([". ", ": ", "\t"]))
+ANY_SHEET = st.one_of(SHEETS, STYLED, UNTAGGED.map("\n".join))
 ANYTHING = st.text(st.characters(exclude_categories=["Cs"]), max_size=80)
 
 
@@ -75,7 +77,7 @@ def test_any_text_gives_a_drawing(text: str) -> None:
     assert parse_sheet(text, "a").file == "a"
 
 
-@given(st.one_of(SHEETS, UNTAGGED.map("\n".join)))
+@given(ANY_SHEET)
 def test_every_line_stands_in_one_place(text: str) -> None:
     drawing = parse_sheet(text, "a")
     standing = [line.number for callout in drawing.callouts for line in callout.source]
@@ -84,7 +86,7 @@ def test_every_line_stands_in_one_place(text: str) -> None:
     assert sorted(standing) == expected
 
 
-@given(st.one_of(SHEETS, UNTAGGED.map("\n".join)))
+@given(ANY_SHEET)
 def test_a_callout_knows_where_it_stands(text: str) -> None:
     lines = split_lines(text)
     for callout in parse_sheet(text, "a").callouts:
@@ -92,7 +94,7 @@ def test_a_callout_knows_where_it_stands(text: str) -> None:
             assert lines[source.number - 1][source.column :].startswith(source.text)
 
 
-@given(st.one_of(SHEETS, UNTAGGED.map("\n".join)), st.sampled_from(list(Style)))
+@given(ANY_SHEET, st.sampled_from(list(Style)))
 def test_a_sheet_transcribed_reads_back_the_same(text: str, style: Style) -> None:
     drawing = parse_sheet(text, "a")
     written = transcribe(drawing, style)
