@@ -16,13 +16,25 @@ def write_whole(path: Path, data: bytes) -> None:
     Raises:
         CalloutlintError: it cannot be written; what stood there is left as it was.
     """
+    check_writable(path)
     target = Path(os.path.realpath(path))
     try:
-        if target.exists() and not os.access(target, os.W_OK):
-            raise PermissionError(13, "the file is write-protected")
         _replace(target, data)
     except OSError as error:
-        raise CalloutlintError(f"'{path}' cannot be written: {_reason(error, target.parent)}.") from error
+        raise _unwritable(path, (error.strerror or str(error))) from error
+
+
+def check_writable(path: Path) -> None:
+    """Make sure, as far as can be told without writing, that a file can be written.
+
+    Raises:
+        CalloutlintError: the file is write-protected, or its folder takes no new files.
+    """
+    target = Path(os.path.realpath(path))
+    if target.exists() and not os.access(target, os.W_OK):
+        raise _unwritable(path, "the file is write-protected")
+    if target.parent.is_dir() and not os.access(target.parent, os.W_OK | os.X_OK):
+        raise _unwritable(path, f"the folder '{target.parent}' takes no new files")
 
 
 def _replace(target: Path, data: bytes) -> None:
@@ -45,8 +57,5 @@ def _umask() -> int:
     return mask
 
 
-def _reason(error: OSError, folder: Path) -> str:
-    if isinstance(error, PermissionError) and not os.access(folder, os.W_OK):
-        return f"the folder '{folder}' takes no new files"
-    reason = error.strerror or str(error)
-    return reason[:1].lower() + reason[1:]
+def _unwritable(path: Path, reason: str) -> CalloutlintError:
+    return CalloutlintError(f"'{path}' cannot be written: {reason[:1].lower()}{reason[1:]}.")

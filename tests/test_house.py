@@ -70,6 +70,38 @@ def test_a_retired_or_amended_rule_is_proven_as_written(house: Path) -> None:
     assert len(book.rules) == len(shipped) - 1
 
 
+def test_what_house_sheets_change_is_told_with_its_reason(house: Path) -> None:
+    (house / "a.toml").write_text('retires = "FIT-06"\nwhy = "our holes are reamed."', encoding="utf-8")
+    text = 'amends = "HOUSE-01"\nwhy = "a larger gauge"\ngrade = "major"\nlimits.widest = "2 mm"'
+    (house / "b.toml").write_text(text, encoding="utf-8")
+    assert load_rulebook().changes == ()
+    assert [change.told for change in load_rulebook([house]).changes] == [
+        "FIT-06 retired, because: our holes are reamed.",
+        "HOUSE-01 grade major for minor, widest 2 mm for 1 mm, because: a larger gauge.",
+    ]
+
+
+@pytest.mark.parametrize(
+    ("other", "problem"),
+    [
+        ("HOUSE-02", "there is no rule HOUSE-02; the nearest is 'HOUSE-01'"),
+        ("HOUSE-01", "a rule cannot yield to itself"),
+    ],
+)
+def test_a_rule_can_yield_only_to_another_that_there_is(other: str, problem: str) -> None:
+    text = OWN.replace("say =", f'yields_to = ["{other}"]\nsay =')
+    with pytest.raises(RuleSheetError) as caught:
+        filed_rules(read_sheets([("own.toml", text)]))
+    assert str(caught.value) == f"own.toml: key 'yields_to.1': {problem}"
+
+
+def test_a_house_rule_may_yield_to_a_shipped_one_even_if_that_is_retired(house: Path) -> None:
+    text = OWN.replace("say =", 'yields_to = ["FIT-06"]\nsay =')
+    (house / "gauges" / "own.toml").write_text(text, encoding="utf-8")
+    (house / "a.toml").write_text('retires = "FIT-06"\nwhy = "x"', encoding="utf-8")
+    assert "HOUSE-01" in [rule.id for rule in load_rulebook([house]).rules]
+
+
 @pytest.mark.parametrize(
     ("text", "problem"),
     [
@@ -92,7 +124,7 @@ def test_a_limit_may_not_become_another_kind_of_amount() -> None:
     """The rule's own texts are checked again with the new limit."""
     text = 'amends = "HOUSE-01"\nwhy = "x"\nlimits.widest = "2 deg"'
     sheets = read_sheets([("own.toml", OWN), ("b.toml", text)])
-    filed = amended(filed_rules(sheets), sheets)
+    filed = amended(filed_rules(sheets), sheets).rules
     with pytest.raises(RuleSheetError, match="key 'demand': a length cannot be compared with an angle"):
         build_rules(filed)
 
@@ -110,6 +142,11 @@ def test_every_broken_sheet_is_told(house: Path) -> None:
 def test_a_missing_folder_and_a_file_that_is_no_text_are_told(house: Path) -> None:
     with pytest.raises(CalloutlintError, match=r"no-such: there is no such folder of rule sheets"):
         load_rulebook([house / "no-such"])
+    with pytest.raises(CalloutlintError, match=r"own\.toml: this is a file; name its folder"):
+        load_rulebook([house / "gauges" / "own.toml"])
+    (house / "none").mkdir()
+    with pytest.raises(CalloutlintError, match=r"none: there is no rule sheet \(\.toml\) in this folder"):
+        load_rulebook([house / "none"])
     (house / "e.toml").write_bytes(b"\xff\xfe\x00")
     with pytest.raises(RuleSheetError, match=r"e\.toml: a rule sheet must be UTF-8 text"):
         load_rulebook([house])

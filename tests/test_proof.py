@@ -83,7 +83,6 @@ def test_a_sheet_whose_cases_come_out_holds() -> None:
             'tolerance = ".011 in"',
             ["case 1: no finding has tolerance = .011 in: tolerance = .010 in"],
         ),
-        ("basis", 'yields_to = ["HOUSE-09"]\nbasis', ["it yields to HOUSE-09, which is no rule"]),
         (
             "{tolerance} is",
             "{tolerance.projected} is",

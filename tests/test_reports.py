@@ -68,7 +68,7 @@ def _judged(entry: dict[str, Any], drawings: dict[str, Drawing]) -> Judged:
         part=part,
         span=span,
     )
-    return Judged(finding, _redline(entry, drawing, callout), entry.get("waived"))
+    return Judged(finding, _redline(entry, drawing, callout))
 
 
 def _redline(entry: dict[str, Any], drawing: Drawing | None, callout: Callout | None) -> Redline | None:

@@ -26,6 +26,7 @@ def add(commands: Subparsers) -> None:
     facts = actions.add_parser(
         "facts", help="what rules can ask", description="List the facts that rules can ask."
     )
+    facts.add_argument("subject", metavar="SUBJECT", nargs="?", help="only those of one subject, such as frame")
     plain_option(facts)
     facts.set_defaults(run=run_facts)
     proving = actions.add_parser(
@@ -56,13 +57,15 @@ def run_show(options: Namespace) -> int:
     from calloutlint.rulebook.rulebook import load_rulebook
     from calloutlint.rulebook.text_error import nearest
 
-    rules = {rule.id: rule for rule in load_rulebook(options.house).rules}
+    rulebook = load_rulebook(options.house)
+    rules = {rule.id: rule for rule in (*rulebook.as_written, *rulebook.rules)}
     wanted = options.id.upper()
     if wanted not in rules:
         raise CalloutlintError(
             f"There is no rule '{options.id}'{nearest(wanted, rules)}. 'calloutlint rulebook list' lists them."
         )
-    show_rule(rules[wanted], Screen(sys.stdout, plain=options.plain))
+    changes = [change for change in rulebook.changes if change.rule == wanted]
+    show_rule(rules[wanted], changes, Screen(sys.stdout, plain=options.plain))
     return 0
 
 
@@ -71,8 +74,14 @@ def run_facts(options: Namespace) -> int:
     from calloutlint.report.rules import show_facts
     from calloutlint.report.screen import Screen
     from calloutlint.rulebook.reference import facts
+    from calloutlint.rulebook.text_error import nearest
 
-    show_facts(facts(), Screen(sys.stdout, plain=options.plain))
+    groups = {group.subject: group for group in facts()}
+    wanted = options.subject
+    if wanted is not None and wanted not in groups:
+        raise CalloutlintError(f"There is no subject '{wanted}'{nearest(wanted, groups)}.")
+    shown = list(groups.values()) if wanted is None else [groups[wanted]]
+    show_facts(shown, Screen(sys.stdout, plain=options.plain))
     return 0
 
 

@@ -4,7 +4,7 @@ from collections.abc import Callable
 from pathlib import Path
 from typing import TYPE_CHECKING
 
-from calloutlint._whole import write_whole
+from calloutlint._whole import check_writable, write_whole
 from calloutlint.errors import CalloutlintError
 
 if TYPE_CHECKING:
@@ -28,6 +28,7 @@ def check_report_path(path: Path) -> None:
         raise CalloutlintError(f"No report can be written to '{path}': there is a folder of that name.")
     if not path.parent.is_dir():
         raise CalloutlintError(f"No report can be written to '{path}': there is no folder '{path.parent}'.")
+    check_writable(path)
 
 
 def write_report(path: Path, review: "Review") -> None:

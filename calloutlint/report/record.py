@@ -24,15 +24,24 @@ class Program(_Entry):
     version: str
 
 
+class HouseEntry(_Entry):
+    """A rule that a house sheet retired or amended."""
+
+    rule: str
+    done: str = Field(description="retired, or what stands for what was there: grade minor for major")
+    why: str
+
+
 class RulebookStamp(_Entry):
     """The rulebook that was applied: how many rules, and a digest of their sheets."""
 
     rules: int
     digest: str
+    house: list[HouseEntry] = Field(description="what house sheets changed in the rules, in their order")
 
 
 class Tally(_Entry):
-    """How many findings stand by grade; waived ones are not counted."""
+    """How many findings there are by grade."""
 
     critical: int
     major: int
@@ -44,7 +53,9 @@ class RedlineEntry(_Entry):
     """A proposed correction: the whole callout in canonical text."""
 
     text: str
-    proven: bool = Field(description="the corrected sheet, checked again, has lost the finding and gained none of its grade or worse")
+    proven: bool = Field(
+        description="the corrected sheet, checked again, has lost the finding and gained none as grave"
+    )
 
 
 class FindingEntry(_Entry):
@@ -62,7 +73,7 @@ class FindingEntry(_Entry):
     figures: dict[str, str] = Field(description="the numbers behind the message, by the name of the fact")
     assumed: str | None
     redline: RedlineEntry | None
-    waived: str | None = Field(description="why the finding is waived, null where it is not")
+    waived: None = Field(default=None, description="always null: this version reads no waivers")
 
 
 class DrawingEntry(_Entry):
@@ -101,7 +112,7 @@ def record(review: Review) -> Record:
     package = review.package
     return Record(
         program=Program(version=__version__),
-        rulebook=RulebookStamp(rules=review.rulebook_size, digest=review.rulebook_digest),
+        rulebook=_stamp(review),
         gate=_word(review.gate),
         tally=Tally(**{grade.word: review.count(grade) for grade in Grade}),
         drawings=[_drawing(drawing, review) for drawing in package.drawings],
@@ -118,6 +129,11 @@ def record_schema() -> dict[str, Any]:
     """The JSON schema of the record."""
     schema = Record.model_json_schema(mode="serialization")
     return {"$schema": "https://json-schema.org/draft/2020-12/schema", **schema, "title": "calloutlint record"}
+
+
+def _stamp(review: Review) -> RulebookStamp:
+    house = [HouseEntry(rule=each.rule, done=each.done, why=each.why) for each in review.house]
+    return RulebookStamp(rules=review.rulebook_size, digest=review.rulebook_digest, house=house)
 
 
 def _drawing(drawing: Drawing, review: Review) -> DrawingEntry:
@@ -158,7 +174,6 @@ def _finding(judged: Judged) -> FindingEntry:
         figures=dict(finding.figures),
         assumed=finding.assumed,
         redline=RedlineEntry(text=redline.text, proven=redline.proven) if redline else None,
-        waived=judged.waived,
     )
 
 

@@ -19,7 +19,7 @@ NOTHING_LEFT = "Nothing to write: no proven correction is left."
 
 def show_redlines(review: Review, screen: Screen) -> None:
     """Print each finding that has a correction with the callout it is about, and how many are proven."""
-    correctable = [judged for judged in review.findings if judged.redline and judged.waived is None]
+    correctable = [judged for judged in review.findings if judged.redline]
     for drawing in review.package.drawings:
         here = [judged for judged in correctable if judged.finding.drawing is drawing]
         if here:
@@ -28,13 +28,12 @@ def show_redlines(review: Review, screen: Screen) -> None:
             show_callout(callout, list(group), screen)
     screen.rule(ROLES.quiet)
     proven = sum(bool(judged.redline and judged.redline.proven) for judged in correctable)
-    standing = sum(judged.waived is None for judged in review.findings)
-    told = [
-        counted(standing, "finding"),
-        counted(len(correctable), "correction"),
-        f"{proven or 'none'} of them proven.",
-    ]
-    screen.paragraph(", ".join(told), ROLES.heading, indent=1)
+    told = f"{counted(len(review.findings), 'finding').capitalize()}"
+    if correctable:
+        told += f", {counted(len(correctable), 'correction')}, {proven or 'none'} of them proven"
+    elif review.findings:
+        told += ", none with a correction"
+    screen.paragraph(f"{told}.", ROLES.heading, indent=1)
     if proven:
         screen.paragraph("'redline --incorporate' writes the proven ones into the sheets.", indent=1)
 

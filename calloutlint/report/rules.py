@@ -8,6 +8,7 @@ from calloutlint.report.screen import Screen
 from calloutlint.report.styles import ROLES
 from calloutlint.report.words import counted
 from calloutlint.rulebook.finding import GRADES
+from calloutlint.rulebook.house_change import HouseChange
 from calloutlint.rulebook.proof import Proof
 from calloutlint.rulebook.reference import FactLine, SubjectFacts
 from calloutlint.rulebook.rule import Rule
@@ -35,11 +36,13 @@ def show_list(rulebook: Rulebook, screen: Screen) -> None:
     screen.paragraph(f"{counted(len(rulebook.rules), 'rule')}, digest {rulebook.digest[:12]}", ROLES.quiet)
 
 
-def show_rule(rule: Rule, screen: Screen) -> None:
-    """Print a rule as its sheet states it, with its cases."""
+def show_rule(rule: Rule, changes: Sequence[HouseChange], screen: Screen) -> None:
+    """Print a rule with its cases, and what house sheets changed in it."""
     sheet = rule.sheet
     screen.paragraph(sheet.title, ROLES.title, head=Text(f"{rule.id}  ", ROLES.rule))
     screen.line()
+    for change in changes:
+        _entry("house", f"{change.told} (from {change.file})", screen)
     _entry("grade", sheet.grade, screen)
     _entry("examines", f"every {sheet.examine}", screen)
     _entry("holds under", ", ".join(sheet.holds), screen)

@@ -57,6 +57,7 @@ class Screen:
         opening = Text(" " * indent).append_text(head or Text())
         hang = cell_len(opening.plain)
         if self.width - hang < NARROWEST_TEXT and text:
+            opening.rstrip()
             self.line(opening)
             hang = min(indent + 3, self.width - NARROWEST_TEXT)
             opening = Text(" " * hang)

@@ -24,11 +24,10 @@ INDENT = 6
 
 
 def show_review(review: Review, screen: Screen) -> None:
-    """Print a review: each drawing, then what stands on no drawing, what is waived, and the tally."""
-    standing = [judged for judged in review.findings if judged.waived is None]
+    """Print a review: each drawing, then what stands on no drawing, and the tally."""
     for drawing in review.package.drawings:
-        _show_drawing(drawing, [j for j in standing if j.finding.drawing is drawing], screen)
-    loose = [judged for judged in standing if judged.finding.drawing is None]
+        _show_drawing(drawing, [j for j in review.findings if j.finding.drawing is drawing], screen)
+    loose = [judged for judged in review.findings if judged.finding.drawing is None]
     if loose:
         _show_heading(f"Package {review.package.name}", ["what stands on no single drawing"], screen)
         _show_findings(loose, {}, screen)

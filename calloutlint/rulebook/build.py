@@ -5,8 +5,8 @@ from dataclasses import dataclass, field
 from typing import TypeVar
 
 from calloutlint.errors import RuleSheetError
-from calloutlint.facts.subjects import SUBJECTS
 from calloutlint.facts.view import View
+from calloutlint.facts.views.subjects import SUBJECTS
 from calloutlint.rulebook.changes import correction
 from calloutlint.rulebook.code import Code
 from calloutlint.rulebook.correction import Correction

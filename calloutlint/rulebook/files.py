@@ -14,16 +14,21 @@ def read_texts(places: Sequence[Place]) -> list[SheetText]:
     """Name and text of every .toml file in some folders and the folders in them, by folder, then by name.
 
     Raises:
-        CalloutlintError: there is no such folder.
+        CalloutlintError: there is no such folder, or it holds no rule sheet.
         RuleSheetError: a file cannot be read or is not UTF-8.
     """
     return [(str(file), _text(file)) for place in places for file in _sheet_files(place)]
 
 
 def _sheet_files(place: Place) -> list[Place]:
+    if place.is_file():
+        raise CalloutlintError(f"{place}: this is a file; name its folder, whose rule sheets are read together")
     if not place.is_dir():
         raise CalloutlintError(f"{place}: there is no such folder of rule sheets")
-    return list(_found(place))
+    found = list(_found(place))
+    if not found:
+        raise CalloutlintError(f"{place}: there is no rule sheet (.toml) in this folder")
+    return found
 
 
 def _found(place: Place) -> Iterator[Place]:

@@ -5,7 +5,7 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 from calloutlint.errors import CalloutlintError
-from calloutlint.facts.subjects import subjects, walk
+from calloutlint.facts.views.subjects import subjects, walk
 from calloutlint.model.drawing import Drawing, Package
 from calloutlint.reading.sheet import parse_sheet
 from calloutlint.rulebook.finding import Finding
@@ -45,7 +45,7 @@ def prove(rulebook: Rulebook, ids: Sequence[str] = ()) -> list[Proof]:
 
 def prove_rule(rule: Rule, known: dict[str, Rule]) -> Proof:
     """Runs the cases of one rule; `known` are the rules that it may yield to, by id."""
-    failures = list(_shortcomings(rule, known))
+    failures = list(_shortcomings(rule))
     beside = [known[id_] for id_ in rule.yields_to if id_ in known]
     for number, case in enumerate(rule.sheet.case, start=1):
         name = f"case {number}" + (f" ({case.note})" if case.note else "")
@@ -53,15 +53,12 @@ def prove_rule(rule: Rule, known: dict[str, Rule]) -> Proof:
     return Proof(rule.id, len(rule.sheet.case), tuple(failures))
 
 
-def _shortcomings(rule: Rule, known: dict[str, Rule]) -> Iterator[str]:
+def _shortcomings(rule: Rule) -> Iterator[str]:
     cases = rule.sheet.case
     found = sum(bool(case.finds) for case in cases)
     if found < CASES_FOUND or len(cases) - found < CASES_CLEAN:
         need = f"{CASES_FOUND} that are found and {CASES_CLEAN} that are clean"
         yield f"a sheet needs at least {need}; this one has {found} and {len(cases) - found}"
-    for id_ in rule.yields_to:
-        if id_ not in known:
-            yield f"it yields to {id_}, which is no rule"
 
 
 def _run(rule: Rule, beside: list[Rule], case: Case) -> Iterator[str]:

@@ -3,8 +3,8 @@
 from collections.abc import Mapping
 from dataclasses import dataclass
 
-from calloutlint.facts.subjects import SUBJECTS
 from calloutlint.facts.view import View
+from calloutlint.facts.views.subjects import SUBJECTS
 from calloutlint.rulebook.kinds import ANGLE, LENGTH, Member, Thing, members, single, vocabulary
 
 

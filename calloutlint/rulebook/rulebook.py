@@ -10,11 +10,12 @@ from pathlib import Path
 
 from calloutlint._resources import folder, read_text
 from calloutlint._saved import kept
-from calloutlint.facts.subjects import subjects, walk
+from calloutlint.facts.views.subjects import subjects, walk
 from calloutlint.model.drawing import Package
 from calloutlint.rulebook.engine import Engine, ordered
 from calloutlint.rulebook.files import SheetText, read_texts
 from calloutlint.rulebook.finding import Finding
+from calloutlint.rulebook.house_change import HouseChange
 from calloutlint.rulebook.rule import Rule
 
 CODE_FOLDERS = ("facts", "model", "rulebook")
@@ -26,6 +27,7 @@ class Rulebook:
 
     rules: tuple[Rule, ...]
     as_written: tuple[Rule, ...] = ()
+    changes: tuple[HouseChange, ...] = ()
 
     @cached_property
     def digest(self) -> str:
@@ -65,8 +67,9 @@ def _built(texts: Sequence[SheetText]) -> Rulebook:
     sheets = read_sheets(texts)
     written = filed_rules(sheets)
     in_force = amended(written, sheets)
-    rules = build_rules(in_force)
-    rulebook = Rulebook(rules, rules if in_force == written else build_rules(written))
+    rules = build_rules(in_force.rules)
+    as_written = build_rules(written) if in_force.changes else rules
+    rulebook = Rulebook(rules, as_written, in_force.changes)
     _ = rulebook.digest  # kept with it
     return rulebook
 
