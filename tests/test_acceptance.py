@@ -6,8 +6,8 @@ from math import erf, exp, hypot, sqrt
 
 import pytest
 
-from calloutlint.facts.acceptance import Spread, acceptance, just_capable, share_accepted
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance
+from calloutlint.facts.formulas.acceptance import Spread, acceptance, just_capable, share_accepted
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance
 from calloutlint.model.frame import Modifier
 
 D = Decimal

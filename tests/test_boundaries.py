@@ -4,7 +4,7 @@ from decimal import Decimal
 
 import pytest
 
-from calloutlint.facts.boundaries import (
+from calloutlint.facts.formulas.boundaries import (
     FeatureOfSize,
     GeometricTolerance,
     allowed,
@@ -19,7 +19,7 @@ from calloutlint.facts.boundaries import (
     wall_between,
     wall_left,
 )
-from calloutlint.facts.coordinates import coordinate, diametral
+from calloutlint.facts.formulas.coordinates import coordinate, diametral
 from calloutlint.model.frame import Modifier
 
 D = Decimal

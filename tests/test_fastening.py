@@ -4,8 +4,8 @@ from decimal import Decimal
 
 import pytest
 
-from calloutlint.facts import fastening
-from calloutlint.facts.boundaries import GeometricTolerance
+from calloutlint.facts.formulas import fastening
+from calloutlint.facts.formulas.boundaries import GeometricTolerance
 from calloutlint.model.frame import Modifier
 from calloutlint.trade.drills import drilled_tolerance, next_larger_stock
 from calloutlint.units import Unit

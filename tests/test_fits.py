@@ -4,7 +4,7 @@ from decimal import Decimal
 
 import pytest
 
-from calloutlint.facts.fits import FitKind, coded_fit, fit, states_class
+from calloutlint.facts.formulas.fits import FitKind, coded_fit, fit, states_class
 from calloutlint.model.size import Deviations, FitCode, Limits, PlusMinus
 from calloutlint.model.values import Value
 from calloutlint.trade.iso286 import LimitDeviations

@@ -59,7 +59,10 @@ CORRECTIONS = [
     ("SIZE-10", INCH + "4) 4 HOLES ⌀.281 +.007 -.002 THRU", "4X ⌀.281 +.007 -.002 THRU"),
     (
         "FIT-06",
-        INCH + "joint: cover = 4 with .250-20 UNC screw\n" + DATUMS + "4) 4X ⌀.281 +.007 -.002 THRU\n   ⌖ | ⌀.014 | A | B | C",
+        INCH
+        + "joint: cover = 4 with .250-20 UNC screw\n"
+        + DATUMS
+        + "4) 4X ⌀.281 +.007 -.002 THRU\n   ⌖ | ⌀.014 | A | B | C",
         "⌖ | ⌀.014 Ⓜ | A | B | C",
     ),
 ]

@@ -1,4 +1,4 @@
-"""Which sheets of a package are one drawing, and that no arrangement of them is more than the check can bear."""
+"""Which sheets of a package are one drawing, and that the same drawing twice is borne."""
 
 import pytest
 

@@ -240,6 +240,7 @@ def test_standards_and_tolerances_may_take_several_lines() -> None:
 def test_a_value_too_long_to_mean_anything_is_not_read(key: str) -> None:
     (line,) = block_of(f"{key}: " + "4 mm + " * 100 + "x").lines
     assert (line.known, line.reason) == (False, f"701 characters; at most 500 are read as {key}")
+    assert (len(line.text), len(line.value)) == (61, 701)
 
 
 def test_notes_and_titles_may_be_long() -> None:

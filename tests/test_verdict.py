@@ -4,8 +4,8 @@ from decimal import Decimal
 
 import pytest
 
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance, virtual_condition
-from calloutlint.facts.verdict import Decision, Verdict, bonus_table, decide
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance, virtual_condition
+from calloutlint.facts.formulas.verdict import Decision, Verdict, bonus_table, decide
 from calloutlint.model.frame import Modifier
 
 D = Decimal

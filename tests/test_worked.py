@@ -6,8 +6,8 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance
-from calloutlint.facts.worked import (
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance
+from calloutlint.facts.formulas.worked import (
     Held,
     Worked,
     find_fastener,

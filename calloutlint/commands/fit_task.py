@@ -6,11 +6,11 @@ from decimal import Decimal
 
 from calloutlint.callouts.write import Style, write_part
 from calloutlint.errors import CalloutlintError
-from calloutlint.facts.acceptance import Spread
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance
-from calloutlint.facts.fastener import FastenerView, basic_major, stated_limits, unit_of
-from calloutlint.facts.onward import amount_in
-from calloutlint.facts.worked import Held, Worked, find_fastener, find_hole, find_position, settled
+from calloutlint.facts.formulas.acceptance import Spread
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance
+from calloutlint.facts.formulas.worked import Held, Worked, find_fastener, find_hole, find_position, settled
+from calloutlint.facts.sizes import amount_in, basic_major, stated_limits, unit_of
+from calloutlint.facts.views.fastener import FastenerView
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.frame import Modifier
 from calloutlint.model.size import SizeForm

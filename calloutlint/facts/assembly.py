@@ -4,8 +4,7 @@ import re
 from collections.abc import Iterator
 from dataclasses import dataclass, replace
 
-from calloutlint.facts.fastener import stated_limits
-from calloutlint.facts.feature import leading_size
+from calloutlint.facts.sizes import leading_size, stated_limits
 from calloutlint.model.callout import Callout, FastenerNote
 from calloutlint.model.drawing import Drawing, Package
 from calloutlint.model.fastener import Fastener, Hold, HoleRef, Joint

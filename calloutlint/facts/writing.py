@@ -6,7 +6,7 @@ ASME Y14.5, the subjects of millimetre and decimal inch dimensioning and of the 
 from collections.abc import Iterator
 from decimal import Decimal
 
-from calloutlint.facts.size import spelled, written_values
+from calloutlint.facts.sizes import spelled, written_values
 from calloutlint.model.callout import Callout
 from calloutlint.model.size import Depth, Deviations, Limits, Size, SizeForm, SizeStatus
 from calloutlint.model.thread import Thread

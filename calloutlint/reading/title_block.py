@@ -14,6 +14,7 @@ from calloutlint.units import Unit
 
 LONGEST_VALUE = 500
 """Characters of a value that is read for what it means; no title block has as many."""
+_SHOWN = 60
 
 
 @dataclass(slots=True)
@@ -59,10 +60,10 @@ def _read_line(block: TitleBlock, pair: SheetLine) -> SheetLine:
     if pair.key not in REPEATABLE and block.texts.setdefault(pair.key, pair.value) != pair.value:
         return replace(pair, known=False, reason=f"{pair.key!r} is stated a second time; the first is used")
     if pair.key in _READ_FOR_MEANING and len(pair.value) > LONGEST_VALUE:
-        reason: str | None = f"{len(pair.value):,} characters; at most {LONGEST_VALUE} are read as {pair.key}"
-    else:
-        reason = _TAKE[pair.key](block, pair) if pair.key in _TAKE else None
-    return replace(pair, known=False, reason=reason) if reason else pair
+        reason = f"{len(pair.value):,} characters; at most {LONGEST_VALUE} are read as {pair.key}"
+        return replace(pair, text=pair.text[:_SHOWN] + "…", known=False, reason=reason)
+    refused = _TAKE[pair.key](block, pair) if pair.key in _TAKE else None
+    return replace(pair, known=False, reason=refused) if refused else pair
 
 
 def _take_standard(block: TitleBlock, pair: SheetLine) -> None:

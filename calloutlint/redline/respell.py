@@ -7,7 +7,7 @@ from dataclasses import replace
 from decimal import Decimal
 from typing import Any
 
-from calloutlint.facts.size import written_values
+from calloutlint.facts.sizes import written_values
 from calloutlint.model.callout import Callout
 from calloutlint.model.size import Count, Deviations, Limits, Size, SizeForm, SizeStatus
 from calloutlint.model.thread import Thread

@@ -3,12 +3,12 @@
 from dataclasses import dataclass, replace
 from decimal import Decimal
 
-from calloutlint.facts.acceptance import Acceptance, Spread, acceptance, just_capable
-from calloutlint.facts.boundaries import GeometricTolerance, gauge_size
-from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.fastening import bearing_left
-from calloutlint.facts.verdict import BonusRow, Decision, Verdict, bonus_table, decide
-from calloutlint.facts.worked import Sought, Worked, largest_screws
+from calloutlint.facts.formulas.acceptance import Acceptance, Spread, acceptance, just_capable
+from calloutlint.facts.formulas.boundaries import GeometricTolerance, gauge_size
+from calloutlint.facts.formulas.fastening import bearing_left
+from calloutlint.facts.formulas.verdict import BonusRow, Decision, Verdict, bonus_table, decide
+from calloutlint.facts.formulas.worked import Sought, Worked, largest_screws
+from calloutlint.facts.views.fastener import FastenerView
 from calloutlint.model.frame import Modifier
 from calloutlint.units import Unit
 

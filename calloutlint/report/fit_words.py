@@ -2,8 +2,8 @@
 
 from decimal import Decimal
 
-from calloutlint.facts.verdict import Decision
-from calloutlint.facts.worked import Held, Sought, find_hole
+from calloutlint.facts.formulas.verdict import Decision
+from calloutlint.facts.formulas.worked import Held, Sought, find_hole
 from calloutlint.model.frame import Modifier
 from calloutlint.report.fit_data import FitSheet, Measured
 from calloutlint.rulebook.figures import written

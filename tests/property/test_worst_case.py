@@ -12,14 +12,14 @@ from fractions import Fraction
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from calloutlint.facts.boundaries import (
+from calloutlint.facts.formulas.boundaries import (
     FeatureOfSize,
     GeometricTolerance,
     allowed,
     inner_boundary,
     outer_boundary,
 )
-from calloutlint.facts.fastening import (
+from calloutlint.facts.formulas.fastening import (
     fixed_hole,
     fixed_spare,
     fixing_demand,

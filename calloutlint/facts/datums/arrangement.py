@@ -107,9 +107,7 @@ def _agrees(letter: str, placed: Arrangement, relations: tuple[Relation, ...]) -
     )
 
 
-def _together(
-    letter: str, reference: Reference, placed: Arrangement, relations: tuple[Relation, ...]
-) -> bool:
+def _together(letter: str, reference: Reference, placed: Arrangement, relations: tuple[Relation, ...]) -> bool:
     """Whether members of a common datum of one kind stand in one direction, unless callouts say otherwise."""
     place = placed[letter]
     told = {other for r in relations if letter in (r.letter, r.to) for other in (r.letter, r.to)}

@@ -6,15 +6,23 @@ from collections.abc import Iterator
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.feature import FeatureView
-from calloutlint.facts.fitted import FitView, MatingView, mating_of
-from calloutlint.facts.frame import FrameView
-from calloutlint.facts.hole import HoleView
-from calloutlint.facts.marks import DefinitionView, GapView, SymbolView, TargetView, UnreadView, gaps, symbols
-from calloutlint.facts.size import Role, SizeView
-from calloutlint.facts.step import StepView
-from calloutlint.facts.thread import ThreadView
 from calloutlint.facts.view import View, fact
+from calloutlint.facts.views.feature import FeatureView
+from calloutlint.facts.views.fit import FitView, MatingView, mating_of
+from calloutlint.facts.views.frame import FrameView
+from calloutlint.facts.views.hole import HoleView
+from calloutlint.facts.views.marks import (
+    DefinitionView,
+    GapView,
+    SymbolView,
+    TargetView,
+    UnreadView,
+    gaps,
+    symbols,
+)
+from calloutlint.facts.views.size import Role, SizeView
+from calloutlint.facts.views.step import StepView
+from calloutlint.facts.views.thread import ThreadView
 from calloutlint.facts.writing import bare_points, uneven, zero_led
 from calloutlint.model.callout import Callout, Meaning, Part
 from calloutlint.model.drawing import Drawing
@@ -24,7 +32,7 @@ from calloutlint.model.hole import HoleStep, StepKind
 from calloutlint.model.size import Depth, Size
 
 if TYPE_CHECKING:
-    from calloutlint.facts.drawing import DrawingView, StandardView
+    from calloutlint.facts.views.drawing import DrawingView, StandardView
 
 
 class CalloutView(View):

@@ -5,26 +5,17 @@ from __future__ import annotations
 from decimal import Decimal
 from typing import TYPE_CHECKING, Any
 
+from calloutlint.facts.sizes import amount_in
 from calloutlint.facts.view import View, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing
 from calloutlint.model.values import Value
-from calloutlint.units import Unit, convert
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
-    from calloutlint.facts.drawing import DrawingView, StandardView
-    from calloutlint.facts.feature import FeatureView
-    from calloutlint.facts.hole import HoleView
-
-
-def amount_in(value: Value | None, unit: Unit | None) -> Decimal | None:
-    """The amount of a drawn value in `unit`; as it stands where either unit is not known, None for None."""
-    if value is None:
-        return None
-    if value.unit is None or unit is None or value.unit is Unit.DEGREE:
-        return value.amount
-    return convert(value.amount, value.unit, unit)
+    from calloutlint.facts.views.callout import CalloutView
+    from calloutlint.facts.views.drawing import DrawingView, StandardView
+    from calloutlint.facts.views.feature import FeatureView
+    from calloutlint.facts.views.hole import HoleView
 
 
 class PartView(View):

@@ -2,60 +2,15 @@
 
 from __future__ import annotations
 
-from calloutlint.facts.onward import PartView
+from calloutlint.facts.sides import side_by_hole, side_by_letters, side_by_words
+from calloutlint.facts.sizes import leading_size
 from calloutlint.facts.view import fact, kept
+from calloutlint.facts.views.part import PartView
 from calloutlint.model.callout import Callout, Meaning
-from calloutlint.model.hole import StepKind
-from calloutlint.model.size import Depth, Size, SizeForm, Through
-from calloutlint.model.thread import Thread
+from calloutlint.model.size import SizeForm
 
-INTERNAL_WORDS = {Meaning.HOLE, Meaning.SLOT, Meaning.GROOVE, Meaning.BORE}
-EXTERNAL_WORDS = {Meaning.SHAFT, Meaning.PIN, Meaning.BOSS, Meaning.TAB}
 SURFACE_WORDS = {Meaning.SURFACE, Meaning.FACE}
 SPHERICAL = {SizeForm.SPHERICAL_DIAMETER, SizeForm.SPHERICAL_RADIUS}
-
-
-def leading_size(callout: Callout) -> Size | None:
-    """The size that says what the feature is: the first that is no angle."""
-    return next((size for size in callout.sizes if size.form is not SizeForm.ANGLE), None)
-
-
-def side_by_words(callout: Callout) -> bool | None:
-    """True internal, False external, None not said, by the words of the callout."""
-    meanings = callout.meanings
-    if meanings & INTERNAL_WORDS:
-        return None if meanings & EXTERNAL_WORDS else True
-    return False if meanings & EXTERNAL_WORDS else None
-
-
-def side_by_hole(callout: Callout) -> bool | None:
-    """True where a diameter goes through, has a depth, or has hole steps; else None."""
-    sunk = any(step.kind is not StepKind.TAP for step in callout.steps)
-    size = leading_size(callout)
-    bored = size is not None and size.form is SizeForm.DIAMETER and isinstance(size.extent, Through | Depth)
-    return True if bored or sunk else None
-
-
-def side_by_letters(callout: Callout) -> bool | None:
-    """True internal, False external, None not said, by thread class and fit letter."""
-    for thread in callout.threads:
-        side = side_of_thread(thread)
-        if side is not None:
-            return side
-    size = leading_size(callout)
-    if size is None or size.fit is None:
-        return None
-    return size.fit.letters[0].isupper()
-
-
-def side_of_thread(thread: Thread) -> bool | None:
-    """True internal, False external by the class: 2B, 6H inside; 2A, 6g outside; None where none is stated."""
-    letters = [char for char in thread.class_ or "" if char.isalpha()]
-    if not letters:
-        return None
-    if thread.class_ in {"1A", "2A", "3A", "1B", "2B", "3B"}:
-        return letters[0] == "B"
-    return letters[0].isupper()
 
 
 class FeatureView(PartView):

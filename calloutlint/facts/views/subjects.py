@@ -2,20 +2,20 @@
 
 from collections.abc import Iterator
 
-from calloutlint.facts.callout import CalloutView
-from calloutlint.facts.datum import DatumView
-from calloutlint.facts.drawing import DrawingView, LineView
-from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.fixing import FixingView
-from calloutlint.facts.frame import FrameView
-from calloutlint.facts.joint import JointView, MemberView
-from calloutlint.facts.marks import DefinitionView, GapView, SymbolView, TargetView, UnreadView
-from calloutlint.facts.package import PackageView
-from calloutlint.facts.passage import PassageView
-from calloutlint.facts.size import SizeView
-from calloutlint.facts.step import StepView
-from calloutlint.facts.thread import ThreadView
 from calloutlint.facts.view import View
+from calloutlint.facts.views.callout import CalloutView
+from calloutlint.facts.views.datum import DatumView
+from calloutlint.facts.views.drawing import DrawingView, LineView
+from calloutlint.facts.views.fastener import FastenerView
+from calloutlint.facts.views.fixing import FixingView
+from calloutlint.facts.views.frame import FrameView
+from calloutlint.facts.views.joint import JointView, MemberView
+from calloutlint.facts.views.marks import DefinitionView, GapView, SymbolView, TargetView, UnreadView
+from calloutlint.facts.views.package import PackageView
+from calloutlint.facts.views.passage import PassageView
+from calloutlint.facts.views.size import SizeView
+from calloutlint.facts.views.step import StepView
+from calloutlint.facts.views.thread import ThreadView
 from calloutlint.model.drawing import Package
 
 SUBJECTS: dict[str, type[View]] = {

@@ -4,16 +4,16 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
-from calloutlint.facts import fastening
-from calloutlint.facts.onward import PartView
-from calloutlint.facts.step import StepView
+from calloutlint.facts.formulas import fastening
 from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.part import PartView
+from calloutlint.facts.views.step import StepView
 from calloutlint.model.hole import StepKind
 
 if TYPE_CHECKING:
     from decimal import Decimal
 
-    from calloutlint.facts.fastener import FastenerView
+    from calloutlint.facts.views.fastener import FastenerView
 
 SEATS = {StepKind.COUNTERBORE, StepKind.SPOTFACE}
 

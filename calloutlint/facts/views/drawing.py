@@ -6,9 +6,9 @@ import re
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.callout import CalloutView
-from calloutlint.facts.datum_index import DatumIndex
+from calloutlint.facts.datums.index import DatumIndex
 from calloutlint.facts.view import View, fact, kept
+from calloutlint.facts.views.callout import CalloutView
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, SheetLine, Standard, System
 from calloutlint.model.size import Size
@@ -16,7 +16,7 @@ from calloutlint.trade import iso286
 from calloutlint.units import Unit, convert
 
 if TYPE_CHECKING:
-    from calloutlint.facts.package import PackageView
+    from calloutlint.facts.views.package import PackageView
 
 CURRENT_ASME = 2018
 

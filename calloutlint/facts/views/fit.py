@@ -8,11 +8,12 @@ from dataclasses import dataclass
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.feature import leading_size, side_by_hole, side_by_words
-from calloutlint.facts.fits import Fit, FitKind, states_class
-from calloutlint.facts.onward import PartView
+from calloutlint.facts.formulas.fits import Fit, FitKind, states_class
+from calloutlint.facts.sides import side_by_hole, side_by_words
+from calloutlint.facts.sizes import leading_size
 from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.fastener import FastenerView
+from calloutlint.facts.views.part import PartView
 from calloutlint.model.callout import FastenerNote, Meaning, Words
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.size import FitCode, Limits, Size
@@ -20,7 +21,7 @@ from calloutlint.trade import iso286
 from calloutlint.units import Unit, convert
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
+    from calloutlint.facts.views.callout import CalloutView
 
 LARGEST_MM = Decimal(3150)
 PLACES = {Unit.MM: Decimal("0.001"), Unit.INCH: Decimal("0.0001")}

@@ -3,60 +3,23 @@
 from __future__ import annotations
 
 import re
-from dataclasses import replace
 from decimal import Decimal
 from functools import cached_property
 
-from calloutlint.facts.size import bounds, written_values
+from calloutlint.facts.sizes import basic_major, stated_limits, unit_of
 from calloutlint.facts.view import Length, View, fact
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing
 from calloutlint.model.fastener import Fastener, Head
-from calloutlint.model.size import Size
-from calloutlint.model.thread import Thread
 from calloutlint.model.values import Value
-from calloutlint.trade import iso286
 from calloutlint.trade.clearance import ClearanceSizes, clearance_sizes
 from calloutlint.trade.heads import HeadSize, room_for, seat_of
-from calloutlint.trade.inches import nominal_size
 from calloutlint.trade.pins import PinLimits, dowel_limits
 from calloutlint.trade.threads import series_has
 from calloutlint.units import Unit, convert
 
 _BESIDE = re.compile(r"\b(?:WASHERS?|NUTS?)\b", re.IGNORECASE)
 COUNTERSUNK = {Head.SOCKET_COUNTERSUNK, Head.FLAT}
-
-
-def stated_limits(pin: Size) -> tuple[Decimal, Decimal] | None:
-    """Smallest and largest size by its own tolerance or fit code, in its own unit; None where it has neither.
-
-    General tolerances are not looked at. Source of fit codes: ISO 286-1.
-    """
-    unit = unit_of(pin)
-    if pin.tolerance is not None:
-        return bounds(pin, unit)
-    if pin.fit is None or pin.nominal is None or unit not in {Unit.MM, Unit.INCH}:
-        return None
-    nominal = convert(pin.nominal.amount, unit, Unit.MM)
-    found = iso286.limits(nominal, pin.fit)
-    if found is None:
-        return None
-    lower, upper = nominal + found.lower, nominal + found.upper
-    return convert(lower, Unit.MM, unit), convert(upper, Unit.MM, unit)
-
-
-def unit_of(size: Size) -> Unit | None:
-    """The unit that a size is written in; None where its drawing states none."""
-    return next((value.unit for value in written_values(size)), None)
-
-
-def basic_major(thread: Thread) -> Value | None:
-    """Basic major diameter: of an inch size rounded to three places (`.312`), the exact one (`.3125`)."""
-    diameter = thread.diameter
-    if diameter is None or diameter.unit is not Unit.INCH:
-        return diameter
-    named = nominal_size(diameter.amount)
-    return replace(diameter, amount=named.diameter) if named else diameter
 
 
 class FastenerView(View):

@@ -4,13 +4,13 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.datum import DatumView
 from calloutlint.facts.datums.held import left
 from calloutlint.facts.datums.location import Unlocated
 from calloutlint.facts.datums.words import in_words
-from calloutlint.facts.onward import PartView
-from calloutlint.facts.tolerance import MATERIAL, ToleranceView
 from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.datum import DatumView
+from calloutlint.facts.views.part import PartView
+from calloutlint.facts.views.tolerance import MATERIAL, ToleranceView
 from calloutlint.model.callout import Meaning
 from calloutlint.model.frame import (
     Characteristic,
@@ -23,7 +23,7 @@ from calloutlint.model.frame import (
 from calloutlint.model.size import SizeModifier
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
+    from calloutlint.facts.views.callout import CalloutView
 
 FORM = {
     Characteristic.STRAIGHTNESS,

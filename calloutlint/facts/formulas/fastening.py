@@ -9,7 +9,7 @@ from collections.abc import Callable, Iterable
 from decimal import Decimal
 from typing import Protocol
 
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance, inner_boundary
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance, inner_boundary
 
 
 def floating_tolerance(hole: Decimal, fastener: Decimal) -> Decimal:

@@ -7,17 +7,17 @@ from typing import TYPE_CHECKING, Any
 
 from calloutlint.facts.datums.completeness import TargetFault
 from calloutlint.facts.datums.control import Uncontrolled
-from calloutlint.facts.onward import PartView
 from calloutlint.facts.symbol_names import drawn
 from calloutlint.facts.view import fact
+from calloutlint.facts.views.part import PartView
 from calloutlint.model.callout import DatumFeature, DatumTarget, TargetKind, Unread
 from calloutlint.model.frame import Modifier, ModifierUse, Scope, ScopeKind
 from calloutlint.model.size import Depth, Size
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
-    from calloutlint.facts.frame import FrameView
-    from calloutlint.facts.size import SizeView
+    from calloutlint.facts.views.callout import CalloutView
+    from calloutlint.facts.views.frame import FrameView
+    from calloutlint.facts.views.size import SizeView
 
 
 MOST_EXPECTED = 2

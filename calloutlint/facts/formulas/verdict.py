@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from decimal import Decimal
 from enum import StrEnum
 
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance, allowed, bonus
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance, allowed, bonus
 from calloutlint.model.frame import Modifier
 
 _STEPS = range(5, 13)

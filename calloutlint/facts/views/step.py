@@ -4,8 +4,8 @@ from __future__ import annotations
 
 from decimal import Decimal
 
-from calloutlint.facts.onward import PartView
 from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.part import PartView
 from calloutlint.model.hole import HoleStep, StepKind
 from calloutlint.model.size import Size, SizeForm
 

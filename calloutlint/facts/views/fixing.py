@@ -5,11 +5,11 @@ from __future__ import annotations
 from decimal import ROUND_CEILING, Decimal
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.fastener import FastenerView, basic_major
-from calloutlint.facts.located import is_located, widest_position
-from calloutlint.facts.onward import PartView, amount_in
-from calloutlint.facts.size import bounds
+from calloutlint.facts.sizes import amount_in, basic_major, bounds
 from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.fastener import FastenerView
+from calloutlint.facts.views.located import is_located, widest_position
+from calloutlint.facts.views.part import PartView
 from calloutlint.model.callout import Callout
 from calloutlint.model.fastener import Hold
 from calloutlint.model.frame import Modifier
@@ -19,9 +19,9 @@ from calloutlint.trade.threads import screws_into
 from calloutlint.units import Unit
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
-    from calloutlint.facts.frame import FrameView
-    from calloutlint.facts.joint import JointView
+    from calloutlint.facts.views.callout import CalloutView
+    from calloutlint.facts.views.frame import FrameView
+    from calloutlint.facts.views.joint import JointView
 
 HEIGHTS = {Unit.INCH: Decimal("0.001"), Unit.MM: Decimal("0.01")}
 

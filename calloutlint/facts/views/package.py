@@ -5,14 +5,14 @@ from __future__ import annotations
 from collections.abc import Iterator
 
 from calloutlint.facts.assembly import Assembly
-from calloutlint.facts.callout import CalloutView
-from calloutlint.facts.datum_index import DatumIndex
+from calloutlint.facts.datums.index import DatumIndex
 from calloutlint.facts.datums.scheme import sheets_of
-from calloutlint.facts.drawing import DrawingView
-from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.joint import JointView, MemberView
-from calloutlint.facts.passage import PassageView
 from calloutlint.facts.view import View, fact, kept
+from calloutlint.facts.views.callout import CalloutView
+from calloutlint.facts.views.drawing import DrawingView
+from calloutlint.facts.views.fastener import FastenerView
+from calloutlint.facts.views.joint import JointView, MemberView
+from calloutlint.facts.views.passage import PassageView
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing, Package
 

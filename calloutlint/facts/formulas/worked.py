@@ -1,6 +1,6 @@
 """One joint worked out: from any two of fastener, hole and position tolerance the third, or all three judged.
 
-All lengths are exact decimals in one unit. Sources: ASME Y14.5, Appendix B, as `facts.fastening` names them.
+All lengths are exact decimals in one unit. Sources: ASME Y14.5, Appendix B, as `facts.formulas.fastening` names them.
 """
 
 from collections.abc import Iterator
@@ -8,8 +8,8 @@ from dataclasses import dataclass, replace
 from decimal import Decimal
 from enum import StrEnum
 
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance, inner_boundary
-from calloutlint.facts.fastening import Drill, drill_for_boundary, fixing_demand
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance, inner_boundary
+from calloutlint.facts.formulas.fastening import Drill, drill_for_boundary, fixing_demand
 from calloutlint.trade.clearance import clearance_sizes
 from calloutlint.trade.drills import drilled_tolerance, next_larger_stock
 from calloutlint.trade.inches import named_size

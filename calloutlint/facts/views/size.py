@@ -6,8 +6,9 @@ from decimal import Decimal
 from enum import StrEnum
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.onward import PartView, amount_in
+from calloutlint.facts.sizes import SIGNS, amount_in, bounds, deviations
 from calloutlint.facts.view import Length, fact, kept
+from calloutlint.facts.views.part import PartView
 from calloutlint.model.drawing import GeneralTolerances
 from calloutlint.model.size import Deviations, Limits, PlusMinus, Size, SizeForm, SizeModifier, SizeStatus
 from calloutlint.model.values import Value
@@ -15,8 +16,8 @@ from calloutlint.trade.general_tolerances import covers_angles, general_toleranc
 from calloutlint.units import Unit
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
-    from calloutlint.facts.fitted import FitView, MatingView
+    from calloutlint.facts.views.callout import CalloutView
+    from calloutlint.facts.views.fit import FitView, MatingView
 
 
 class Role(StrEnum):
@@ -26,64 +27,6 @@ class Role(StrEnum):
     STEP = "step"
     DEPTH = "depth"
     STEP_ANGLE = "step angle"
-
-
-SIGNS = {
-    SizeForm.DIAMETER: "⌀",
-    SizeForm.SPHERICAL_DIAMETER: "S⌀",
-    SizeForm.RADIUS: "R",
-    SizeForm.CONTROLLED_RADIUS: "CR",
-    SizeForm.SPHERICAL_RADIUS: "SR",
-    SizeForm.SQUARE: "□",
-}
-
-
-def bounds(size: Size, unit: Unit | None) -> tuple[Decimal, Decimal] | None:
-    """Smallest and largest size in `unit` from explicit limits or deviations; None where there are none.
-
-    Limits count whichever is written first. A size with MAX or MIN alone has no bounds.
-    """
-    tolerance = size.tolerance
-    if isinstance(tolerance, Limits):
-        ends = (amount_in(tolerance.first, unit), amount_in(tolerance.second, unit))
-        return None if None in ends else (min(ends), max(ends))  # type: ignore[type-var, return-value]
-    nominal = amount_in(size.nominal, unit)
-    spread = deviations(size, unit)
-    if nominal is None or spread is None:
-        return None
-    return nominal + min(spread), nominal + max(spread)
-
-
-def deviations(size: Size, unit: Unit | None) -> tuple[Decimal, Decimal] | None:
-    """Upper and lower deviation as written, in `unit`; None where the tolerance is not given by deviations."""
-    match size.tolerance:
-        case PlusMinus(amount):
-            value = amount_in(amount, unit)
-            return None if value is None else (value, -value)
-        case Deviations(upper, lower):
-            ends = amount_in(upper, unit), amount_in(lower, unit)
-            return None if None in ends else ends  # type: ignore[return-value]
-        case _:
-            return None
-
-
-def written_values(size: Size) -> tuple[Value, ...]:
-    """Every number of a size in its own unit: nominal, deviations or limits; the dual dimension left out."""
-    tolerance = size.tolerance.values if size.tolerance else ()
-    return tolerance if size.nominal is None else (size.nominal, *tolerance)
-
-
-def spelled(size: Size) -> str:
-    """A size with its tolerance as the drawing writes it: `⌀.281 ±.01`, `25-25.4`."""
-    nominal = SIGNS.get(size.form, "") + size.nominal.text if size.nominal else ""
-    match size.tolerance:
-        case PlusMinus(amount):
-            return f"{nominal} ±{amount.text}"
-        case Deviations(upper, lower):
-            return f"{nominal} {upper.text} {lower.text}"
-        case Limits(first, second, named):
-            return f"{first.text} MAX {second.text} MIN" if named else f"{first.text}-{second.text}"
-    return nominal
 
 
 class SizeView(PartView):

@@ -7,13 +7,15 @@ from functools import cached_property
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.assembly import Member, StatedJoint
-from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.feature import SURFACE_WORDS, leading_size, side_by_words
-from calloutlint.facts.fixing import FixingView
-from calloutlint.facts.located import is_located, positions
-from calloutlint.facts.onward import PartView
-from calloutlint.facts.passage import PassageView
+from calloutlint.facts.sides import side_by_words
+from calloutlint.facts.sizes import leading_size
 from calloutlint.facts.view import View, fact
+from calloutlint.facts.views.fastener import FastenerView
+from calloutlint.facts.views.feature import SURFACE_WORDS
+from calloutlint.facts.views.fixing import FixingView
+from calloutlint.facts.views.located import is_located, positions
+from calloutlint.facts.views.part import PartView
+from calloutlint.facts.views.passage import PassageView
 from calloutlint.model.callout import Callout
 from calloutlint.model.drawing import Drawing
 from calloutlint.model.fastener import Fastener, Hold, HoleRef
@@ -21,8 +23,8 @@ from calloutlint.model.size import SizeForm
 from calloutlint.model.values import Value
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
-    from calloutlint.facts.package import PackageView
+    from calloutlint.facts.views.callout import CalloutView
+    from calloutlint.facts.views.package import PackageView
 
 OUTER_PARTS = 2
 

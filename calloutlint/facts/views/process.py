@@ -5,15 +5,15 @@ from __future__ import annotations
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.acceptance import Acceptance, Spread, acceptance
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance
-from calloutlint.facts.onward import amount_in
+from calloutlint.facts.formulas.acceptance import Acceptance, Spread, acceptance
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance
+from calloutlint.facts.sizes import amount_in
 from calloutlint.model.drawing import Drawing
 from calloutlint.model.frame import Modifier, ZoneShape
 
 if TYPE_CHECKING:
-    from calloutlint.facts.hole import HoleView
-    from calloutlint.facts.tolerance import ToleranceView
+    from calloutlint.facts.views.hole import HoleView
+    from calloutlint.facts.views.tolerance import ToleranceView
 
 TENTH = Decimal("0.1")
 
@@ -22,7 +22,7 @@ def shares(tolerance: ToleranceView, hole: HoleView) -> Acceptance | None:
     """Shares of holes accepted regardless of size and at Ⓜ under the process that the drawing states.
 
     None where it states none, or for anything but a ⌀ tolerance of a hole whose limits are known. Formula and
-    source: `facts.acceptance`.
+    source: `facts.formulas.acceptance`.
     """
     spread = _spread(tolerance.drawing_model)
     if spread is None or tolerance.value is None or tolerance.shape is not ZoneShape.DIAMETER:

@@ -6,15 +6,15 @@ import re
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.boundaries import GeometricTolerance
-from calloutlint.facts.onward import amount_in
+from calloutlint.facts.formulas.boundaries import GeometricTolerance
+from calloutlint.facts.sizes import amount_in
 from calloutlint.model.drawing import Drawing
 from calloutlint.model.frame import Characteristic, Modifier, ScopeKind
 from calloutlint.units import Unit
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
-    from calloutlint.facts.frame import FrameView
+    from calloutlint.facts.views.callout import CalloutView
+    from calloutlint.facts.views.frame import FrameView
 
 LOCATING = {
     Characteristic.POSITION,

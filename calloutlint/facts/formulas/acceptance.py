@@ -11,7 +11,7 @@ from decimal import Decimal
 from itertools import pairwise
 from math import ceil, exp, expm1, fsum, pi, sqrt
 
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance, allowed
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance, allowed
 from calloutlint.model.frame import Modifier
 
 _REACH = 9.0

@@ -4,9 +4,9 @@ from __future__ import annotations
 
 from decimal import Decimal
 
-from calloutlint.facts.feature import leading_size
-from calloutlint.facts.onward import PartView, amount_in
+from calloutlint.facts.sizes import amount_in, leading_size
 from calloutlint.facts.view import Length, fact, kept
+from calloutlint.facts.views.part import PartView
 from calloutlint.model.callout import Callout, Meaning
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.hole import StepKind

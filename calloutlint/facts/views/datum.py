@@ -10,13 +10,13 @@ from calloutlint.facts.datums.kinds import DatumKind
 from calloutlint.facts.datums.named import NamedFault, named_faults
 from calloutlint.facts.datums.scheme import DatumScheme
 from calloutlint.facts.datums.words import in_words
-from calloutlint.facts.onward import PartView
 from calloutlint.facts.symbol_names import drawn
 from calloutlint.facts.view import fact
+from calloutlint.facts.views.part import PartView
 from calloutlint.model.frame import DatumRef, Modifier
 
 if TYPE_CHECKING:
-    from calloutlint.facts.frame import FrameView
+    from calloutlint.facts.views.frame import FrameView
 
 
 class DatumView(PartView):

@@ -5,9 +5,9 @@ from __future__ import annotations
 from collections.abc import Mapping
 from decimal import ROUND_CEILING, ROUND_FLOOR, Decimal
 
-from calloutlint.facts.located import positions
-from calloutlint.facts.passing import PassingView
 from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.located import positions
+from calloutlint.facts.views.passing import PassingView
 from calloutlint.model.frame import Modifier
 from calloutlint.units import Unit
 

@@ -7,10 +7,11 @@ from collections.abc import Iterator
 from dataclasses import replace
 from decimal import Decimal
 
-from calloutlint.facts.feature import side_by_hole, side_by_words, side_of_thread
-from calloutlint.facts.onward import PartView, amount_in
-from calloutlint.facts.size import Role
+from calloutlint.facts.sides import side_by_hole, side_by_words, side_of_thread
+from calloutlint.facts.sizes import amount_in
 from calloutlint.facts.view import Length, Number, fact
+from calloutlint.facts.views.part import PartView
+from calloutlint.facts.views.size import Role
 from calloutlint.model.callout import Meaning, Words
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import Depth, SizeForm, Through

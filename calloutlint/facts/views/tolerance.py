@@ -4,14 +4,14 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
-from calloutlint.facts.onward import PartView
-from calloutlint.facts.process import percent, shares
 from calloutlint.facts.symbol_names import drawn
 from calloutlint.facts.view import Length, Number, fact
+from calloutlint.facts.views.part import PartView
+from calloutlint.facts.views.process import percent, shares
 from calloutlint.model.frame import Modifier, ModifierUse, Zone, ZoneShape
 
 if TYPE_CHECKING:
-    from calloutlint.facts.frame import FrameView
+    from calloutlint.facts.views.frame import FrameView
 
 ZONE_SIGNS = {ZoneShape.WIDTH: "", ZoneShape.DIAMETER: "⌀", ZoneShape.SPHERE: "S⌀"}
 MATERIAL = (Modifier.MMC, Modifier.LMC, Modifier.RFS)

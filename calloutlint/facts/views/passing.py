@@ -1,6 +1,6 @@
 """Facts about a clearance hole in a joint: whether the fastener goes through, in the worst case.
 
-The formulas are those of `facts.fastening`; their sources stand there. What decides is computed in
+The formulas are those of `facts.formulas.fastening`; their sources stand there. What decides is computed in
 millimetres, into which inches convert without rounding, so that line to line stays exact across drawings.
 """
 
@@ -9,22 +9,22 @@ from __future__ import annotations
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
-from calloutlint.facts import fastening
-from calloutlint.facts.boundaries import FeatureOfSize, GeometricTolerance, allowed, inner_boundary
-from calloutlint.facts.fastener import FastenerView
-from calloutlint.facts.fixing import FixingView
-from calloutlint.facts.located import is_located, tolerance_of, widest_position
-from calloutlint.facts.onward import amount_in
-from calloutlint.facts.seated import SeatedView
+from calloutlint.facts.formulas import fastening
+from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance, allowed, inner_boundary
+from calloutlint.facts.sizes import amount_in
 from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.fastener import FastenerView
+from calloutlint.facts.views.fixing import FixingView
+from calloutlint.facts.views.located import is_located, tolerance_of, widest_position
+from calloutlint.facts.views.seated import SeatedView
 from calloutlint.model.callout import Callout
 from calloutlint.model.fastener import Fastener, Hold
 from calloutlint.units import Unit, convert
 
 if TYPE_CHECKING:
-    from calloutlint.facts.callout import CalloutView
-    from calloutlint.facts.frame import FrameView
-    from calloutlint.facts.joint import JointView
+    from calloutlint.facts.views.callout import CalloutView
+    from calloutlint.facts.views.frame import FrameView
+    from calloutlint.facts.views.joint import JointView
 
 
 class PassingView(SeatedView):

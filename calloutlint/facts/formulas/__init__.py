@@ -1,0 +1,1 @@
+"""What is computed from numbers alone, each formula with its published source."""

@@ -1,0 +1,1 @@
+"""What rules ask: one view for each thing on a drawing, its members the facts."""
