@@ -20,6 +20,8 @@ OBJECTS_BETWEEN_COLLECTIONS = 200_000
 def main(arguments: Sequence[str] | None = None) -> int:
     """Run the command that the arguments state (None: those of the process) and give the exit status."""
     collect_seldom()
+    if not sys.stdout:
+        return _fail("Standard output is closed: the results have nowhere to go.")
     try:
         options = understand(build_parser(), arguments)
         status = 0
@@ -55,6 +57,8 @@ def build_parser() -> Parser:
 
 def _fail(message: str) -> int:
     lines = (f"calloutlint: {_visible(line)}\n" for line in message.splitlines())
+    if not sys.stderr:
+        return FAILED
     try:
         sys.stderr.write("".join(lines))
     except OSError:

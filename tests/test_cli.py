@@ -157,6 +157,7 @@ class TestRefusals:
             (["symbols", "x"], "'x' is one argument too many."),
             (["rulebook", "shwo"], "'calloutlint rulebook' knows no 'shwo'. Was 'show' meant?"),
             (["rulebook", "show", "FRAME-99"], "There is no rule 'FRAME-99'"),
+            (["rulebook", "facts", "fram"], "There is no subject 'fram'; the nearest is 'frame'."),
             (["rulebook", "prove", "no-such-folder"], "no-such-folder"),
         ],
     )  # fmt: skip
@@ -259,9 +260,26 @@ class TestRulebook:
         assert out.startswith("FRAME-01  ")
         assert "case 1" in out
 
+    def test_a_rule_that_the_house_changed_is_shown_with_the_reason(
+        self, folder: Path, capsys: pytest.CaptureFixture[str]
+    ) -> None:
+        house = folder / "house"
+        house.mkdir()
+        retiring = 'retires = "FRAME-01"\nwhy = "Our gates have no frames."\n'
+        (house / "retired.toml").write_text(retiring, encoding="utf-8")
+        assert run("rulebook", "show", "FRAME-01", "--house", house) == 0
+        shown = " ".join(capsys.readouterr().out.split())
+        assert "house FRAME-01 retired, because: Our gates have no frames. (from " in shown
+        assert run("check", folder / "clean.txt", "--house", house) == 0
+        assert " House: FRAME-01 retired, because: Our gates have no frames.\n" in capsys.readouterr().out
+
     def test_the_facts_are_listed_with_what_they_are(self, capsys: pytest.CaptureFixture[str]) -> None:
         assert run("rulebook", "facts") == 0
         assert "characteristic" in capsys.readouterr().out
+        assert run("rulebook", "facts", "joint") == 0
+        out = capsys.readouterr().out
+        assert out.startswith("joint\n")
+        assert "characteristic" not in out
 
     def test_a_house_rule_that_does_not_hold_fails_the_proof(
         self, folder: Path, capsys: pytest.CaptureFixture[str]
@@ -280,7 +298,9 @@ class TestRulebook:
 
 def test_the_demo_has_findings_and_needs_no_argument(capsys: pytest.CaptureFixture[str]) -> None:
     assert run("demo") == 1
-    assert "no substitute" in capsys.readouterr().out
+    out = capsys.readouterr().out
+    assert "no substitute" in out
+    assert "from demo/" in out
 
 
 def test_a_fault_of_the_program_itself_is_told_without_a_traceback(
@@ -328,6 +348,29 @@ class TestProcess:
         done = process("check", folder / "faulty.txt", **environment)
         assert (done.returncode, done.stderr) == (1, b"")
         assert b"| FLAT | .002 | A |" in done.stdout
+
+    @pytest.mark.skipif(os.name != "posix", reason="descriptors are closed by a POSIX shell")
+    @pytest.mark.parametrize(
+        ("closed", "said"),
+        [
+            (">&-", b"calloutlint: Standard output is closed: the results have nowhere to go.\n"),
+            (">&- 2>&-", b""),
+        ],
+    )
+    def test_without_an_output_the_run_cannot_be_done(self, closed: str, said: bytes) -> None:
+        done = subprocess.run(
+            ["/bin/sh", "-c", f'"$0" -m calloutlint symbols {closed}', sys.executable],
+            capture_output=True,
+            check=False,
+        )
+        assert (done.returncode, done.stderr) == (2, said)
+
+    def test_an_interrupt_while_modules_are_loaded_is_told_in_a_line(self, folder: Path) -> None:
+        """A module that is not there yet is stood in for by one that is interrupted while it loads."""
+        (folder / "rich").mkdir()
+        (folder / "rich" / "__init__.py").write_text("raise KeyboardInterrupt", encoding="utf-8")
+        done = process("symbols", PYTHONPATH=os.pathsep.join([str(folder), *sys.path]))
+        assert (done.returncode, done.stdout, done.stderr) == (2, b"", b"calloutlint: Interrupted.\n")
 
     @pytest.mark.parametrize(("sheet", "status"), [("clean.txt", 0), ("faulty.txt", 1)])
     def test_a_reader_that_leaves_early_changes_no_exit_status(
