@@ -1,4 +1,4 @@
-"""What a callout is read as, and what is said of text that cannot be read."""
+"""What a callout is read as."""
 
 from collections.abc import Iterator
 from dataclasses import fields, is_dataclass
@@ -9,8 +9,7 @@ import pytest
 
 from calloutlint.callouts.parse import parse_callout
 from calloutlint.callouts.value import parse_size, parse_value
-from calloutlint.model.callout import Callout, DatumFeature, FastenerNote, Meaning, Part, Unread, Words
-from calloutlint.model.fastener import Hold
+from calloutlint.model.callout import DatumFeature, Part, Unread
 from calloutlint.model.frame import Frame, Modifier, ZoneShape
 from calloutlint.model.hole import HoleStep
 from calloutlint.model.size import Depth, Deviations, FitCode, Limits, PlusMinus, Size, SizeForm, Through
@@ -289,77 +288,6 @@ def test_a_count_of_holes_says_what_they_are() -> None:
     assert (size.count.number, size.count.written, size.count.in_words) == (4, "4 HOLES", True)
 
 
-# -- text that cannot be read --
-
-
-@pytest.mark.parametrize(
-    ("written", "wrong"),
-    [
-        ("⌀.25O THRU", "⌀.25O"),
-        ("⌀..250 THRU", "⌀..250"),
-        ("⌀.500 ..250", "..250"),
-        ("1.2.3", "1.2.3"),
-        ("⌀ THRU", "⌀"),
-        (".250 ±", "±"),
-        ("⌖ | ⌀.0I4 | A", "⌀.0I4"),
-        ("⌖ | ⌀.014 | A | BBQ", "BBQ"),
-        ("⌖ | ⌀.014 FOO | A", "FOO"),
-        ("⌖ | ⌀.014 .020 | A", ".020"),
-        (".250-20 UNX", "UNX"),
-        ("30-0.1", "30-0.1"),
-        (".250 | .003", "| .003"),
-    ],
-)
-def test_unreadable_text_is_kept_with_its_place(written: str, wrong: str) -> None:
-    (unread,) = [part for part in read(written) if isinstance(part, Unread)]
-    assert unread.text == wrong
-    assert written[unread.span.start : unread.span.end] == wrong
-    assert unread.expected
-
-
-@pytest.mark.parametrize(
-    ("written", "wrong", "expected"),
-    [
-        ("⌀..250 ±.002 THRU", "⌀..250 ±.002", "a number"),
-        ("⌀.28l +.005 -.000", "⌀.28l +.005 -.000", "digits only"),
-        ("⌀O.500 ±.002", "⌀O.500 ±.002", "digits only"),
-        ("12,5 ±0,1", "12,5 ±0,1", "a decimal point as elsewhere on the sheet"),
-        ("⌀12,5 +0,1 0", "⌀12,5 +0,1 0", "a decimal point as elsewhere on the sheet"),
-        ("⌀.500 +0.1 -0.2 ±0.3", "±0.3", "one tolerance for a size"),
-        ("⌀.500 ±.005 +.003 -.001", "+.003 -.001", "one tolerance for a size"),
-        ("POLISH ±.005", "±.005", "a size before the tolerance"),
-        ("DATUM 1", "DATUM 1", "a datum letter"),
-        ("[DIA .014] [A] [B]", "[A] [B]", "a geometric characteristic before its compartments"),
-        ("[A] [B] [C]", "[A] [B] [C]", "a geometric characteristic before its compartments"),
-        ("⌀.500 ±.002 [A] [B]", "[A] [B]", "a geometric characteristic before its compartments"),
-        ("CONCENTRIC TO A WITHIN .003", "CONCENTRIC TO A WITHIN .003", "a feature control frame"),
-        ("SQUARE WITHIN .005 TIR", "SQUARE WITHIN .005 TIR", "a feature control frame"),
-        ("⌀.500 .002 TIR", ".002 TIR", "a feature control frame"),
-        ("TIR .002", "TIR .002", "a feature control frame"),
-        ("⟂ | ⌀.002 Q | A", "Q", "a tolerance"),
-    ],
-)
-def test_one_slip_is_told_once_with_what_should_stand_there(written: str, wrong: str, expected: str) -> None:
-    (unread,) = [part for part in read(written) if isinstance(part, Unread)]
-    assert unread.text == wrong
-    assert unread.expected[0] == expected
-
-
-@pytest.mark.parametrize(
-    ("written", "meant"),
-    [("O.500", "0.500"), (".O10", ".010"), ("⌀.5OO", "⌀.500"), ("⌀.28l +.005 -.000", "⌀.281"), ("I.5", "1.5")],
-)
-def test_letters_among_digits_are_told_with_the_number_meant(written: str, meant: str) -> None:
-    (unread,) = read(written)
-    assert isinstance(unread, Unread)
-    assert unread.nearest == meant
-
-
-@pytest.mark.parametrize("written", ["⌖ | ⌀.014 | A | MAX", "DATUM 1", "⌀.500 DIA"])
-def test_what_is_spelled_rightly_has_no_nearest_spelling(written: str) -> None:
-    assert all(part.nearest is None for part in read(written) if isinstance(part, Unread))
-
-
 @pytest.mark.parametrize("written", ["[A]", "⌀.500 ±.002 THRU [A]", "⏥ .003 [A]", "⟂ | .002 | B ¶ [A]"])
 def test_one_letter_in_a_bracket_that_ends_a_line_is_a_datum_feature(written: str) -> None:
     assert read(*written.split(" ¶ "))[-1] == DatumFeature("A")
@@ -404,20 +332,6 @@ def test_a_count_in_words_stands_before_or_after_its_size(written: str, number: 
         assert size.count.in_words
 
 
-@pytest.mark.parametrize(
-    ("count", "meaning"),
-    [
-        ("4 HOLES", Meaning.HOLE),
-        ("2 SLOTS", Meaning.SLOT),
-        ("3 SURFACES", Meaning.SURFACE),
-        ("2 BOSSES", Meaning.BOSS),
-    ],
-)
-def test_a_count_says_what_it_counts(count: str, meaning: Meaning) -> None:
-    for text in (count, f"{count} .250 ±.005"):
-        assert meaning in Callout("1", read(text)).meanings
-
-
 def test_the_text_of_a_number_is_plain_text() -> None:
     (size,) = read("⌀.281 ±.002")
     assert isinstance(size, Size)
@@ -427,121 +341,3 @@ def test_the_text_of_a_number_is_plain_text() -> None:
     assert isinstance(frame, Frame)
     assert frame.segments[0].zone is not None
     assert {type(use.value.text) for use in frame.segments[0].zone.modifiers if use.value} == {str}
-
-
-@pytest.mark.parametrize(
-    ("written", "meant"),
-    [
-        ("POSITON | ⌀.014 | A", "POSITION"),
-        ("FLATNES .003", "FLATNESS"),
-        ("PERPENDICULARTY | .002 | A", "PERPENDICULARITY"),
-        ("COUNTERBROE ⌀.438", "COUNTERBORE"),
-        ("SPOTFCAE ⌀.75", "SPOTFACE"),
-        ("⌀.5 THUR", "THRU"),
-        ("⌀.5 TYPCIAL", "TYPICAL"),
-    ],
-)
-def test_a_slip_is_told_with_the_nearest_spelling(written: str, meant: str) -> None:
-    unread = next(part for part in read(written) if isinstance(part, Unread))
-    assert unread.nearest == meant
-
-
-def test_what_stands_right_beside_unreadable_text_is_doubtful() -> None:
-    parts = read("4X ⌀.281 THRU FLATNES", "⌴ ⌀.438 ↧ .25O")
-    assert [getattr(part, "doubtful", None) for part in parts if not isinstance(part, Unread)] == [False, True]
-    (thread, _) = read(".250-20 UNX")
-    assert isinstance(thread, Thread)
-    assert thread.doubtful
-    frame = read("⌖ | ⌀.014 FOO | A", "⟂ | .002 | A")[0]
-    assert isinstance(frame, Frame)
-    assert frame.segments[0].doubtful
-
-
-def test_one_broken_line_leaves_the_others_whole() -> None:
-    parts = read("⌀.5 @@.1@@ THRU", "⌖ | ⌀.014 | A", "DATUM B")
-    assert parts[-2:] == read("⌖ | ⌀.014 | A", "DATUM B")
-
-
-@pytest.mark.parametrize("frame", ["⌖ | ⌀ | A", "⌖ | Ⓜ | A"])
-def test_a_frame_without_its_tolerance_says_so(frame: str) -> None:
-    (part,) = read(frame)
-    assert isinstance(part, Frame)
-    assert part.segments[0].zone is not None
-    assert part.segments[0].zone.value is None
-
-
-def test_symbols_without_their_number_say_so() -> None:
-    (frame,) = read("⌖ | A | B")
-    (size,) = read("⌀.5 ↧")
-    (step,) = read("⌴ ↧ .25")
-    assert isinstance(frame, Frame)
-    assert isinstance(size, Size)
-    assert isinstance(step, HoleStep)
-    assert frame.segments[0].zone is None
-    assert size.extent == Depth(None)
-    assert step.size is None
-
-
-ORDINARY = """\
-BEARING BORE|DEBURR|NEAR SIDE|FAR SIDE|BOTH SIDES|AS SHOWN|EQ SP|EQUALLY SPACED|ON ⌀3.000 BC|POLISH|STAMP
-REMOVE BURRS|BREAK ALL SHARP EDGES|BLACK OXIDE|MASK BEFORE PLATING|PLATES|PLANES|SPACES|TREAD|TROUGH|TURN
-TRANSITION|POSITIVE STOP|PROTECTED|PROFILED|REFER TO NOTE 2|SEE NOTE 3|SEE DETAIL A1|SECTION A-A|VIEW B
-ITEM 5|ZONE C4|GRIND|WELD|HEAT TREAT TO 58-62 HRC|63 RMS|RA 1.6|FINISH 32|MATERIAL 6061-T6|17-4PH|AISI 304
-PER ASME B46.1|MIL-A-8625 TYPE II|TORQUE TO 25 IN-LB|PARALLEL TO DATUM A|SQUARE|SYMMETRICAL ABOUT CL
-ROUGH MACHINE|THREAD RELIEF|UNDERCUT|FULL R|HELICOIL|KNURL|CHAMFER|FLAT HEAD|CAPPED|TAPPET|RADIAL
-INDEPENDENTLY|FOR REFERENCE ONLY|CLEARANCE FOR WRENCH|DEPTH OF THREAD|THRU BOTH WALLS|MAX WIDTH|STOCK
-CONCENTRIC|COAXIAL|CIRCULAR|STRAIGHT|PERPENDICULAR|ANGULAR|LOCATION|DIMENSION|DIAMETRAL|TANGENTIAL|CASTING
-FORGING|MOLDED|BRASS BUSHING|O-RING GROOVE|OIL HOLE|INSPECT|IDENTIFY|ENGRAVE|ANODIZE|PASSIVATE|PAINT
-LEFT SIDE|TOP|BOTTOM|CENTER|INSIDE|OUTSIDE|UPPER|LOWER|MATING PART|MATCHED SET|DRILL JIG|ASSEMBLY|SPRING
-SEAL|GASKET|DOWEL|KEYSEAT|SPLINE|GEAR|SHOULDER|COUNTERWEIGHT|COUNTERSHAFT|HARDEN|TEMPER|STRESS RELIEVE
-SHOT PEEN|LAP|HONE|BURNISH"""
-
-
-@pytest.mark.parametrize("words", ORDINARY.replace("\n", "|").split("|"))
-def test_ordinary_words_of_drawings_are_words(words: str) -> None:
-    assert all(isinstance(part, Words) for part in read(words))
-    beside = read(f"⌀.500 ±.002 {words}")
-    assert not any(isinstance(part, Unread) for part in beside)
-
-
-@pytest.mark.parametrize(
-    ("written", "meaning"),
-    [
-        ("RUNNING FIT", Meaning.CLEARANCE_FIT),
-        ("SLIP-FIT", Meaning.CLEARANCE_FIT),
-        ("PRESS FIT", Meaning.INTERFERENCE_FIT),
-        ("SHRINK FIT", Meaning.INTERFERENCE_FIT),
-        ("TRANSITION FIT", Meaning.TRANSITION_FIT),
-        ("KEYWAY", Meaning.SLOT),
-        ("BEARING BORE", Meaning.BORE),
-        ("BOSSES", Meaning.BOSS),
-        ("FORM TAP", Meaning.FORM_TAP),
-        ("SEP REQT", Meaning.SEPARATE_REQUIREMENT),
-    ],
-)
-def test_words_that_rules_can_use_are_understood(written: str, meaning: Meaning) -> None:
-    (words,) = read(written)
-    assert isinstance(words, Words)
-    assert words.meanings == (meaning,)
-
-
-@pytest.mark.parametrize(
-    ("written", "hold"),
-    [
-        ("FOR .250-20 UNC SCREW", None),
-        ("CLEARANCE FOR M6 FLOATING", Hold.FLOATING),
-        ("CLR FOR #10", None),
-        ("CLEAR FOR 1/4 BOLT FIXED", Hold.FIXED),
-        ("FOR ⌀6 m6 DOWEL PIN", None),
-    ],
-)
-def test_a_fastener_named_in_a_callout_is_found(written: str, hold: Hold | None) -> None:
-    (note,) = read(written)
-    assert isinstance(note, FastenerNote)
-    assert note.fastener.thread or note.fastener.pin
-    assert note.hold is hold
-
-
-@pytest.mark.parametrize("written", ["⌀.500 FOR 2.00 LENGTH", "⌀5 FOR M6 TAP", "FOR REFERENCE ONLY"])
-def test_other_things_that_a_callout_is_for_are_no_fasteners(written: str) -> None:
-    assert not any(isinstance(part, FastenerNote) for part in read(written))

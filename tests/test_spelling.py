@@ -117,6 +117,9 @@ def test_a_size_a_thread_or_a_hole_opens_a_feature(line: str) -> None:
         "SURFACE FLATNESS|.003 -A-",
         "REMOVE BURRS",
         "ALL AROUND",
+        "TP [DIA .014] [A]",
+        "PERPENDICULAR TO A WITHIN .002",
+        "CONCENTRIC TO A WITHIN .003",
     ],
 )
 def test_what_speaks_of_a_feature_above_opens_none(line: str) -> None:

@@ -85,7 +85,7 @@ _OPENS = re.compile(
     r"\s*(?:[^\W\d_][\w'./&-]*\s+|\d+\s?[Xx×](?!\w)\s*)*(?:S?⌀|□|‹[CS]?R›|[\[(]?\.?\d|#\s?\d|MJ?\d|Tr\s?\d|G\s?\d)"
 ).match
 _JOINS = re.compile(
-    r"\s*(?:[|⌴⌵↧+]|-\s?\.?\d|‹(?:SF|DRILL|REAM|TAP)›|(?i:[\w ]*\b(?:notes?|for|see|per)\s))"
+    r"\s*(?:[|⌴⌵↧+]|-\s?\.?\d|‹(?:SF|DRILL|REAM|TAP)›|(?i:[\w ]*\b(?:notes?|for|see|per|within|tir)\s))"
 ).match
 
 
@@ -130,7 +130,7 @@ _SAID_WITHIN = {s for s in _FRAME_WORDS if s.endswith(" WITHIN")}
 _TOLERANCE = r"(?:S?⌀|%%[cC]|S?DIA\b|dia\b|-?\.?\d)"
 _FRAME_FOLLOWS = rf"(?=\s*[\]|]|[\s:=]*(?:(?i:within|tol(?:erance)?)\s+)?{_TOLERANCE}%s%s)"
 _BOX_FOLLOWS = rf"|\s*\[\s*{_TOLERANCE}"
-_MAY_BE_BASIC = {"FLAT", "ANG", "CIR", "CYL"}  # `FLAT [.500]` is a flat's width
+_MAY_BE_BASIC = {"FLAT", "ANG", "CIR", "CYL"}  # `FLAT [.500]`, `ANG [30°]` are sizes
 _LONG_FOLLOWS = r"|\s+[A-Z](?![A-Za-z0-9.])"
 _DATUM = r"\s+(?:(?i:datums?)\s+)?[A-Z](?:\s*-\s*[A-Z])?(?!\w)"
 _NUMBER_WITHIN = rf"\s+{_TOLERANCE}(?!.*\b(?i:tir|fim|fir|total|per)\b|\s*[\d.]+\s*(?:°|(?i:deg)))"
@@ -153,7 +153,7 @@ def _ending(spelling: str) -> str:
     if spelling in _FRAME_PHRASES:
         return ending + _FRAME_PHRASES[spelling]
     if spelling in _FRAME_WORDS:
-        boxed = _BOX_FOLLOWS + (r"[^\[\]]*\]\s*\[" if spelling in _MAY_BE_BASIC else "")
+        boxed = "" if spelling in _MAY_BE_BASIC else _BOX_FOLLOWS
         return ending + _FRAME_FOLLOWS % (boxed, _LONG_FOLLOWS if len(spelling) > 7 else "")
     if spelling == "R":
         return ending + _RADIUS_FOLLOWS

@@ -20,6 +20,7 @@ from calloutlint.callouts.parts.state import State
 
 TREES: dict[str, Callable[[State, Tree[Token]], None]] = {
     "size": place_size.take_size,
+    "modified": place_size.take_modified,
     "stacked": place_size.take_stacked,
     "thread": place_thread.take_thread,
     "frame": place_frame.take_frame,

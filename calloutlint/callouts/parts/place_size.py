@@ -7,7 +7,7 @@ from calloutlint.callouts.parts.drafts import DepthDraft, SizeDraft, TargetDraft
 from calloutlint.callouts.parts.line import joined, tokens
 from calloutlint.callouts.parts.place_bracket import take_dual
 from calloutlint.callouts.parts.place_extent import place_depth, place_extent
-from calloutlint.callouts.parts.place_status import STATUSES, set_status
+from calloutlint.callouts.parts.place_status import STATUSES, set_status, take_size_modifier
 from calloutlint.callouts.parts.place_step import fits_step, put_in_step
 from calloutlint.callouts.parts.read_size import (
     add_tolerance,
@@ -128,6 +128,17 @@ def _near(one: Value, other: Value) -> bool:
     """Whether two numbers can be limits of one size: neither is twice the other."""
     smaller, larger = sorted((one.amount, other.amount))
     return smaller > 0 and larger < 2 * smaller
+
+
+def take_modified(state: State, tree: Tree[Token]) -> None:
+    """`⌀7.5 Ⓔ +0.1 0`: a modifier of the size before, and its tolerance."""
+    modifier, tolerance = tokens(tree)
+    take_size_modifier(state, modifier)
+    size = state.size
+    if size is None or size.tolerance is not None or size.fit is not None:
+        state.unread(tolerance, BY_PLACE["size" if size is None else "second"])
+    else:
+        add_tolerance(size, tolerance, state.line)
 
 
 def take_stacked(state: State, tree: Tree[Token]) -> None:

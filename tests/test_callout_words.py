@@ -1,0 +1,91 @@
+"""Plain words in a callout, and fasteners named in one."""
+
+import pytest
+
+from calloutlint.callouts.parse import parse_callout
+from calloutlint.model.callout import Callout, FastenerNote, Meaning, Part, Unread, Words
+from calloutlint.model.fastener import Hold
+from calloutlint.units import Unit
+
+
+def read(*lines: str) -> tuple[Part, ...]:
+    return parse_callout(lines, Unit.INCH)
+
+
+@pytest.mark.parametrize(
+    ("count", "meaning"),
+    [
+        ("4 HOLES", Meaning.HOLE),
+        ("2 SLOTS", Meaning.SLOT),
+        ("3 SURFACES", Meaning.SURFACE),
+        ("2 BOSSES", Meaning.BOSS),
+    ],
+)
+def test_a_count_says_what_it_counts(count: str, meaning: Meaning) -> None:
+    for text in (count, f"{count} .250 ±.005"):
+        assert meaning in Callout("1", read(text)).meanings
+
+
+ORDINARY = """\
+BEARING BORE|DEBURR|NEAR SIDE|FAR SIDE|BOTH SIDES|AS SHOWN|EQ SP|EQUALLY SPACED|ON ⌀3.000 BC|POLISH|STAMP
+REMOVE BURRS|BREAK ALL SHARP EDGES|BLACK OXIDE|MASK BEFORE PLATING|PLATES|PLANES|SPACES|TREAD|TROUGH|TURN
+TRANSITION|POSITIVE STOP|PROTECTED|PROFILED|REFER TO NOTE 2|SEE NOTE 3|SEE DETAIL A1|SECTION A-A|VIEW B
+ITEM 5|ZONE C4|GRIND|WELD|HEAT TREAT TO 58-62 HRC|63 RMS|RA 1.6|FINISH 32|MATERIAL 6061-T6|17-4PH|AISI 304
+PER ASME B46.1|MIL-A-8625 TYPE II|TORQUE TO 25 IN-LB|PARALLEL TO DATUM A|SQUARE|SYMMETRICAL ABOUT CL
+ROUGH MACHINE|THREAD RELIEF|UNDERCUT|FULL R|HELICOIL|KNURL|CHAMFER|FLAT HEAD|CAPPED|TAPPET|RADIAL
+INDEPENDENTLY|FOR REFERENCE ONLY|CLEARANCE FOR WRENCH|DEPTH OF THREAD|THRU BOTH WALLS|MAX WIDTH|STOCK
+CONCENTRIC|COAXIAL|CIRCULAR|STRAIGHT|PERPENDICULAR|ANGULAR|LOCATION|DIMENSION|DIAMETRAL|TANGENTIAL|CASTING
+FORGING|MOLDED|BRASS BUSHING|O-RING GROOVE|OIL HOLE|INSPECT|IDENTIFY|ENGRAVE|ANODIZE|PASSIVATE|PAINT
+LEFT SIDE|TOP|BOTTOM|CENTER|INSIDE|OUTSIDE|UPPER|LOWER|MATING PART|MATCHED SET|DRILL JIG|ASSEMBLY|SPRING
+SEAL|GASKET|DOWEL|KEYSEAT|SPLINE|GEAR|SHOULDER|COUNTERWEIGHT|COUNTERSHAFT|HARDEN|TEMPER|STRESS RELIEVE
+SHOT PEEN|LAP|HONE|BURNISH"""
+
+
+@pytest.mark.parametrize("words", ORDINARY.replace("\n", "|").split("|"))
+def test_ordinary_words_of_drawings_are_words(words: str) -> None:
+    assert all(isinstance(part, Words) for part in read(words))
+    beside = read(f"⌀.500 ±.002 {words}")
+    assert not any(isinstance(part, Unread) for part in beside)
+
+
+@pytest.mark.parametrize(
+    ("written", "meaning"),
+    [
+        ("RUNNING FIT", Meaning.CLEARANCE_FIT),
+        ("SLIP-FIT", Meaning.CLEARANCE_FIT),
+        ("PRESS FIT", Meaning.INTERFERENCE_FIT),
+        ("SHRINK FIT", Meaning.INTERFERENCE_FIT),
+        ("TRANSITION FIT", Meaning.TRANSITION_FIT),
+        ("KEYWAY", Meaning.SLOT),
+        ("BEARING BORE", Meaning.BORE),
+        ("BOSSES", Meaning.BOSS),
+        ("FORM TAP", Meaning.FORM_TAP),
+        ("SEP REQT", Meaning.SEPARATE_REQUIREMENT),
+    ],
+)
+def test_words_that_rules_can_use_are_understood(written: str, meaning: Meaning) -> None:
+    (words,) = read(written)
+    assert isinstance(words, Words)
+    assert words.meanings == (meaning,)
+
+
+@pytest.mark.parametrize(
+    ("written", "hold"),
+    [
+        ("FOR .250-20 UNC SCREW", None),
+        ("CLEARANCE FOR M6 FLOATING", Hold.FLOATING),
+        ("CLR FOR #10", None),
+        ("CLEAR FOR 1/4 BOLT FIXED", Hold.FIXED),
+        ("FOR ⌀6 m6 DOWEL PIN", None),
+    ],
+)
+def test_a_fastener_named_in_a_callout_is_found(written: str, hold: Hold | None) -> None:
+    (note,) = read(written)
+    assert isinstance(note, FastenerNote)
+    assert note.fastener.thread or note.fastener.pin
+    assert note.hold is hold
+
+
+@pytest.mark.parametrize("written", ["⌀.500 FOR 2.00 LENGTH", "⌀5 FOR M6 TAP", "FOR REFERENCE ONLY"])
+def test_other_things_that_a_callout_is_for_are_no_fasteners(written: str) -> None:
+    assert not any(isinstance(part, FastenerNote) for part in read(written))
