@@ -8,14 +8,19 @@ from calloutlint.model.thread import Thread
 
 INTERNAL_WORDS = {Meaning.HOLE, Meaning.SLOT, Meaning.GROOVE, Meaning.BORE}
 EXTERNAL_WORDS = {Meaning.SHAFT, Meaning.PIN, Meaning.BOSS, Meaning.TAB}
+CARRIERS = {Meaning.BOSS, Meaning.TAB}
 
 
 def side_by_words(callout: Callout) -> bool | None:
-    """True internal, False external, None not said, by the words of the callout."""
+    """True internal, False external, None not said, by the words of the callout.
+
+    A boss or tab beside a thread says where the thread is, not what it is.
+    """
     meanings = callout.meanings
+    external = meanings & (EXTERNAL_WORDS - CARRIERS if callout.threads else EXTERNAL_WORDS)
     if meanings & INTERNAL_WORDS:
-        return None if meanings & EXTERNAL_WORDS else True
-    return False if meanings & EXTERNAL_WORDS else None
+        return None if external else True
+    return False if external else None
 
 
 def side_by_hole(callout: Callout) -> bool | None:

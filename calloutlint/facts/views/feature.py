@@ -24,11 +24,6 @@ class FeatureView(PartView):
         """Whether it is a hole, slot or other internal feature: by words, joint, hole signs, then letters."""
         return self._side
 
-    @fact
-    def external(self) -> bool | None:
-        """Whether it is a shaft, tab or other external feature."""
-        return None if self._side is None else not self._side
-
     @kept
     def _side(self) -> bool | None:
         said = side_by_words(self.part)
@@ -69,11 +64,11 @@ class FeatureView(PartView):
 
     @fact
     def surface(self) -> bool | None:
-        """Whether it is a plain surface: words say so, or it is a datum feature without any size."""
-        if self.part.meanings & SURFACE_WORDS:
-            return True
+        """Whether it is a plain surface: it states no size, and words or a datum feature symbol say so."""
         if self.of_size:
             return False
+        if self.part.meanings & SURFACE_WORDS:
+            return True
         return True if self.part.datum_features and not self.part.meanings else None
 
     @fact
