@@ -14,6 +14,7 @@ from calloutlint.callouts.parts import (
     place_status,
     place_step,
     place_thread,
+    place_unread,
     place_word,
 )
 from calloutlint.callouts.parts.state import State
@@ -26,7 +27,7 @@ TREES: dict[str, Callable[[State, Tree[Token]], None]] = {
     "frame": place_frame.take_frame,
     "segment": place_frame.take_segment,
     "target": place_datum.take_target,
-    "lost": place_word.take_lost,
+    "lost": place_unread.take_lost,
 }
 TOKENS: dict[str, Callable[[State, Token], None]] = {
     "COUNT": place_count.take_count,
@@ -61,7 +62,7 @@ TOKENS: dict[str, Callable[[State, Token], None]] = {
     "NUMBERED_NOTE": place_word.take_plain,
     "DESIGNATION": place_word.take_plain,
     "WITHIN": place_word.take_plain,
-    "SPOKEN": place_word.take_spoken,
+    "SPOKEN": place_unread.take_spoken,
     "STRAY": place_word.as_word,
 }
 # Pieces that may turn out to be plain words: a run of words goes on through them.
