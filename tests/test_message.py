@@ -4,8 +4,9 @@ from decimal import Decimal
 
 import pytest
 
-from calloutlint.rulebook.figures import joined, written
-from calloutlint.rulebook.kinds import ANGLE, COUNT, LENGTH, NUMBER
+from calloutlint.model.frame import Modifier
+from calloutlint.rulebook.figures import figure, joined, said, written
+from calloutlint.rulebook.kinds import ANGLE, COUNT, LENGTH, NUMBER, TEXT, Listing, Words
 from calloutlint.rulebook.scope import Scope
 from calloutlint.rulebook.template import message
 from calloutlint.rulebook.text_error import TextError
@@ -49,13 +50,25 @@ def test_other_quantities_signs_and_lists_are_written_plainly() -> None:
     assert joined([]) == "none"
 
 
+def test_modifiers_are_written_as_they_are_drawn() -> None:
+    kind = Listing("a list", Words("a word", Modifier))
+    assert written((Modifier.MMC, Modifier.PROJECTED), kind, None) == "Ⓜ and Ⓟ"
+
+
+def test_a_message_has_a_minus_sign_and_a_figure_a_number_that_programs_read() -> None:
+    assert said(Decimal("-.002"), LENGTH, Unit.INCH, signed=True) == "−.002"
+    assert said("A-B", TEXT, None) == "A-B"
+    assert figure(Decimal("-.002"), LENGTH, Unit.INCH) == "-.002 in"
+    assert figure((Decimal(-1), Decimal(2)), Listing("a list", NUMBER), None) == "-1 and 2"
+
+
 def test_a_message_shows_its_values_and_collects_its_figures() -> None:
-    said = message(
+    spoken = message(
         "{{{metal}}} {stems} {stem.marks} {bolts} bolts, {bore}, {lift / 2:+} at {slope}", Scope(ValveView)
     ).say(ValveView(stems=STEMS))
-    assert said is not None
-    assert said.text == "{brass} left and right C 8 bolts, 80, +12.7 at 5.5°"
-    assert said.figures == {"bore": "80 mm", "lift / 2": "12.7 mm", "slope": "5.5°"}
+    assert spoken is not None
+    assert spoken.text == "{brass} left and right C 8 bolts, 80, +12.7 at 5.5°"
+    assert spoken.figures == {"bore": "80 mm", "lift / 2": "12.7 mm", "slope": "5.5°"}
 
 
 def test_a_message_that_meets_an_unknown_is_not_said() -> None:

@@ -5,22 +5,33 @@ from decimal import ROUND_HALF_EVEN, Decimal
 from enum import StrEnum
 from typing import Any
 
-from calloutlint.rulebook.kinds import ANGLE, LENGTH, QUANTITIES, Kind, Listing
+from calloutlint.facts.symbol_names import drawn
+from calloutlint.model.frame import Modifier
+from calloutlint.rulebook.kinds import ANGLE, LENGTH, QUANTITIES, Kind, Listing, single
 from calloutlint.units import Unit
 
 INCH_PLACES = 5
 INCH_PLACES_SHOWN = 3
 OTHER_PLACES = 4
+MINUS = "−"
 UNIT_MARKS = {Unit.INCH: " in", Unit.MM: " mm"}
 
 
 def written(value: Any, kind: Kind, unit: Unit | None, *, signed: bool = False) -> str:
-    """A value as a message shows it; a length is in `unit` and shown without it."""
+    """A value in the drawing's manner: a length is in `unit`, which is not shown; a modifier is drawn."""
     if isinstance(kind, Listing):
         return joined(written(item, kind.item, unit, signed=signed) for item in value)
     if kind in QUANTITIES:
         return _quantity(Decimal(value), kind, unit, signed=signed)
+    if isinstance(value, Modifier):
+        return drawn(value)
     return value.value if isinstance(value, StrEnum) else str(value)
+
+
+def said(value: Any, kind: Kind, unit: Unit | None, *, signed: bool = False) -> str:
+    """A value as a message says it: as it is written, with a minus sign where a number for programs has `-`."""
+    text = written(value, kind, unit, signed=signed)
+    return text.replace("-", MINUS) if single(kind) in QUANTITIES else text
 
 
 def figure(value: Any, kind: Kind, unit: Unit | None) -> str:

@@ -5,7 +5,7 @@ from typing import NamedTuple
 
 from calloutlint.facts.view import View
 from calloutlint.rulebook.code import Code
-from calloutlint.rulebook.figures import figure, written
+from calloutlint.rulebook.figures import figure, said
 from calloutlint.rulebook.kinds import ANGLE, LENGTH, Kind
 
 
@@ -26,7 +26,7 @@ class Message(NamedTuple):
 
     def say(self, view: View) -> "Said | None":
         """The message about a view; None where a value in it is unknown."""
-        said = Said()
+        told = Said()
         words = []
         for piece in self.pieces:
             if isinstance(piece, str):
@@ -35,15 +35,15 @@ class Message(NamedTuple):
             value = piece.code.read(view)
             if value is None:
                 return None
-            words.append(written(value, piece.kind, view.unit, signed=piece.signed))
+            words.append(said(value, piece.kind, view.unit, signed=piece.signed))
             if piece.kind in {LENGTH, ANGLE}:
-                said.figures[piece.name] = figure(value, piece.kind, view.unit)
-        said.text = "".join(words)
+                told.figures[piece.name] = figure(value, piece.kind, view.unit)
+        told.text = "".join(words)
         for slot in self.figures:
             value = slot.code.read(view)
             if value is not None:
-                said.figures[slot.name] = figure(value, slot.kind, view.unit)
-        return said
+                told.figures[slot.name] = figure(value, slot.kind, view.unit)
+        return told
 
 
 @dataclass(slots=True)

@@ -79,6 +79,6 @@ def _code_stamps() -> Iterator[object]:
     yield read_text("grammar", "condition.lark")
     places = (files("calloutlint") / name for name in CODE_FOLDERS)
     for place in (place for place in places if isinstance(place, Path)):
-        for file in sorted(place.glob("*.py")):
+        for file in sorted(place.rglob("*.py")):
             status = file.stat()
-            yield place.name, file.name, status.st_mtime_ns, status.st_size
+            yield str(file.relative_to(place)), status.st_mtime_ns, status.st_size
