@@ -30,11 +30,17 @@ class TargetFault:
 
 
 def target_faults(scheme: DatumScheme) -> tuple[TargetFault, ...]:
-    """Letters whose datum targets have a gap, or are too few for a primary plane."""
+    """Letters whose datum targets have a gap, or are too few for a primary plane.
+
+    A letter that no frame references and no symbol defines may be no datum: `P96` is a knurl, `N7` a roughness.
+    """
     primary = {use.order[0] for use in scheme.uses}
+    referenced = {letter.letter for use in scheme.uses for ref in use.segment.datums for letter in ref.letters}
     faults = []
     for feature in scheme.features.values():
         if not feature.targets or any(callout.unread for callout, _ in feature.targets):
+            continue
+        if not feature.callouts and feature.letter not in referenced:
             continue
         missing = missing_numbers(target for _, target in feature.targets)
         contacts = _too_few(feature) if feature.letter in primary else None
