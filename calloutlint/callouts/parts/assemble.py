@@ -25,11 +25,11 @@ def assemble(lines: Sequence[Line]) -> tuple[Part, ...]:
 def _read(state: State, line: Line) -> None:
     state.begin(line)
     for state.at, item in enumerate(line.items):
-        kind = item.data if isinstance(item, Tree) else item.type
+        kind = state.kinds[state.at]
         if kind not in MAY_BE_WORDS:
             state.end_words()
         if isinstance(item, Tree):
-            _take_tree(state, item)
+            _take_tree(state, item, kind)
         else:
             TOKENS[kind](state, item)
         state.previous = item
@@ -44,10 +44,10 @@ def _read(state: State, line: Line) -> None:
         _mark_doubtful(state)
 
 
-def _take_tree(state: State, tree: Tree[Token]) -> None:
+def _take_tree(state: State, tree: Tree[Token], kind: str) -> None:
     """Takes a node; one whose numbers make no sense, such as `1/0-20 UNC`, cannot be read."""
     try:
-        TREES[tree.data](state, tree)
+        TREES[kind](state, tree)
     except ValueError:
         pieces = tokens(tree)
         state.unread_span(state.line.span(pieces[0], pieces[-1]), BY_PLACE["value"])

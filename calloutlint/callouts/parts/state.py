@@ -41,6 +41,7 @@ class State:
     def begin(self, line: Line) -> None:
         """Turns to the next line."""
         self.line = line
+        self.kinds = [str(node.data) if isinstance(node, Tree) else node.type for node in line.items]
         self.first = len(self.parts)
         self.previous: Node | None = None
         self.at = 0
@@ -79,10 +80,7 @@ class State:
     def follows(self, kind: str, at: int = 0) -> bool:
         """Whether the next node but `at` is a rule or a terminal called `kind`."""
         place = self.at + 1 + at
-        if place >= len(self.line.items):
-            return False
-        node = self.line.items[place]
-        return bool((node.data if isinstance(node, Tree) else node.type) == kind)
+        return place < len(self.kinds) and self.kinds[place] == kind
 
     def give_count(self, owner: Hole | FrameDraft) -> None:
         """Gives the count that waits to the part it stands before."""
