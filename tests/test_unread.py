@@ -44,8 +44,8 @@ def test_unreadable_text_is_kept_with_its_place(written: str, wrong: str) -> Non
     ("written", "wrong", "expected"),
     [
         ("⌀..250 ±.002 THRU", "⌀..250 ±.002", "a number"),
-        ("⌀.28l +.005 -.000", "⌀.28l +.005 -.000", "digits only"),
-        ("⌀O.500 ±.002", "⌀O.500 ±.002", "digits only"),
+        ("⌀.28l +.005 -.000", "⌀.28l +.005 -.000", "digits, not letters"),
+        ("⌀O.500 ±.002", "⌀O.500 ±.002", "digits, not letters"),
         ("12,5 ±0,1", "12,5 ±0,1", "a decimal point as elsewhere on the sheet"),
         ("⌀12,5 +0,1 0", "⌀12,5 +0,1 0", "a decimal point as elsewhere on the sheet"),
         ("⌀.500 +0.1 -0.2 ±0.3", "±0.3", "one tolerance for a size"),
@@ -59,7 +59,7 @@ def test_unreadable_text_is_kept_with_its_place(written: str, wrong: str) -> Non
         ("SQUARE WITHIN .005 TIR", "SQUARE WITHIN .005 TIR", "a feature control frame"),
         ("⌀.500 .002 TIR", ".002 TIR", "a feature control frame"),
         ("TIR .002", "TIR .002", "a feature control frame"),
-        ("⟂ | ⌀.002 Q | A", "Q", "a tolerance"),
+        ("⟂ | ⌀.002 Q | A", "Q", "a modifier such as Ⓜ"),
     ],
 )
 def test_one_slip_is_told_once_with_what_should_stand_there(written: str, wrong: str, expected: str) -> None:

@@ -26,6 +26,7 @@ _WORDS = {
 _MOST = 4
 BY_PLACE = {
     "zone": ("a tolerance", "a modifier such as Ⓜ", "a compartment bar"),
+    "letter in zone": ("a modifier such as Ⓜ", "a compartment bar before it"),
     "datum": ("a datum letter", "a modifier such as Ⓜ", "a compartment bar"),
     "bar": ("a compartment bar", "MAX after a second number", "Ⓟ or Ⓤ before one"),
     "frame": ("a modifier such as Ⓜ", "a compartment bar", "a datum letter"),
@@ -40,7 +41,7 @@ BY_PLACE = {
     "letter": ("a datum letter",),
     "second": ("one tolerance for a size",),
     "frame in words": ("a feature control frame",),
-    "digits": ("digits only",),
+    "digits": ("digits, not letters",),
     "comma": ("a decimal point as elsewhere on the sheet",),
     "characteristic": ("a geometric characteristic",),
 }

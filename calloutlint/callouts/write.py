@@ -24,7 +24,7 @@ from calloutlint.model.size import Count, Size
 from calloutlint.model.thread import Thread
 from calloutlint.units import Unit
 
-_IN_ZONE = (BY_PLACE["zone"], BY_PLACE["bar"])
+_IN_ZONE = (BY_PLACE["zone"], BY_PLACE["letter in zone"], BY_PLACE["bar"])
 
 __all__ = ["Style", "write_callout", "write_part"]
 

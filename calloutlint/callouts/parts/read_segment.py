@@ -173,7 +173,7 @@ class SegmentReader:
         elif self._is_bare_modifier(piece, datum):
             self._add(BARE_MODIFIERS[piece], piece)
         elif self.boxed and self.compartment == 0 and self.value is not None:
-            self._refuse(piece)
+            self.unread.append((piece, "letter in zone"))
         else:
             self.turned_back = False
             self.compartment = max(self.compartment, 1)
