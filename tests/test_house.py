@@ -77,7 +77,7 @@ def test_what_house_sheets_change_is_told_with_its_reason(house: Path) -> None:
     assert load_rulebook().changes == ()
     assert [change.told for change in load_rulebook([house]).changes] == [
         "FIT-06 retired, because: our holes are reamed.",
-        "HOUSE-01 grade major for minor, widest 2 mm for 1 mm, because: a larger gauge.",
+        "HOUSE-01 amended (grade major, was minor; widest 2 mm, was 1 mm), because: a larger gauge.",
     ]
 
 

@@ -5,16 +5,26 @@ from collections.abc import Sequence
 
 import pytest
 from rich.cells import cell_len
+from rich.text import Text
 
 from calloutlint.callouts.write import Style
+from calloutlint.model.callout import Callout
+from calloutlint.model.drawing import Package
+from calloutlint.redline.prove import Redline
 from calloutlint.report.drawn import draw
 from calloutlint.report.layout import DatumRow, FrameRow, Piece, Row, TextRow
 from calloutlint.report.marks import Mark, Place
 from calloutlint.report.printable import printable
+from calloutlint.report.redlines import show_redlines
 from calloutlint.report.screen import Screen, draws_symbols
 from calloutlint.report.styles import ASCII, UNICODE, Glyphs
+from calloutlint.report.words import counted
 from calloutlint.report.wrap import wrap
+from calloutlint.review import Judged, Review
+from calloutlint.rulebook.finding import Finding, Grade
 
+FINDING = Finding("WEIR-01", Grade.MAJOR, "A title", "A message.")
+REDLINE = Redline("⏥ | .003", False, Callout("4", ()))
 A = Mark("a", "")
 B = Mark("b", "")
 
@@ -210,6 +220,32 @@ def test_plain_text_holds_only_ascii(text: str, expected: str) -> None:
 
 def test_characters_that_steer_a_terminal_are_never_passed_on() -> None:
     assert printable("⌀.5\x1b[2J\r\u202e\udcff\tx", Style.UNICODE) == "⌀.5�[2J��� x"
+
+
+def test_a_head_that_leaves_no_room_stands_alone_without_blanks_behind_it() -> None:
+    stream = io.StringIO()
+    Screen(stream, width=40).paragraph("Not a word too many", head=Text("a  OBSERVATION  WEIR-06  "), indent=3)
+    assert stream.getvalue() == "   a  OBSERVATION  WEIR-06\n      Not a word too many\n"
+
+
+@pytest.mark.parametrize(("number", "told"), [(0, "no callouts"), (1, "1 callout"), (3, "3 callouts")])
+def test_a_count_is_told_in_words(number: int, told: str) -> None:
+    assert counted(number, "callout") == told
+
+
+@pytest.mark.parametrize(
+    ("findings", "told"),
+    [
+        ((), "No findings."),
+        ((Judged(FINDING),), "1 finding, none with a correction."),
+        ((Judged(FINDING), Judged(FINDING, REDLINE)), "2 findings, 1 correction, none of them proven."),
+    ],
+)
+def test_corrections_are_counted_in_plain_words(findings: tuple[Judged, ...], told: str) -> None:
+    stream = io.StringIO()
+    review = Review(Package("Weir", ()), 81, "5eed", Grade.MAJOR, findings)
+    show_redlines(review, Screen(stream, width=80))
+    assert stream.getvalue().splitlines()[-1].strip() == told
 
 
 def test_what_looks_like_markup_is_printed_as_it_stands() -> None:

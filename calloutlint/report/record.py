@@ -28,7 +28,7 @@ class HouseEntry(_Entry):
     """A rule that a house sheet retired or amended."""
 
     rule: str
-    done: str = Field(description="retired, or what stands for what was there: grade minor for major")
+    done: str = Field(description="retired, or amended with what changed")
     why: str
 
 

@@ -100,9 +100,9 @@ def _amend(rules: dict[str, Filed], amendment: Amendment, file: str) -> str:
         }
     )
     rules[amendment.rule] = Filed(filed.file, after)
-    done = [f"grade {after.grade} for {before.grade}"] if amendment.grade else []
-    done += [f"{name} {after.limits[name]} for {before.limits[name]}" for name in amendment.limits]
-    return ", ".join(done)
+    done = [f"grade {after.grade}, was {before.grade}"] if amendment.grade else []
+    done += [f"{name} {after.limits[name]}, was {before.limits[name]}" for name in amendment.limits]
+    return f"amended ({'; '.join(done)})"
 
 
 def _limits(sheet: Sheet, changed: Mapping[str, LimitAmount], file: str) -> dict[str, LimitAmount]:

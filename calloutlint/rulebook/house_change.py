@@ -4,7 +4,7 @@ from typing import NamedTuple
 
 
 class HouseChange(NamedTuple):
-    """A rule that a house sheet retired or amended; `done` is `retired` or what now stands for what was."""
+    """A rule that a house sheet changed; `done` is `retired`, or `amended` with what is now and was before."""
 
     rule: str
     done: str
