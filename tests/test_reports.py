@@ -112,6 +112,17 @@ def test_a_report_is_what_is_kept(case: Path, form: str) -> None:
     assert report(review_of(case), form) == (case / form).read_text(encoding="utf-8")
 
 
+@pytest.mark.parametrize("width", [40, 80])
+def test_no_line_ends_in_blanks(width: int) -> None:
+    sheet = parse_sheet("drawing: WG-9\n1) ⏥ | .003\n", "wg-9.txt")
+    finding = Finding(
+        "WEIR-01", GRADES["observation"], "A title", "A message.", {}, None, sheet, sheet.callouts[0]
+    )
+    review = Review(Package("Weir", (sheet,)), 81, "5eed", GRADES["major"], (Judged(finding),))
+    told = report(review, f"unicode-{width}.txt").splitlines()
+    assert told == [line.rstrip() for line in told]
+
+
 @pytest.mark.parametrize("case", cases(), ids=lambda case: case.name)
 def test_a_plain_report_is_ascii(case: Path) -> None:
     assert report(review_of(case), "plain-80.txt").isascii()

@@ -39,8 +39,10 @@ def _show_drawing(drawing: Drawing, findings: Sequence[Judged], screen: Screen) 
     for callout, group in groupby(findings, key=lambda judged: judged.finding.callout):
         show_callout(callout, list(group), screen)
     clean = len(drawing.callouts) - len({id(j.finding.callout) for j in findings if j.finding.callout})
-    screen.paragraph(_clean_words(clean, len(drawing.callouts)), ROLES.quiet, indent=1)
-    screen.line()
+    words = _clean_words(clean, len(drawing.callouts))
+    if words:
+        screen.paragraph(words, ROLES.quiet, indent=1)
+        screen.line()
 
 
 def show_heading(drawing: Drawing, screen: Screen) -> None:
