@@ -242,6 +242,12 @@ def test_arithmetic_is_exact(case: tuple[str, Fraction]) -> None:
             "    bolts >> 3\n           ^",
         ),
         ("bolts ; 3", "';' cannot stand here: expected"),
+        (
+            "rising_stem and bolts ; 3",
+            "';' cannot stand here: expected 'and', 'has', 'in', 'is', 'not', 'or', an operator or the end\n"
+            "    rising_stem and bolts ; 3\n                          ^",
+        ),
+        ("stem.name = 'left", "this quotation mark has no partner\n    stem.name = 'left\n                ^"),
         ("stem has Q", "'Q' says nothing of a stem; known are: C, T, tested\n    stem has Q\n             ^"),
         ("name is brass", "'name' is not known here"),
         (

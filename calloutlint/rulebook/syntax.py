@@ -58,6 +58,8 @@ def _unexpected(error: UnexpectedInput, text: str, start: Start) -> TextError:
         wrong, expected = str(error.token), error.accepts
     else:
         wrong, expected = text[place], _accepted_after(text[:place], start)
+    if wrong in {"'", '"'}:
+        return TextError("this quotation mark has no partner", place, place + 1)
     return TextError(f"'{wrong}' cannot stand here: expected {_listed(expected)}", place, place + len(wrong))
 
 
