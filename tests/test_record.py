@@ -1,6 +1,7 @@
 """The record of a review: its keys and their order, its schema, and how it reaches a file."""
 
 import json
+import os
 import stat
 from decimal import Decimal
 from pathlib import Path
@@ -190,3 +191,18 @@ def test_a_report_that_cannot_be_written_is_refused_before_any_work(
     with pytest.raises(CalloutlintError) as caught:
         check_report_path(path)
     assert str(caught.value) == expected.format(path, path.parent)
+
+
+def test_a_report_that_may_not_be_written_is_refused_before_any_work(
+    tmp_path: Path, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    """Whoever runs the tests: what the system says of permissions is made up."""
+    path = tmp_path / "r.json"
+    monkeypatch.setattr(os, "access", lambda *_: False)
+    with pytest.raises(CalloutlintError) as caught:
+        check_report_path(path)
+    assert str(caught.value) == f"'{path}' cannot be written: the folder '{tmp_path}' takes no new files."
+    path.write_text("old")
+    with pytest.raises(CalloutlintError) as caught:
+        check_report_path(path)
+    assert str(caught.value) == f"'{path}' cannot be written: the file is write-protected."

@@ -140,7 +140,8 @@ def test_a_sheet_states_a_rule() -> None:
         (
             "redline ",
             "figures = ['hole.mmc', 'hole.mcm']\nredline ",
-            "h.toml: key 'figures.2': a hole has no fact 'mcm'; the nearest is 'mmc'\n    hole.mcm\n         ^^^",
+            "h.toml: key 'figures.2': a hole has no fact 'mcm'; the nearest is 'mmc'\n"
+            "    hole.mcm\n         ^^^",
         ),
     ],
 )
