@@ -1,18 +1,16 @@
 """Which holes the stated joints tie together: joints of the package, of its sheets, and of fastener notes."""
 
-import re
 from collections.abc import Iterator
 from dataclasses import dataclass, replace
 
+from calloutlint.facts.sides import side_by_words
 from calloutlint.facts.sizes import leading_size, stated_limits
 from calloutlint.model.callout import Callout, FastenerNote
 from calloutlint.model.drawing import Drawing, Package
 from calloutlint.model.fastener import Fastener, Hold, HoleRef, Joint
-from calloutlint.model.size import Deviations, Limits, PlusMinus, Size
+from calloutlint.model.size import Deviations, Limits, PlusMinus, Size, SizeForm
 from calloutlint.model.values import Value
 from calloutlint.units import Unit, convert
-
-_PIN = re.compile(r"\b(?:DOWELS?|PINS?)\b", re.IGNORECASE)
 
 
 @dataclass(frozen=True, slots=True)
@@ -26,12 +24,16 @@ class Member:
 
 @dataclass(frozen=True, slots=True)
 class StatedJoint:
-    """A stated joint with its balloons looked up; `home` is the drawing that states it, if any."""
+    """A stated joint with its balloons looked up; `home` is the drawing that states it, if any.
+
+    `noted` where no joint line states it, but a note beside the hole.
+    """
 
     joint: Joint
     home: Drawing | None
     holes: tuple[Member, ...]
     mates: tuple[Member, ...]
+    noted: bool = False
 
     @property
     def members(self) -> tuple[Member, ...]:
@@ -64,7 +66,7 @@ class Assembly:
         stated = [self._resolve(joint, home) for joint, home in _stated(package)]
         named = {id(member.callout) for joint in stated for member in joint.members}
         noted = [
-            self._resolve(_noted(callout, note), drawing)
+            replace(self._resolve(_noted(callout, note), drawing), noted=True)
             for drawing, callout, note in _notes(package)
             if id(callout) not in named
         ]
@@ -110,12 +112,18 @@ def _notes(package: Package) -> Iterator[tuple[Drawing, Callout, FastenerNote]]:
     for drawing in package.drawings:
         for callout in drawing.callouts:
             notes = (part for part in callout.parts if isinstance(part, FastenerNote))
-            yield from ((drawing, callout, note) for note in notes if not _sized_by_hole(note.fastener))
+            yield from ((drawing, callout, note) for note in notes if _joins(callout, note.fastener))
 
 
-def _sized_by_hole(fastener: Fastener) -> bool:
-    """Whether a note names a pin without its size (`FOR DOWEL PIN`), and so says no more than the hole."""
-    return fastener.thread is None and fastener.pin is None and bool(_PIN.search(fastener.text))
+def _joins(callout: Callout, fastener: Fastener) -> bool:
+    """Whether a note makes a joint: its callout is a hole, and it says the size of what goes in.
+
+    Flats, keyseats and slots are made for screws, keys and pins too; `FOR SCREW` says no more than the hole.
+    """
+    size = leading_size(callout)
+    hole = bool(callout.threads) or (size is not None and size.form is SizeForm.DIAMETER)
+    sized = fastener.thread is not None or fastener.pin is not None
+    return hole and sized and side_by_words(callout) is not False
 
 
 def _noted(callout: Callout, note: FastenerNote) -> Joint:
@@ -138,7 +146,8 @@ def _holds(callout: Callout, fastener: Fastener) -> bool:
     if hole is None or largest is None:
         return True
     unit, other = _unit_of(size), _unit_of(fastener.pin)
-    return hole[0] < (convert(largest, other, unit) if unit and other else largest)
+    thickest = convert(largest, other, unit) if unit and other else largest
+    return hole[0] < thickest or (pin is None and hole[0] == thickest)
 
 
 def _unit_of(size: Size) -> Unit | None:

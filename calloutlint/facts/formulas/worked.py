@@ -1,6 +1,6 @@
 """One joint worked out: from any two of fastener, hole and position tolerance the third, or all three judged.
 
-All lengths are exact decimals in one unit. Sources: ASME Y14.5, Appendix B, as `facts.formulas.fastening` names them.
+All lengths are exact decimals in one unit. Sources: ASME Y14.5, Appendix B, as in `facts.formulas.fastening`.
 """
 
 from collections.abc import Iterator

@@ -19,6 +19,14 @@ from calloutlint.trade.threads import series_has
 from calloutlint.units import Unit, convert
 
 _BESIDE = re.compile(r"\b(?:WASHERS?|NUTS?)\b", re.IGNORECASE)
+SEVERAL_STANDARDS: dict[str, dict[Head | None, str]] = {
+    "ISO 7045, ISO 7046-1 and ISO 1207": {
+        Head.PAN: "ISO 7045",
+        Head.FLAT: "ISO 7046-1",
+        Head.FILLISTER: "ISO 1207",
+    }
+}
+"""Tables that hold several standards: which one a head is from."""
 COUNTERSUNK = {Head.SOCKET_COUNTERSUNK, Head.FLAT}
 
 
@@ -65,9 +73,9 @@ class FastenerView(View):
 
     @cached_property
     def largest(self) -> Value | None:
-        """Its largest size with the unit that it is known in."""
+        """Its largest size with the unit that it is known in; None for a thread that the tables do not have."""
         if self.part.thread is not None:
-            return basic_major(self.part.thread)
+            return basic_major(self.part.thread) if self.known else None
         pin = self.part.pin
         if pin is None:
             return None
@@ -156,7 +164,11 @@ class FastenerView(View):
     @fact
     def seat_source(self) -> str:
         """The published standard of its head or washer; empty where no table has it."""
-        return self._seat.source if self._seat else ""
+        if self._seat is None:
+            return ""
+        several = SEVERAL_STANDARDS.get(self._seat.source, {})
+        own = self.part.standard if self.part.standard in self._seat.source.split(" and ") else None
+        return own or several.get(self.part.head, self._seat.source)
 
     @property
     def _bears_flat(self) -> bool:

@@ -106,11 +106,21 @@ class FixingView(PartView):
 
     def full_thread_in(self, unit: Unit | None) -> Decimal | None:
         """That depth in a unit. A depth without a tolerance is the least that is asked for."""
-        extent = self._thread.extent if self._thread else self._bore_extent
+        extent = self._extent
         if not isinstance(extent, Depth) or extent.size is None or extent.size.doubtful:
             return None
         limits = bounds(extent.size, unit)
         return limits[0] if limits else amount_in(extent.size.nominal, unit)
+
+    @fact
+    def depth_toleranced(self) -> bool:
+        """Whether that depth has a tolerance of its own, so that it is the least there is."""
+        extent = self._extent
+        return isinstance(extent, Depth) and extent.size is not None and extent.size.tolerance is not None
+
+    @property
+    def _extent(self) -> object:
+        return self._thread.extent if self._thread else self._bore_extent
 
     @property
     def _thread(self) -> Thread | None:
@@ -146,15 +156,17 @@ class FixingView(PartView):
     @fact
     def thread_matches(self) -> bool | None:
         """Whether its thread is the fastener's: diameter and pitch, coarse where a metric one states none."""
-        screw = self._joint.part.joint.fastener.thread
-        return None if screw is None or self._thread is None else screws_into(screw, self._thread)
+        return None if self._screw is None or self._thread is None else screws_into(self._screw, self._thread)
+
+    @property
+    def _screw(self) -> Thread | None:
+        """The fastener's thread; None where it has none, or none that the tables have."""
+        return self._joint.part.joint.fastener.thread if self.fastener.known else None
 
     @fact
     def pitch_open(self) -> bool:
         """Whether screw and hole have one diameter, and an inch size without a pitch leaves the rest open."""
-        return (
-            self._joint.part.joint.fastener.thread is not None and self.tapped and self.thread_matches is None
-        )
+        return self._screw is not None and self.tapped and self.thread_matches is None
 
 
 def _called(thread: Thread) -> str:

@@ -2,12 +2,14 @@
 
 from __future__ import annotations
 
+import re
 from decimal import Decimal
 
 from calloutlint.facts.sizes import amount_in, leading_size
 from calloutlint.facts.view import Length, fact, kept
+from calloutlint.facts.views.fastener import FastenerView
 from calloutlint.facts.views.part import PartView
-from calloutlint.model.callout import Callout, Meaning
+from calloutlint.model.callout import Callout, FastenerNote, Meaning, Part, Words
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import Depth, Size, SizeForm, SizeStatus, Through
@@ -18,6 +20,10 @@ from calloutlint.units import Unit, convert
 NOT_CLEARANCE = {StepKind.REAM, StepKind.TAP}
 FINISHED = {StepKind.REAM, StepKind.TAP, StepKind.BORE}
 INCH_PLACES = 3
+SCREWS = re.compile(r"\b(?:SCREWS?|BOLTS?|FASTENERS?|CAPSCREWS?|[SBF]HS?CS|HHCS)\b", re.IGNORECASE)
+OTHER_USE = re.compile(
+    r"\b(?:VENT\w*|DRAIN\w*|OIL\w*|PASSAGE\w*|LUBE|LUBRIC\w*|GREASE|WEEP|SIGHT|PORTS?|FOR)\b", re.IGNORECASE
+)
 SMALLEST_STEP = Decimal("0.00001")
 
 
@@ -63,13 +69,16 @@ class HoleView(PartView):
         return bool(self.part.threads)
 
     @fact
+    def fitted(self) -> bool:
+        """Whether it is finished to take what goes in: tapped, reamed, or with a fit code."""
+        coded = self._size is not None and self._size.fit is not None
+        return coded or self.threaded or any(step.kind in NOT_CLEARANCE for step in self.part.steps)
+
+    @fact
     def plain(self) -> bool:
-        """Whether it is a through hole as fasteners pass: no thread, fit code, ream or tap; steps allowed."""
+        """Whether it is a through hole as fasteners pass: not fitted; steps allowed."""
         size = self._size
-        if size is None or self.threaded or size.fit is not None or not self.through:
-            return False
-        finished = any(step.kind in NOT_CLEARANCE for step in self.part.steps)
-        return size.status is SizeStatus.TOLERANCED and not finished
+        return size is not None and self.through and not self.fitted and size.status is SizeStatus.TOLERANCED
 
     @fact
     def joined(self) -> bool:
@@ -79,7 +88,11 @@ class HoleView(PartView):
     @fact
     def clearance(self) -> bool:
         """Whether it is a clearance hole: stated by a joint, else assumed from the published sizes."""
-        return self.joined or self.presumed or self.guessed
+        return (self.joined and self._known_fastener) or self.presumed or self.guessed
+
+    @property
+    def _known_fastener(self) -> bool:
+        return any(FastenerView(fastener, self.unit).known for fastener in self._callout.fasteners)
 
     @fact
     def presumed(self) -> bool:
@@ -155,7 +168,9 @@ class HoleView(PartView):
 
     @property
     def _open_to_assumption(self) -> bool:
-        return not self._callout.in_any_joint and self.plain and not self.part.datum_features
+        if self._callout.in_any_joint or not self.plain or self.part.datum_features:
+            return False
+        return not any(_says_other_use(part) for part in self.part.parts)
 
     @fact
     def depth(self) -> Length | None:
@@ -173,6 +188,13 @@ class HoleView(PartView):
         """Depth of full thread as stated (nominal)."""
         depths = [t.extent.size for t in self.part.threads if isinstance(t.extent, Depth) and t.extent.size]
         return self._length(depths[0].nominal) if depths else None
+
+
+def _says_other_use(part: Part) -> bool:
+    """Whether words say that something else than a screw goes through: oil, sight, a rivet, a handle."""
+    if isinstance(part, FastenerNote):
+        return not SCREWS.search(part.fastener.text)
+    return isinstance(part, Words) and OTHER_USE.search(part.text) is not None
 
 
 def _admits(fastener: Fastener, nominal: Decimal, unit: Unit | None) -> bool:

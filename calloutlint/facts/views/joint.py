@@ -183,6 +183,16 @@ class MemberView(PartView):
         return is_located(self._callout)
 
     @fact
+    def owes_location(self) -> bool:
+        """Whether it has to be located by itself: a joint line names it, or it is a drilled clearance hole.
+
+        A note beside a reamed or tapped hole, or one with a fit code, says what goes in, not where it is.
+        """
+        if self._joint is None or not self._joint.part.noted:
+            return True
+        return self._joint.part.clearance != () and not self._callout.hole.fitted
+
+    @fact
     def frame_free_mates(self) -> tuple[str, ...]:
         """Other drawings' holes of the joint whose position has datums, where this has none; as balloons."""
         if self._joint is None or self._datums != 0 or self.part.datum_features:
