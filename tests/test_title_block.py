@@ -5,11 +5,15 @@ from time import perf_counter
 
 import pytest
 
-from calloutlint.model.drawing import SheetLine, System
+from calloutlint.callouts.write import Style
+from calloutlint.model.drawing import Package, SheetLine, System
 from calloutlint.reading.keys import is_known, normal_key
+from calloutlint.reading.sheet import parse_sheet
 from calloutlint.reading.standards import read_standard, read_unit
 from calloutlint.reading.title_block import TitleBlock, read_title_block
 from calloutlint.reading.tolerances import read_general_tolerances, read_process
+from calloutlint.reading.transcribe import transcribe
+from calloutlint.rulebook.rulebook import load_rulebook
 from calloutlint.units import Unit
 
 ASME, ISO = System.ASME, System.ISO
@@ -97,7 +101,15 @@ def test_units(written: str, unit: Unit | None) -> None:
         ("X ±0.5, X.X ±0.2, X.XX ±0.05", {0: "0.5", 1: "0.2", 2: "0.05"}),
         ("X ±0,5; X,X ±0,2", {0: "0.5", 1: "0.2"}),
         ("2 PLACE DECIMALS ±.01, THREE PLACE ±.005", {2: ".01", 3: ".005"}),
-        ("FRACTIONS ±1/32, .XX ±.01", {0: "1/32", 2: ".01"}),
+        ("FRACTIONS ±1/32, .XX ±.01", {2: ".01"}),
+        ("FRAC ±1/64, DEC .XX ±.01 .XXX ±.005, ANG ±1", {2: ".01", 3: ".005"}),
+        ("DIMENSIONS ARE IN INCHES. TOLERANCES: TWO PLACE DECIMAL ±.01 BEND ±1°", {2: ".01"}),
+        ("DECIMALS ±.005, FRACTIONS ±1/64", dict.fromkeys(range(7), ".005")),
+        ("±0,1, ±1°", dict.fromkeys(range(7), "0.1")),
+        (".XX ±.01, SURFACE FINISH 3.2", {2: ".01"}),
+        (".XX ±.01, BREAK SHARP EDGES .01 ±.005", {2: ".01"}),
+        (".XX ±.01, FILLETS AND ROUNDS R.03 MAX", {2: ".01"}),
+        ("PER ASME Y14.5-2018, .XX ±.01", {2: ".01"}),
         ("UNLESS OTHERWISE SPECIFIED .XX ±.01", {2: ".01"}),
         ("±0.1", dict.fromkeys(range(7), "0.1")),
     ],
@@ -117,6 +129,16 @@ def test_tolerances_by_places(written: str, places: dict[int, str]) -> None:
         ("angular ±30'", "30'", "0.5"),
         ("ANGLES +/- .5 DEG", ".5°", "0.5"),
         ("angles ±0.5", "0.5°", "0.5"),
+        ("angles ±1/2°", "1/2°", "0.5"),
+        ("ANGULAR ±1 1/2", "1 1/2°", "1.5"),
+        ("ANG ±0°30'", "0°30'", "0.5"),
+        ("ANG. ±0°30'00\"", "0°30'00\"", "0.5"),
+        ("FRAC ±1/64, DEC .XX ±.01 .XXX ±.005, ANG ±1", "1°", "1"),
+        ("FRACTIONAL ±1/64 ANGULAR: MACH ±1/2° BEND ±1°", "1/2°", "0.5"),
+        ("ANGLES ±30 MIN", "30'", "0.5"),
+        ("±0,1, ±1°", "1°", "1"),
+        ("X ±0.5, X° ±1°", "1°", "1"),
+        ("LINEAR: X ±0.5 X.X ±0.2 ANGULAR: X ±1°", "1°", "1"),
     ],
 )
 def test_tolerance_of_angles(written: str, text: str, degrees: str) -> None:
@@ -139,11 +161,56 @@ def test_tolerance_of_angles(written: str, text: str, degrees: str) -> None:
         ("ISO 2768-1 medium", "m", None),
         ("ISO 2768-f, ISO 2768-2 H", "f", "H"),
         ("ISO 8015, ISO 2768-mL", "m", "L"),
+        ("ISO 2768-1-m / ISO 2768-2-K", "m", "K"),
+        ("ISO 2768-1/-2 mK", "m", "K"),
+        ("ISO 2768-1/2-m-K", "m", "K"),
+        ("ISO 2768-1-m/2768-2-K", "m", "K"),
+        ("EN 22768-1 m", "m", None),
     ],
 )
 def test_tolerance_classes_of_iso_2768(written: str, linear: str, geometrical: str | None) -> None:
     general = read_general_tolerances(written, Unit.MM)
     assert (general.iso_2768, general.iso_2768_2, general.unread) == (linear, geometrical, ())
+
+
+@pytest.mark.parametrize(
+    ("written", "fractions"),
+    [
+        ("FRACTIONS ±1/32, .XX ±.01", "1/32"),
+        ("FRACTIONAL DIMENSIONS: ±1/64", "1/64"),
+        ("FRAC. ±1/16", "1/16"),
+        ("X/X ±1/64", "1/64"),
+        ("DECIMALS ±.005, FRACTIONS ±.015", ".015"),
+        ("±1/32", "1/32"),
+        ("DECIMALS ±.005", None),
+        ("X ±.03", None),
+    ],
+)
+def test_tolerance_of_fractions(written: str, fractions: str | None) -> None:
+    general = read_general_tolerances(written, Unit.INCH)
+    assert (general.fractions and general.fractions.text) == fractions
+    assert general.unread == ()
+
+
+@pytest.mark.parametrize(
+    ("written", "unchecked"),
+    [
+        ("ISO 22081", ("ISO 22081",)),
+        ("ISO 22081:2021, linear ±0.2, ⌓ 0.5 | A | B | C", ("⌓ 0.5 | A | B | C", "ISO 22081:2021")),
+        ("DIN EN ISO 13920-BF", ("ISO 13920-BF",)),
+        ("EN ISO 13920 - B", ("ISO 13920 - B",)),
+        ("ISO 8062-3 - DCTG 9", ("ISO 8062-3 - DCTG 9",)),
+        ("ISO 8062-3-DCTG 12-RMA 6 (RMAG H)", ("ISO 8062-3-DCTG 12-RMA 6 (RMAG H)",)),
+        ("ISO 8062-3 DCTG 9 GCTG 6, X ±0.5", ("ISO 8062-3 DCTG 9 GCTG 6",)),
+        ("ISO 2768-mK, ISO 13920-AE", ("ISO 13920-AE",)),
+        ("DIN 16742 TG6", ("DIN 16742 TG6",)),
+        ("0-6 ±0.1, 6-30 ±0.2", ("0-6 ±0.1", "6-30 ±0.2")),
+        ("X.X° ±0.5°", ("X.X° ±0.5°",)),
+    ],
+)
+def test_known_tolerances_that_are_not_tabulated(written: str, unchecked: tuple[str, ...]) -> None:
+    general = read_general_tolerances(written, Unit.MM)
+    assert (general.unchecked, general.unread) == (unchecked, ())
 
 
 def test_a_unit_beside_an_amount_outranks_the_sheet() -> None:
@@ -161,6 +228,10 @@ def test_a_unit_beside_an_amount_outranks_the_sheet() -> None:
         (".XX +.01/-.02", (".XX +.01/-.02",)),
         (".XX ±1/0", (".XX ±1/0",)),
         ("ISO 2768-m, ISO 2768-c", ("ISO 2768-c",)),
+        ("angles ±1°, angles ±0.5", ("angles ±0.5",)),
+        ("FRACTIONS ±1/32, FRACTIONS ±1/64", ("FRACTIONS ±1/64",)),
+        ("HOLES ±.005", ("HOLES ±.005",)),
+        ("see drawing 2768-m", ("see drawing 2768-m",)),
     ],
 )
 def test_tolerances_not_understood_are_kept(written: str, unread: tuple[str, ...]) -> None:
@@ -206,7 +277,13 @@ def test_usual_keys_are_known_and_unchecked(key: str) -> None:
         ("process: good", "'good' is no spread; expected such as location 0.05, size 0.02"),
         (
             "tolerances: as usual",
-            "not understood: 'as usual'; expected such as .XX ±.01, X.X ±0.2, angles ±1° or ISO 2768-m",
+            "'as usual' is no general tolerance; "
+            "expected such as .XX ±.01, X.X ±0.2, fractions ±1/64, angles ±1° or ISO 2768-m",
+        ),
+        (
+            "tolerances: as usual, or so",
+            "'as usual', 'or so' are no general tolerances; "
+            "expected such as .XX ±.01, X.X ±0.2, fractions ±1/64, angles ±1° or ISO 2768-m",
         ),
     ],
 )
@@ -272,6 +349,39 @@ def test_what_is_stated_first_holds_over_several_lines() -> None:
     assert (block.general.iso_2768, block.general.iso_2768_2) == ("m", "K")
     assert block.general.unread == ("ISO 2768-c",)
     assert [line.known for line in block.lines] == [True, False, True]
+
+
+FRACTIONS_IN_INCHES = "units: inch\ntolerances: FRACTIONS ±1/32, .XX ±.02, ANGULAR ±1/2°, SURFACE FINISH 63\n"
+
+
+@pytest.mark.parametrize(
+    ("title_block", "callouts", "found"),
+    [
+        (FRACTIONS_IN_INCHES, ["3/8", "⌀9/16 THRU", "R1/8", "2-3/4", "45°", ".50"], []),
+        (FRACTIONS_IN_INCHES, ["3/8", "⌀.5625 THRU"], ["SIZE-02"]),
+        ("units: inch\ntolerances: .XX ±.02\n", ["3/8"], ["SIZE-02"]),
+        ("units: mm\ntolerances: ±0,1, ±1°\n", ["⌀9.5 THRU", "45°"], []),
+        ("units: mm\ntolerances: ISO 13920-BF\n", ["250", "45°"], []),
+        ("units: mm\ntolerances: ISO 8062-3 - DCTG 9\n", ["⌀120", "R5"], []),
+        ("units: mm\ntolerances: ISO 22081\n", ["120"], []),
+        ("units: mm\ntolerances: as usual\n", ["120"], ["READ-02"]),
+    ],
+)
+def test_what_the_rules_make_of_general_tolerances(
+    title_block: str, callouts: list[str], found: list[str]
+) -> None:
+    standard = "ASME Y14.5-2018" if "inch" in title_block else "ISO 8015"
+    balloons = "".join(f"{number}) {callout}\n" for number, callout in enumerate(callouts, 1))
+    drawing = parse_sheet(f"drawing: SG-1\nrevision: A\nstandard: {standard}\n{title_block}{balloons}", "gate")
+    findings = load_rulebook().check(Package("gate", (drawing,)))
+    assert [finding.rule for finding in findings if finding.rule in {"SIZE-02", "READ-02"}] == found
+
+
+@pytest.mark.parametrize("style", Style)
+def test_tolerances_stand_the_same_when_written_out(style: Style) -> None:
+    text = "units: inch\ntolerances: FRACTIONS ±1/32, .XX ±.02, angles ±1/2°, ISO 13920-BF, SURFACE FINISH 63\n"
+    drawing = parse_sheet(text + "1) 3/8\n", "gate")
+    assert parse_sheet(transcribe(drawing, style), "gate") == drawing
 
 
 def test_a_unit_that_is_none_stands_in_the_lines() -> None:

@@ -40,8 +40,10 @@ class PlacesTolerance:
 class GeneralTolerances:
     """General tolerances of the title block: by places, or an ISO 2768 class; angles beside either.
 
-    `iso_2768` is the linear and angular class of ISO 2768-1 (`f`, `m`, `c`, `v`); `iso_2768_2` the
-    geometrical class of the withdrawn ISO 2768-2 (`H`, `K`, `L`). `unread` holds what was not understood.
+    `fractions` holds for sizes written as fractions. `iso_2768` is the linear and angular class of ISO 2768-1
+    (`f`, `m`, `c`, `v`); `iso_2768_2` the geometrical class of the withdrawn ISO 2768-2 (`H`, `K`, `L`).
+    `unchecked` holds general tolerances that are known but not tabulated (`ISO 13920-BF`), `unread` what was
+    not understood: either may cover a size that nothing else does.
     """
 
     written: str
@@ -50,6 +52,8 @@ class GeneralTolerances:
     iso_2768: str | None = None
     iso_2768_2: str | None = None
     unread: tuple[str, ...] = ()
+    fractions: Value | None = None
+    unchecked: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)
@@ -111,8 +115,8 @@ class Drawing:
 class Package:
     """Drawings reviewed together, with the joints that tie them.
 
-    `gate` is the grade at which a run fails; `house` are folders of house rule sheets, `waivers` files of
-    recorded waivers, both as paths that can be opened.
+    `gate` is the grade at which a run fails; `house` are folders of house rule sheets, as paths that can be
+    opened.
     """
 
     name: str
@@ -120,4 +124,3 @@ class Package:
     joints: tuple[Joint, ...] = ()
     gate: str | None = None
     house: tuple[str, ...] = ()
-    waivers: tuple[str, ...] = ()

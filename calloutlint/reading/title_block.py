@@ -9,12 +9,14 @@ from calloutlint.model.fastener import Fastener, Joint
 from calloutlint.reading.joints import JointTextError, parse_joint, spelled_fastener
 from calloutlint.reading.keys import READ, REPEATABLE
 from calloutlint.reading.standards import read_standard, read_unit
-from calloutlint.reading.tolerances import ToleranceLines, decimal_points, read_process
+from calloutlint.reading.tolerance_words import decimal_points
+from calloutlint.reading.tolerances import ToleranceLines, read_process
 from calloutlint.units import Unit
 
 LONGEST_VALUE = 500
 """Characters of a value that is read for what it means; no title block has as many."""
 _SHOWN = 60
+_TOLERANCES_FORM = "expected such as .XX ±.01, X.X ±0.2, fractions ±1/64, angles ±1° or ISO 2768-m"
 
 
 @dataclass(slots=True)
@@ -71,10 +73,11 @@ def _take_standard(block: TitleBlock, pair: SheetLine) -> None:
 
 
 def _take_tolerances(block: TitleBlock, pair: SheetLine) -> str | None:
-    pieces = ", ".join(map(repr, block.tolerances.read(pair.value)))
+    pieces = block.tolerances.read(pair.value)
     if not pieces:
         return None
-    return f"not understood: {pieces}; expected such as .XX ±.01, X.X ±0.2, angles ±1° or ISO 2768-m"
+    told = "is no general tolerance" if len(pieces) == 1 else "are no general tolerances"
+    return f"{', '.join(map(repr, pieces))} {told}; {_TOLERANCES_FORM}"
 
 
 def _take_process(block: TitleBlock, pair: SheetLine) -> str | None:

@@ -1,67 +1,74 @@
 """The `tolerances` and `process` lines of a title block."""
 
 import re
-from collections.abc import Iterable, Iterator
-from dataclasses import dataclass, field
+from collections.abc import Iterable
+from dataclasses import dataclass, field, replace
 
 from calloutlint.callouts.value import parse_value
 from calloutlint.model.drawing import GeneralTolerances, PlacesTolerance, Process
 from calloutlint.model.values import Value
+from calloutlint.reading.tolerance_words import (
+    ADOPTED,
+    FILLER,
+    NUMBER,
+    PROFILE,
+    UNCHECKED,
+    decimal_points,
+    spelled,
+)
 from calloutlint.units import Unit
 
 MOST_PLACES = 6
 
-_SPELLINGS = (
-    (re.compile(r"%%p|\\U\+00B1|<MOD-PM>|\+\s*/\s*-|\+-", re.IGNORECASE), "±"),
-    (re.compile(r"%%d|\\U\+00B0|<MOD-DEG>|(?<=\d)\s*(?:degrees?|degs?)\b\.?|º|˚", re.IGNORECASE), "°"),
-    (re.compile(r"[′’]"), "'"),
-    (re.compile(r"[″”]"), '"'),
-    (re.compile(r"[‐‑–−]"), "-"),
-)
 _COUNTS = {"one": 1, "two": 2, "three": 3, "four": 4}
-_NUMBER = r"(?:(?:\d+\s+)?\d+/[1-9]\d*|\d*\.\d+|\d+\.?(?!/))"
 _UNIT = r"(?:\s*(?P<unit>mm|in(?:ch(?:es)?)?\b\.?|\"))?"
-_AMOUNT = rf"[\s=:]*±\s*(?P<amount>{_NUMBER}){_UNIT}"
-_ANGLE = r"[\s=:]*±\s*(?:(?P<degrees>\d*\.?\d+)\s*(?:°|(?!['\d])))?\s*(?:(?P<minutes>\d+)\s*')?"
+_AMOUNT = rf"[\s=:]*±\s*(?P<amount>{NUMBER})(?![\d/.]*\s*[°']){_UNIT}"
+_ANGLE = (
+    rf"[\s=:]*±\s*(?:(?P<degrees>{NUMBER})\s*(?:°|(?![\d/.]*\s*')(?!\d)))?"
+    r"\s*(?:(?P<minutes>\d+)\s*')?\s*(?:(?P<seconds>\d+)\s*\")?"
+)
+_DIMENSIONS = r"(?:[\s:]*(?:dim(?:ension)?s?|tol(?:erance)?s?)\b\.?)*"
 
 _ISO_2768 = re.compile(
     r"""
-    (?:(?:DIN|EN|BS|NF)[\s-]+){0,3} ISO\s*2768
-    (?:\s*-\s*[12](?!\d))? (?:\s*:\s*\d{4})? \s*-?\s*
-    (?P<linear>fine|medium|coarse|very\ coarse|[fmcv])? \s*
+    (?:\bISO[\s-]*|\bEN\s*2|(?<=/)) 2768                # EN 22768 is ISO 2768 under another number
+    (?:\s*-?\s*(?:part\s*|T)?[12](?!\d))? (?:\s*[/&+]\s*-?\s*2(?!\d))? (?:\s*:\s*\d{4})? \s*-?\s*
+    (?P<linear>fine|medium|coarse|very\ coarse|[fmcv])? \s*-?\s*
     (?P<geometrical>[HKL])?
     (?:\s*-\s*E)? \b                                  # E: the envelope requirement of ISO 2768-2
     """,
     re.IGNORECASE | re.VERBOSE,
 )
-_ANGLES = re.compile(rf"(?:angles?|angular|ang\b\.?|∠){_ANGLE}", re.IGNORECASE)
+_RANGES = re.compile(
+    rf"(?:over\s*)?{NUMBER}\s*(?:mm\s*)?(?:-|to|up\ to|…)\s*{NUMBER}\s*{_AMOUNT}", re.IGNORECASE
+)
+_ANGLES_BY_PLACES = re.compile(rf"X{{0,3}}\.X{{1,3}}\s*°{_ANGLE}", re.IGNORECASE)
+_ANGLES = re.compile(
+    rf"(?:\bangles?\b|\bangular\b|\bang\b\.?|∠|(?<![\w.])X{{1,3}}\s*°){_DIMENSIONS}(?:[\s:]*(?:mach\w*\.?|X\b))?{_ANGLE}",
+    re.IGNORECASE,
+)
+_BENDS = re.compile(rf"\bbends?\b{_ANGLE}", re.IGNORECASE)
 _PLACES = re.compile(
-    rf"(?<![\w.])(?:[X0]{{0,4}}\.(?P<places>X{{1,6}}|0{{1,6}})|X{{1,4}}|0)(?![\w.]){_AMOUNT}", re.IGNORECASE
+    rf"(?<![\w./])(?:[X0]{{0,4}}\.(?P<places>X{{1,6}}|0{{1,6}})|X{{1,4}}|0)(?![\w.]){_AMOUNT}", re.IGNORECASE
 )
 _PLACE_WORD = r"(?:pl(?:aces?|cs?)?|decimals?|dec|dims?)\b\.?"
 _IN_WORDS = re.compile(
     rf"(?P<count>\d|one|two|three|four)[\s-]*{_PLACE_WORD}(?:\s*{_PLACE_WORD})*{_AMOUNT}", re.IGNORECASE
 )
-_FRACTIONS = re.compile(rf"fraction(?:s|al)?\b{_AMOUNT}", re.IGNORECASE)
-_ANY = re.compile(_AMOUNT, re.IGNORECASE)
-_FILLER = re.compile(
-    r"""
-    \bunless\ otherwise\ (?:specified|stated|noted|indicated|shown)\b | \buos\b
-    | \b(?:general|tolerances?|tols?|linear|decimals?|dimensions?|dims?|sizes?)\b\.?
-    | \b(?:and|are|in\ inch(?:es)?|in\ mm|on|per|to)\b
-    | \bISO\s*8015(?!\d)                                # a principle, no tolerance
-    """,
-    re.IGNORECASE | re.VERBOSE,
-)
+_FRACTIONS = re.compile(rf"(?:\bfrac(?:tion(?:s|al)?)?\b\.?|\bX/X\b){_DIMENSIONS}{_AMOUNT}", re.IGNORECASE)
+_DECIMALS = re.compile(rf"\bdec(?:imals?)?\b\.?{_DIMENSIONS}{_AMOUNT}", re.IGNORECASE)
+_BARE_ANGLE = re.compile(rf"(?=.*[°']){_ANGLE}")
+_BARE = re.compile(_AMOUNT, re.IGNORECASE)
 _SEPARATOR = re.compile(r"[,;|]")
-_PROCESS = re.compile(rf"(?P<what>location|position|size)[\s=:]*(?P<amount>{_NUMBER}){_UNIT}", re.IGNORECASE)
+_PROCESS = re.compile(rf"(?P<what>location|position|size)[\s=:]*(?P<amount>{NUMBER}){_UNIT}", re.IGNORECASE)
 
 
 def read_general_tolerances(written: str, unit: Unit | None) -> GeneralTolerances:
     """General tolerances by decimal places or ISO 2768 class, with the angular one.
 
-    An amount without a unit of its own is in `unit`. A bare `±0.2` holds for every number of places, one for
-    fractions for sizes without decimals. What is not understood is in `unread`.
+    An amount without a unit of its own is in `unit`. A bare `±0.2` holds for every number of places and for
+    fractions, a bare `±1°` for angles. Standards that are not tabulated are in `unchecked`, what is not
+    understood is in `unread`.
     """
     found = ToleranceLines(unit)
     found.read(written)
@@ -84,7 +91,9 @@ class ToleranceLines:
     unit: Unit | None
     written: list[str] = field(default_factory=list)
     unread: list[str] = field(default_factory=list)
+    unchecked: list[str] = field(default_factory=list)
     places: list[PlacesTolerance] = field(default_factory=list)
+    fractions: Value | None = None
     angle: Value | None = None
     linear: str | None = None
     geometrical: str | None = None
@@ -92,30 +101,52 @@ class ToleranceLines:
     @property
     def general(self) -> GeneralTolerances:
         """What all lines read so far state together."""
-        written = ", ".join(self.written)
-        places, unread = tuple(self.places), tuple(self.unread)
-        return GeneralTolerances(written, places, self.angle, self.linear, self.geometrical, unread)
+        return GeneralTolerances(
+            written=", ".join(self.written),
+            places=tuple(self.places),
+            angle=self.angle,
+            iso_2768=self.linear,
+            iso_2768_2=self.geometrical,
+            unread=tuple(self.unread),
+            fractions=self.fractions,
+            unchecked=tuple(self.unchecked),
+        )
 
     def read(self, written: str) -> tuple[str, ...]:
         """Takes one line in; what of it is not understood."""
-        text = decimal_points(_spelled(written))
+        text = decimal_points(spelled(written))
         self.written.append(text)
-        unread = tuple(piece for clause in _SEPARATOR.split(text) for piece in self._read_clause(clause))
-        self.unread += unread
-        return unread
+        known = len(self.unread)
+        for clause in _SEPARATOR.split(PROFILE.sub(self._not_tabulated, text)):
+            self._read_clause(clause)
+        return tuple(self.unread[known:])
 
-    def _read_clause(self, rest: str) -> Iterator[str]:
+    def _read_clause(self, clause: str) -> None:
+        rest = UNCHECKED.sub(self._not_tabulated, _ISO_2768.sub(self._iso_2768_class, ADOPTED.sub(" ", clause)))
+        if "±" in rest:
+            rest = self._without_amounts(rest)
+        rest = FILLER.sub(";", rest)
+        pieces = [piece for part in rest.split(";") if (piece := part.strip(" :/-()").rstrip(". "))]
+        alone = all(_BARE_ANGLE.fullmatch(piece) or _BARE.fullmatch(piece) for piece in pieces)
+        for piece in pieces:
+            if alone:
+                self._for_all(piece)
+            else:
+                self._refused(piece)
+
+    def _without_amounts(self, rest: str) -> str:
         for pattern, take in (
-            (_ISO_2768, self._iso_2768_class),
-            (_ANGLES, self._angle_tolerance),
+            (_RANGES, self._not_tabulated),
+            (_ANGLES_BY_PLACES, self._not_tabulated),
+            (_ANGLES, self._for_angles),
+            (_BENDS, lambda match: ";"),
             (_FRACTIONS, self._for_fractions),
             (_IN_WORDS, self._for_counted_places),
             (_PLACES, self._for_written_places),
-            (_ANY, self._for_all_places),
-            (_FILLER, lambda match: ";"),
+            (_DECIMALS, self._for_decimals),
         ):
             rest = pattern.sub(take, rest)
-        yield from (piece for part in rest.split(";") if (piece := part.strip(" :/-()")))
+        return rest
 
     def _iso_2768_class(self, match: re.Match[str]) -> str:
         linear = match["linear"] and match["linear"][0].lower()
@@ -125,16 +156,25 @@ class ToleranceLines:
         self.linear, self.geometrical = linear or self.linear, geometrical or self.geometrical
         return ";"
 
-    def _angle_tolerance(self, match: re.Match[str]) -> str:
-        degrees, minutes = match["degrees"], match["minutes"]
-        if self.angle or not (degrees or minutes):
-            return match[0]
-        text = (f"{degrees}°" if degrees else "") + (f"{minutes}'" if minutes else "")
-        self.angle = parse_value(text, Unit.DEGREE)
+    def _refused(self, written: str) -> str:
+        self.unread.append(written.strip())
+        return ";"
+
+    def _not_tabulated(self, match: re.Match[str]) -> str:
+        self.unchecked.append(match[0].strip())
+        return ";"
+
+    def _for_angles(self, match: re.Match[str]) -> str:
+        if self.angle or not (match["degrees"] or match["minutes"]):
+            return self._refused(match[0])
+        self.angle = _angle(match)
         return ";"
 
     def _for_fractions(self, match: re.Match[str]) -> str:
-        return self._add((0,), match)
+        if self.fractions:
+            return self._refused(match[0])
+        self.fractions = _length(match, self.unit)
+        return ";"
 
     def _for_counted_places(self, match: re.Match[str]) -> str:
         count = match["count"].lower()
@@ -143,8 +183,16 @@ class ToleranceLines:
     def _for_written_places(self, match: re.Match[str]) -> str:
         return self._add((len(match["places"] or ""),), match)
 
-    def _for_all_places(self, match: re.Match[str]) -> str:
+    def _for_decimals(self, match: re.Match[str]) -> str:
         return self._add(range(MOST_PLACES + 1), match)
+
+    def _for_all(self, piece: str) -> None:
+        """Takes an amount that stands alone: in degrees for angles, else for all other sizes."""
+        if (match := _BARE_ANGLE.fullmatch(piece)) is not None:
+            self._for_angles(match)
+        elif (match := _BARE.fullmatch(piece)) is not None:
+            self._add(range(MOST_PLACES + 1), match)
+            self.fractions = self.fractions or _length(match, self.unit)
 
     def _add(self, places: Iterable[int], match: re.Match[str]) -> str:
         amount = _length(match, self.unit)
@@ -157,12 +205,10 @@ def _length(match: re.Match[str], unit: Unit | None) -> Value:
     return parse_value(match["amount"], (Unit.MM if own.lower() == "mm" else Unit.INCH) if own else unit)
 
 
-def _spelled(written: str) -> str:
-    for spelling, canonical in _SPELLINGS:
-        written = spelling.sub(canonical, written)
-    return " ".join(written.split())
-
-
-def decimal_points(text: str) -> str:
-    """The text with a point for every decimal comma: between two digits, or in `X,X`."""
-    return re.sub(r"(?<=\d),(?=\d)|(?<=[Xx]),(?=[Xx])", ".", text)
+def _angle(match: re.Match[str]) -> Value:
+    degrees, minutes, seconds = match["degrees"], match["minutes"], match["seconds"]
+    if degrees and "/" in degrees:
+        fraction = parse_value(degrees, Unit.DEGREE)
+        return replace(fraction, text=f"{fraction.text}°")
+    marked = ((degrees, "°"), (minutes, "'"), (seconds, '"'))
+    return parse_value("".join(f"{number}{mark}" for number, mark in marked if number), Unit.DEGREE)

@@ -57,18 +57,19 @@ def geometrical(characteristic: Characteristic, length_mm: Decimal, class_: str)
 def general_tolerance(general: GeneralTolerances, size: Size, unit: Unit | None) -> Decimal | None:
     """The ± amount that the title block gives to a size, in the drawing's `unit`; degrees for an angle.
 
-    By places as written, or by ISO 2768-1 class, whose ranges are in mm and are converted exactly; radii go
-    by its table of broken edges. A drawing that states no unit is taken to be in mm there, as ISO drawings
-    are. A tolerance of the size's own does not matter here. None where nothing covers the size: basic,
-    reference, MAX and MIN sizes, limits, a fraction under tolerances by places, a size outside the table.
+    By places or as a fraction, as written, or by ISO 2768-1 class, whose ranges are in mm and are converted
+    exactly; radii go by its table of broken edges. A drawing that states no unit is taken to be in mm there,
+    as ISO drawings are. A tolerance of the size's own does not matter here. None where nothing covers the
+    size: basic, reference, MAX and MIN sizes, limits, a fraction where only places are stated, a size outside
+    the table.
     """
     if size.nominal is None or size.status is not SizeStatus.TOLERANCED:
         return None
     if size.form is SizeForm.ANGLE:
         return general_angle(general)
-    by_places = _by_places(general, size.nominal)
-    if by_places is not None or general.iso_2768 is None:
-        return by_places
+    as_written = _as_written(general, size.nominal)
+    if as_written is not None or general.iso_2768 is None:
+        return as_written
     return _by_class(general.iso_2768, size.form, size.nominal, unit or Unit.MM)
 
 
@@ -91,13 +92,13 @@ def covers_angles(general: GeneralTolerances) -> bool:
     return general.angle is not None or general.iso_2768 is not None
 
 
-def _by_places(general: GeneralTolerances, nominal: Value) -> Decimal | None:
-    if "/" in nominal.text:
-        return None
-    for entry in general.places:
-        if entry.places == nominal.places and _same_unit(entry.amount.unit, nominal.unit):
-            return entry.amount.amount
-    return None
+def _as_written(general: GeneralTolerances, nominal: Value) -> Decimal | None:
+    """By places; a fraction, and a whole number where its places say nothing, by the tolerance of fractions."""
+    by_places = [entry.amount for entry in general.places if entry.places == nominal.places]
+    amounts = [] if "/" in nominal.text else by_places
+    if general.fractions is not None and nominal.places == 0:
+        amounts.append(general.fractions)
+    return next((amount.amount for amount in amounts if _same_unit(amount.unit, nominal.unit)), None)
 
 
 def _same_unit(first: Unit | None, second: Unit | None) -> bool:

@@ -91,6 +91,26 @@ def test_by_places_does_not_cover_a_fraction_or_another_unit() -> None:
     assert trade.general_tolerance(INCH_BY_PLACES, size("6.35", Unit.MM), Unit.INCH) is None
 
 
+FRACTIONS = GeneralTolerances(
+    written="FRACTIONS ±1/32, .XX ±.01",
+    places=(PlacesTolerance(2, Value(".01", Decimal(".01"), Unit.INCH)),),
+    fractions=Value("1/32", Decimal("0.03125"), Unit.INCH),
+)
+
+
+@pytest.mark.parametrize(("text", "amount"), [("1 1/2", "1.5"), ("9/16", "0.5625"), ("2", "2")])
+def test_fractions_and_whole_inches_go_by_the_tolerance_of_fractions(text: str, amount: str) -> None:
+    """Common practice, no source."""
+    written = Size(SizeForm.DIAMETER, Value(text, Decimal(amount), Unit.INCH))
+    assert trade.general_tolerance(FRACTIONS, written, Unit.INCH) == Decimal("0.03125")
+
+
+def test_the_tolerance_of_fractions_covers_no_decimal() -> None:
+    assert trade.general_tolerance(FRACTIONS, size(".50", Unit.INCH), Unit.INCH) == Decimal(".01")
+    assert trade.general_tolerance(FRACTIONS, size(".500", Unit.INCH), Unit.INCH) is None
+    assert trade.general_tolerance(FRACTIONS, size("2", Unit.MM), Unit.INCH) is None
+
+
 def test_class_on_an_inch_drawing_is_converted_exactly() -> None:
     """ISO 2768-1 class m from 6 to 30 mm is ±0.2 mm; 30 mm is 1.1811… in, so 1.1811 is inside, 1.1812 not."""
     inside = trade.general_tolerance(ISO_MEDIUM, size("1.1811", Unit.INCH), Unit.INCH)

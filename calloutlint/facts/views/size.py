@@ -159,11 +159,11 @@ class SizeView(PartView):
 
     @fact
     def covered(self) -> bool | None:
-        """Whether general tolerances cover this size; unknown where they were not fully read."""
+        """Whether general tolerances cover this size; unknown where not all of them are read and tabulated."""
         tolerances = self.drawing_model.general
         if self.general is not None or (tolerances and self._is_covered_angle(tolerances)):
             return True
-        return None if tolerances is not None and tolerances.unread else False
+        return None if tolerances and (tolerances.unread or tolerances.unchecked) else False
 
     def _is_covered_angle(self, tolerances: GeneralTolerances) -> bool:
         return self.part.form is SizeForm.ANGLE and covers_angles(tolerances)
