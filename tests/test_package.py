@@ -11,7 +11,7 @@ from calloutlint.reading.package import demo_package, read_package
 from calloutlint.rulebook.finding import Grade
 from calloutlint.rulebook.rulebook import load_rulebook
 
-KEYS = "name, drawings, joints, house, waivers, gate"
+KEYS = "name, drawings, joints, house, gate"
 SHEET = "drawing: {}\nrevision: A\nstandard: ASME Y14.5-2018\nunits: mm\n\n4) 4X ⌀6.6 +0.2 0 THRU\n"
 
 
@@ -49,14 +49,13 @@ def test_a_definition_names_sheets_joints_gate_and_rules(folder: Path) -> None:
     define(
         folder,
         'name = "Trash rack"\r\n'
-        'drawings = ["tr-*.txt"]\r\ngate = "minor"\r\nhouse = ["rules"]\r\nwaivers = ["waivers.toml"]\r\n'
+        'drawings = ["tr-*.txt"]\r\ngate = "minor"\r\nhouse = ["rules"]\r\n'
         'joints = ["bar bolts = TR-1:4 with M6 hex head bolt, fixed in TR-9:1"]\r\n',
     )
     package = read_package([folder])
     assert (package.name, package.gate) == ("Trash rack", "minor")
     assert [drawing.name for drawing in package.drawings] == ["TR-1"]
     assert package.house == (str(folder / "rules"),)
-    assert package.waivers == (str(folder / "waivers.toml"),)
     (joint,) = package.joints
     assert (joint.holes, joint.mates) == ((HoleRef("TR-1", "4"),), (HoleRef("TR-9", "1"),))
     assert read_package([folder / "package.toml"]) == package
@@ -126,14 +125,18 @@ def test_a_loop_of_folders_is_no_trap(folder: Path) -> None:
             "drawings: 'x.txt' stands here; a list of texts was expected, such as drawings = [\"sg-*.txt\"]",
         ),
         (
-            "waivers = {file = 'x.toml'}",
-            "waivers: {'file': 'x.toml'} stands here; "
-            'a list of texts was expected, such as waivers = ["waivers.toml"]',
+            "house = {file = 'x.toml'}",
+            "house: {'file': 'x.toml'} stands here; "
+            'a list of texts was expected, such as house = ["rules"]',
         ),
         (
-            'waivers = "' + "x" * 400 + '"',
-            f"waivers: '{'x' * 12}...{'x' * 13}' stands here; "
-            'a list of texts was expected, such as waivers = ["waivers.toml"]',
+            'house = "' + "x" * 400 + '"',
+            f"house: '{'x' * 12}...{'x' * 13}' stands here; "
+            'a list of texts was expected, such as house = ["rules"]',
+        ),
+        (
+            "waivers = ['waivers.toml']",
+            "waivers: this version reads none, and would report what is waived as if it were not",
         ),
         ("drawings = [1]", "drawings[0]: 1 stands here; a text was expected"),
         ('drawings = ["zz*.txt"]', "drawings[0]: no file matches 'zz*.txt'"),

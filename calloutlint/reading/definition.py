@@ -18,7 +18,6 @@ _EXAMPLES = {
     "drawings": "sg-*.txt",
     "joints": "cover screws = SG-2207:4 with M6 socket head cap screw, fixed in SG-2210:7, projection 12",
     "house": "rules",
-    "waivers": "waivers.toml",
 }
 
 
@@ -30,7 +29,6 @@ class Definition(NamedTuple):
     drawings: tuple[str, ...] = ()
     joints: tuple[Joint, ...] = ()
     house: tuple[str, ...] = ()
-    waivers: tuple[str, ...] = ()
     gate: str | None = None
 
 
@@ -47,6 +45,10 @@ def read_definition(folder: Path) -> Definition:
     except UnicodeDecodeError:
         raise SheetError(f"{file}: this is no TOML: the text is not UTF-8") from None
     table = read_toml(text, str(file))
+    if "waivers" in table:
+        raise SheetError(
+            f"{file}: waivers: this version reads none, and would report what is waived as if it were not"
+        )
     unknown = [key for key in table if key not in _CHECKS]
     if unknown:
         raise SheetError(f"{file}: {unknown[0]!r} is no key of a package; known are {', '.join(_CHECKS)}")
@@ -97,6 +99,5 @@ _CHECKS: dict[str, Callable[[Path, str, Any], Any]] = {
     "drawings": _texts,
     "joints": _joints,
     "house": _texts,
-    "waivers": _texts,
     "gate": _gate,
 }

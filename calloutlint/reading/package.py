@@ -33,7 +33,6 @@ def read_package(paths: Sequence[Path]) -> Package:
         joints=tuple(joint for definition in definitions for joint in definition.joints),
         gate=max((d.gate for d in definitions if d.gate), key=GATES.index, default=None),
         house=tuple(str(d.file.parent / folder) for d in definitions for folder in d.house),
-        waivers=tuple(str(d.file.parent / file) for d in definitions for file in d.waivers),
     )
 
 
