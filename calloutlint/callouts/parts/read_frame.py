@@ -24,6 +24,10 @@ class FrameRead:
     scopes: list[Token]
 
 
+BESIDE = {"SCOPE", "WORD"}
+"""What may stand on a frame's line without being of the frame."""
+
+
 def read_frame(pieces: Sequence[Token], line: Line, above: Characteristic | None = None) -> FrameRead:
     """The segments on one line; `above` is the characteristic that a composite's lower segment goes on with."""
     characteristic = above or CHARACTERISTICS[pieces[0][-1]]
@@ -35,7 +39,8 @@ def read_frame(pieces: Sequence[Token], line: Line, above: Characteristic | None
         reader = SegmentReader(line, barred=any(bars), boxed=boxed)
         reader.read(segment)
         first = segment[0] if read.segments else pieces[0]
-        span = line.span(first, segment[-1] if segment else first)
+        own = [piece for piece in segment if piece.type not in BESIDE]
+        span = line.span(first, own[-1] if own else first)
         read.segments.append(reader.finish(characteristic, span))
         read.words.extend(reader.words)
         read.unread.extend(reader.unread)
