@@ -24,7 +24,7 @@ class FrameRead:
     scopes: list[Token]
 
 
-BESIDE = {"SCOPE", "WORD"}
+BESIDE = {"SCOPE"}
 """What may stand on a frame's line without being of the frame."""
 
 
