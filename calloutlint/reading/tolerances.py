@@ -7,10 +7,10 @@ from dataclasses import dataclass, field, replace
 from calloutlint.callouts.value import parse_value
 from calloutlint.model.drawing import GeneralTolerances, PlacesTolerance, Process
 from calloutlint.model.values import Value
+from calloutlint.reading import tolerance_forms as forms
 from calloutlint.reading.tolerance_words import (
     ADOPTED,
     FILLER,
-    NUMBER,
     PROFILE,
     UNCHECKED,
     decimal_points,
@@ -21,46 +21,7 @@ from calloutlint.units import Unit
 MOST_PLACES = 6
 
 _COUNTS = {"one": 1, "two": 2, "three": 3, "four": 4}
-_UNIT = r"(?:\s*(?P<unit>mm|in(?:ch(?:es)?)?\b\.?|\"))?"
-_AMOUNT = rf"[\s=:]*±\s*(?P<amount>{NUMBER})(?![\d/.]*\s*[°']){_UNIT}"
-_ANGLE = (
-    rf"[\s=:]*±\s*(?:(?P<degrees>{NUMBER})\s*(?:°|(?![\d/.]*\s*')(?!\d)))?"
-    r"\s*(?:(?P<minutes>\d+)\s*')?\s*(?:(?P<seconds>\d+)\s*\")?"
-)
-_DIMENSIONS = r"(?:[\s:]*(?:dim(?:ension)?s?|tol(?:erance)?s?)\b\.?)*"
-
-_ISO_2768 = re.compile(
-    r"""
-    (?:\bISO[\s-]*|\bEN\s*2|(?<=/)) 2768                # EN 22768 is ISO 2768 under another number
-    (?:\s*-?\s*(?:part\s*|T)?[12](?!\d))? (?:\s*[/&+]\s*-?\s*2(?!\d))? (?:\s*:\s*\d{4})? \s*-?\s*
-    (?P<linear>fine|medium|coarse|very\ coarse|[fmcv])? \s*-?\s*
-    (?P<geometrical>[HKL])?
-    (?:\s*-\s*E)? \b                                  # E: the envelope requirement of ISO 2768-2
-    """,
-    re.IGNORECASE | re.VERBOSE,
-)
-_RANGES = re.compile(
-    rf"(?:over\s*)?{NUMBER}\s*(?:mm\s*)?(?:-|to|up\ to|…)\s*{NUMBER}\s*{_AMOUNT}", re.IGNORECASE
-)
-_ANGLES_BY_PLACES = re.compile(rf"X{{0,3}}\.X{{1,3}}\s*°{_ANGLE}", re.IGNORECASE)
-_ANGLES = re.compile(
-    rf"(?:\bangles?\b|\bangular\b|\bang\b\.?|∠|(?<![\w.])X{{1,3}}\s*°){_DIMENSIONS}(?:[\s:]*(?:mach\w*\.?|X\b))?{_ANGLE}",
-    re.IGNORECASE,
-)
-_BENDS = re.compile(rf"\bbends?\b{_ANGLE}", re.IGNORECASE)
-_PLACES = re.compile(
-    rf"(?<![\w./])(?:[X0]{{0,4}}\.(?P<places>X{{1,6}}|0{{1,6}})|X{{1,4}}|0)(?![\w.]){_AMOUNT}", re.IGNORECASE
-)
-_PLACE_WORD = r"(?:pl(?:aces?|cs?)?|decimals?|dec|dims?)\b\.?"
-_IN_WORDS = re.compile(
-    rf"(?P<count>\d|one|two|three|four)[\s-]*{_PLACE_WORD}(?:\s*{_PLACE_WORD})*{_AMOUNT}", re.IGNORECASE
-)
-_FRACTIONS = re.compile(rf"(?:\bfrac(?:tion(?:s|al)?)?\b\.?|\bX/X\b){_DIMENSIONS}{_AMOUNT}", re.IGNORECASE)
-_DECIMALS = re.compile(rf"\bdec(?:imals?)?\b\.?{_DIMENSIONS}{_AMOUNT}", re.IGNORECASE)
-_BARE_ANGLE = re.compile(rf"(?=.*[°']){_ANGLE}")
-_BARE = re.compile(_AMOUNT, re.IGNORECASE)
 _SEPARATOR = re.compile(r"[,;|]")
-_PROCESS = re.compile(rf"(?P<what>location|position|size)[\s=:]*(?P<amount>{NUMBER}){_UNIT}", re.IGNORECASE)
 
 
 def read_general_tolerances(written: str, unit: Unit | None) -> GeneralTolerances:
@@ -78,7 +39,7 @@ def read_general_tolerances(written: str, unit: Unit | None) -> GeneralTolerance
 def read_process(written: str, unit: Unit | None) -> Process | None:
     """The stated spread `location 0.05, size 0.02`; None where neither can be read."""
     text = decimal_points(written)
-    matches = _PROCESS.finditer(text)
+    matches = forms.PROCESS.finditer(text)
     found = {match["what"].lower(): _length(match, unit) for match in matches}
     location, size = found.get("location") or found.get("position"), found.get("size")
     return Process(text, location, size) if location or size else None
@@ -122,12 +83,13 @@ class ToleranceLines:
         return tuple(self.unread[known:])
 
     def _read_clause(self, clause: str) -> None:
-        rest = UNCHECKED.sub(self._not_tabulated, _ISO_2768.sub(self._iso_2768_class, ADOPTED.sub(" ", clause)))
+        rest = forms.ISO_2768.sub(self._iso_2768_class, ADOPTED.sub(" ", clause))
+        rest = UNCHECKED.sub(self._not_tabulated, rest)
         if "±" in rest:
             rest = self._without_amounts(rest)
         rest = FILLER.sub(";", rest)
         pieces = [piece for part in rest.split(";") if (piece := part.strip(" :/-()").rstrip(". "))]
-        alone = all(_BARE_ANGLE.fullmatch(piece) or _BARE.fullmatch(piece) for piece in pieces)
+        alone = all(forms.BARE_ANGLE.fullmatch(piece) or forms.BARE.fullmatch(piece) for piece in pieces)
         for piece in pieces:
             if alone:
                 self._for_all(piece)
@@ -136,14 +98,14 @@ class ToleranceLines:
 
     def _without_amounts(self, rest: str) -> str:
         for pattern, take in (
-            (_RANGES, self._not_tabulated),
-            (_ANGLES_BY_PLACES, self._not_tabulated),
-            (_ANGLES, self._for_angles),
-            (_BENDS, lambda match: ";"),
-            (_FRACTIONS, self._for_fractions),
-            (_IN_WORDS, self._for_counted_places),
-            (_PLACES, self._for_written_places),
-            (_DECIMALS, self._for_decimals),
+            (forms.RANGES, self._not_tabulated),
+            (forms.ANGLES_BY_PLACES, self._not_tabulated),
+            (forms.ANGLES, self._for_angles),
+            (forms.BENDS, lambda match: ";"),
+            (forms.FRACTIONS, self._for_fractions),
+            (forms.IN_WORDS, self._for_counted_places),
+            (forms.PLACES, self._for_written_places),
+            (forms.DECIMALS, self._for_decimals),
         ):
             rest = pattern.sub(take, rest)
         return rest
@@ -188,9 +150,9 @@ class ToleranceLines:
 
     def _for_all(self, piece: str) -> None:
         """Takes an amount that stands alone: in degrees for angles, else for all other sizes."""
-        if (match := _BARE_ANGLE.fullmatch(piece)) is not None:
+        if (match := forms.BARE_ANGLE.fullmatch(piece)) is not None:
             self._for_angles(match)
-        elif (match := _BARE.fullmatch(piece)) is not None:
+        elif (match := forms.BARE.fullmatch(piece)) is not None:
             self._add(range(MOST_PLACES + 1), match)
             self.fractions = self.fractions or _length(match, self.unit)
 
