@@ -11,7 +11,8 @@ from calloutlint.facts.datums.named import NamedFault, named_faults
 from calloutlint.facts.datums.scheme import DatumScheme
 from calloutlint.facts.datums.words import in_words
 from calloutlint.facts.symbol_names import drawn
-from calloutlint.facts.view import fact
+from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.boundary import largest_shift
 from calloutlint.facts.views.part import PartView
 from calloutlint.model.frame import DatumRef, Modifier
 
@@ -61,6 +62,14 @@ class DatumView(PartView):
     def symbols(self) -> tuple[str, ...]:
         """Its modifiers as drawn."""
         return tuple(drawn(kind) for kind in self.modifiers)
+
+    @fact
+    def shift(self) -> Length | None:
+        """How far the part may move at it, its feature at LMC; unknown without Ⓜ or its size."""
+        definers = self._callout.drawing.definers(self.letters[0])
+        if Modifier.MMC not in self.modifiers or len(self.letters) > 1 or len(definers) != 1:
+            return None
+        return largest_shift(self._callout.drawing.package.view_of(definers[0]))
 
     @fact
     def freedoms(self) -> tuple[str, ...]:

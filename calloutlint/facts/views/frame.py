@@ -8,6 +8,7 @@ from calloutlint.facts.datums.held import left
 from calloutlint.facts.datums.location import Unlocated
 from calloutlint.facts.datums.words import in_words
 from calloutlint.facts.view import Length, fact
+from calloutlint.facts.views.boundary import BoundaryView
 from calloutlint.facts.views.datum import DatumView
 from calloutlint.facts.views.part import PartView
 from calloutlint.facts.views.tolerance import MATERIAL, ToleranceView
@@ -87,6 +88,11 @@ class FrameView(PartView):
     def tolerance(self) -> ToleranceView:
         """Its tolerance compartment."""
         return ToleranceView(self.part.zone, self)
+
+    @fact
+    def boundary(self) -> BoundaryView:
+        """The worst-case boundaries that it makes with the size of its feature."""
+        return BoundaryView(self)
 
     @fact
     def datums(self) -> tuple[DatumView, ...]:

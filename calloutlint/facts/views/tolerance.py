@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
+from calloutlint.facts.formulas.coordinates import coordinate
 from calloutlint.facts.symbol_names import drawn
 from calloutlint.facts.view import Length, Number, fact
 from calloutlint.facts.views.part import PartView
@@ -89,6 +90,11 @@ class ToleranceView(PartView):
         """The tolerance with its whole bonus, at the hole's least material condition."""
         bonus = self._frame.hole.bonus
         return None if self.value is None or bonus is None else self.value + bonus
+
+    @fact
+    def as_coordinates(self) -> Length | None:
+        """The equal ± tolerance on two coordinates that stays in a diametral zone; unknown for others."""
+        return coordinate(self.value) if self.value is not None and self.shape is ZoneShape.DIAMETER else None
 
     @fact
     def accepted(self) -> Number | None:
