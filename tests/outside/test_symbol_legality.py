@@ -1,8 +1,8 @@
 """Which symbols each characteristic may have, by the standards' own tables.
 
-Sources: ASME Y14.5-2009 and -2018, geometric characteristic symbols (type of tolerance, datums) and the sections
-on each characteristic; ISO 1101, symbols for geometrical characteristics ("datum needed: no, yes, yes or no") and
-ISO 2692 for Ⓜ and Ⓛ. The tables are entered from memory of the published ones.
+Sources: ASME Y14.5-2009 and -2018, geometric characteristic symbols (type of tolerance, datums) and the
+sections on each characteristic; ISO 1101, symbols for geometrical characteristics ("datum needed: no, yes,
+yes or no") and ISO 2692 for Ⓜ and Ⓛ. The tables are entered from memory of the published ones.
 """
 
 from collections.abc import Iterable
