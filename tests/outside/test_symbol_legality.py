@@ -5,7 +5,7 @@ sections on each characteristic; ISO 1101, symbols for geometrical characteristi
 yes or no") and ISO 2692 for Ⓜ and Ⓛ. The tables are entered from memory of the published ones.
 """
 
-from collections.abc import Iterable
+from typing import NamedTuple
 
 import pytest
 
@@ -14,22 +14,43 @@ from calloutlint.reading.sheet import parse_sheet
 from calloutlint.rulebook.rulebook import Rulebook, load_rulebook
 
 NO, YES, EITHER = "no datum", "a datum", "either"
-# symbol, datums, ⌀ zone, Ⓜ on a feature of size under ASME Y14.5-2009, Ⓜ under ISO
+
+
+class Legal(NamedTuple):
+    """What a characteristic may have: datums, a ⌀ zone, Ⓜ on a feature of size under ASME Y14.5 and under ISO."""
+
+    symbol: str
+    datums: str
+    round_zone: bool
+    asme: bool
+    iso: bool
+
+    @property
+    def zone(self) -> str:
+        """A zone that it may have on a diameter; concentricity and position need theirs round."""
+        return "⌀0.02" if self.symbol in "◎⌖" else "0.02"
+
+    @property
+    def references(self) -> tuple[str, ...]:
+        """Datums that it may have."""
+        return () if self.datums == NO else ("A",)
+
+
 TABLE = [
-    ("⏤", NO, True, True, True),
-    ("⏥", NO, False, True, True),
-    ("○", NO, False, False, False),
-    ("⌭", NO, False, False, False),
-    ("⌒", EITHER, False, False, False),
-    ("⌓", EITHER, False, False, False),
-    ("∠", YES, True, True, True),
-    ("⟂", YES, True, True, True),
-    ("∥", YES, True, True, True),
-    ("⌖", EITHER, True, True, True),
-    ("◎", YES, True, False, True),
-    ("⌯", YES, False, False, True),
-    ("↗", YES, False, False, False),
-    ("⌰", YES, False, False, False),
+    Legal("⏤", NO, True, True, True),
+    Legal("⏥", NO, False, True, True),
+    Legal("○", NO, False, False, False),
+    Legal("⌭", NO, False, False, False),
+    Legal("⌒", EITHER, False, False, False),
+    Legal("⌓", EITHER, False, False, False),
+    Legal("∠", YES, True, True, True),
+    Legal("⟂", YES, True, True, True),
+    Legal("∥", YES, True, True, True),
+    Legal("⌖", EITHER, True, True, True),
+    Legal("◎", YES, True, False, True),
+    Legal("⌯", YES, False, False, True),
+    Legal("↗", YES, False, False, False),
+    Legal("⌰", YES, False, False, False),
 ]
 STANDARDS = ["ASME Y14.5-2009", "ISO 1101"]
 
@@ -49,59 +70,22 @@ def found(rulebook: Rulebook, standard: str, symbol: str, tolerance: str, *datum
     return {finding.rule for finding in findings if finding.callout and finding.callout.balloon == "2"}
 
 
-def datums_of(rule: str) -> Iterable[str]:
-    return () if rule == NO else ("A",)
-
-
-def zone_of(symbol: str, round_zone: bool) -> str:
-    """A zone that the characteristic may have on a diameter; concentricity and position need theirs round."""
-    return "⌀0.02" if round_zone and symbol in "◎⌖" else "0.02"
-
-
 @pytest.mark.parametrize("standard", STANDARDS)
-@pytest.mark.parametrize(("symbol", "datums", "round_zone", "asme", "iso"), TABLE)
+@pytest.mark.parametrize("legal", TABLE, ids=lambda legal: legal.symbol)
 class TestCharacteristic:
-    def test_datums(
-        self,
-        rulebook: Rulebook,
-        standard: str,
-        symbol: str,
-        datums: str,
-        round_zone: bool,
-        asme: bool,
-        iso: bool,
-    ) -> None:
-        zone = zone_of(symbol, round_zone)
-        with_datum = found(rulebook, standard, symbol, zone, "A")
-        without = found(rulebook, standard, symbol, zone)
-        assert ("FRAME-01" in with_datum) == (datums == NO)
-        assert ("FRAME-02" in without) == (datums == YES)
+    def test_datums(self, rulebook: Rulebook, standard: str, legal: Legal) -> None:
+        with_datum = found(rulebook, standard, legal.symbol, legal.zone, "A")
+        without = found(rulebook, standard, legal.symbol, legal.zone)
+        assert ("FRAME-01" in with_datum) == (legal.datums == NO)
+        assert ("FRAME-02" in without) == (legal.datums == YES)
 
-    def test_diametral_zone(
-        self,
-        rulebook: Rulebook,
-        standard: str,
-        symbol: str,
-        datums: str,
-        round_zone: bool,
-        asme: bool,
-        iso: bool,
-    ) -> None:
-        rules = found(rulebook, standard, symbol, "⌀0.02", *datums_of(datums))
-        assert ("FRAME-03" in rules) == (not round_zone)
+    def test_diametral_zone(self, rulebook: Rulebook, standard: str, legal: Legal) -> None:
+        rules = found(rulebook, standard, legal.symbol, "⌀0.02", *legal.references)
+        assert ("FRAME-03" in rules) == (not legal.round_zone)
 
-    def test_maximum_material(
-        self,
-        rulebook: Rulebook,
-        standard: str,
-        symbol: str,
-        datums: str,
-        round_zone: bool,
-        asme: bool,
-        iso: bool,
-    ) -> None:
-        allowed = asme if standard.startswith("ASME") else iso
-        rules = found(rulebook, standard, symbol, zone_of(symbol, round_zone) + " Ⓜ", *datums_of(datums))
+    def test_maximum_material(self, rulebook: Rulebook, standard: str, legal: Legal) -> None:
+        allowed = legal.asme if standard.startswith("ASME") else legal.iso
+        rules = found(rulebook, standard, legal.symbol, f"{legal.zone} Ⓜ", *legal.references)
         assert ("FRAME-05" in rules) == (not allowed)
 
 
@@ -120,6 +104,6 @@ def test_modifiers_belong_to_their_system(rulebook: Rulebook, modifier: str, asm
 @pytest.mark.parametrize("symbol", ["◎", "⌯"])
 def test_what_the_2018_edition_withdrew(rulebook: Rulebook, symbol: str) -> None:
     """ASME Y14.5-2018 withdrew concentricity and symmetry; 2009 and ISO 1101 have them."""
-    zone = zone_of(symbol, round_zone=True)
+    zone = "⌀0.02" if symbol == "◎" else "0.02"
     assert "FRAME-15" in found(rulebook, "ASME Y14.5-2018", symbol, zone, "A")
     assert all("FRAME-15" not in found(rulebook, standard, symbol, zone, "A") for standard in STANDARDS)
