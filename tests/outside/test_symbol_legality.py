@@ -17,7 +17,7 @@ NO, YES, EITHER = "no datum", "a datum", "either"
 
 
 class Legal(NamedTuple):
-    """What a characteristic may have: datums, a ⌀ zone, Ⓜ on a feature of size under ASME Y14.5 and under ISO."""
+    """What a characteristic may have: datums, a ⌀ zone, Ⓜ on a feature of size under ASME and under ISO."""
 
     symbol: str
     datums: str
