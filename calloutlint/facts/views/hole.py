@@ -13,13 +13,15 @@ from calloutlint.model.callout import Callout, FastenerNote, Meaning, Part, Word
 from calloutlint.model.fastener import Fastener
 from calloutlint.model.hole import StepKind
 from calloutlint.model.size import Depth, Size, SizeForm, SizeStatus, Through
-from calloutlint.trade.clearance import assumed_range, is_published
+from calloutlint.model.thread import Thread, ThreadSystem
+from calloutlint.model.values import Value
+from calloutlint.trade.clearance import ClearanceMatch, assumed_range, fasteners_for, is_published
 from calloutlint.trade.drills import drilled_tolerance, is_stock, next_larger_stock
 from calloutlint.units import Unit, convert
 
 NOT_CLEARANCE = {StepKind.REAM, StepKind.TAP}
 FINISHED = {StepKind.REAM, StepKind.TAP, StepKind.BORE}
-INCH_PLACES = 3
+INCH_PLACES, MOST_INCH_PLACES = 3, 4
 SCREWS = re.compile(r"\b(?:SCREWS?|BOLTS?|FASTENERS?|CAPSCREWS?|[SBF]HS?CS|HHCS)\b", re.IGNORECASE)
 OTHER_USE = re.compile(
     r"\b(?:VENT\w*|DRAIN\w*|OIL\w*|PASSAGE\w*|LUBE|LUBRIC\w*|GREASE|WEEP|SIGHT|PORTS?|FOR)\b", re.IGNORECASE
@@ -36,21 +38,43 @@ class HoleView(PartView):
     @kept
     def _size(self) -> Size | None:
         size = leading_size(self.part)
-        return size if size is not None and size.form is SizeForm.DIAMETER and not size.doubtful else None
+        if size is None or size.doubtful or not (size.form is SizeForm.DIAMETER or self._is_slot(size)):
+            return None
+        return size
+
+    def _is_slot(self, size: Size) -> bool:
+        """Whether a size is the width of a slot that a stated joint has as a clearance hole."""
+        slot = size.form is SizeForm.LINEAR and Meaning.SLOT in self.part.meanings
+        return slot and self._callout.joined
+
+    @fact
+    def slot(self) -> bool:
+        """Whether it is a slot that a fastener passes; its limits are those of its width."""
+        return self._size is not None and self._is_slot(self._size)
+
+    @fact
+    def sized_both_ways(self) -> bool:
+        """Whether it is a slot with a length besides its width: a position line does not say which it holds."""
+        return self.slot and sum(size.form is SizeForm.LINEAR for size in self.part.sizes) > 1
+
+    @fact
+    def opening(self) -> str:
+        """What it is called: `hole` or `slot`."""
+        return "slot" if self.slot else "hole"
 
     @fact
     def nominal(self) -> Length | None:
-        """Nominal diameter."""
-        return self._length(self._size.nominal) if self._size else None
+        """Nominal diameter; unknown for a slot."""
+        return self._length(self._size.nominal) if self._size and not self.slot else None
 
     @fact
     def mmc(self) -> Length | None:
-        """Smallest diameter of the hole: its maximum material condition."""
+        """Smallest diameter of the hole, or width of the slot: its maximum material condition."""
         return self._callout.view_of(self._size).smallest if self._size else None
 
     @fact
     def lmc(self) -> Length | None:
-        """Largest diameter of the hole: its least material condition."""
+        """Largest diameter of the hole, or width of the slot: its least material condition."""
         return self._callout.view_of(self._size).largest if self._size else None
 
     @fact
@@ -117,8 +141,19 @@ class HoleView(PartView):
 
     @property
     def thinnest_presumed(self) -> Fastener:
-        """The thinnest of those fasteners: what it does not fit, none of them fits."""
-        return min(self._presumed, key=lambda fastener: _diameter_mm(fastener))
+        """The thinnest of the fasteners it is taken for: what it does not fit, none of them fits."""
+        return min(self._presumed or self._guessed, key=lambda fastener: _diameter_mm(fastener))
+
+    @property
+    def _guessed(self) -> list[Fastener]:
+        if self.nominal is None or self.unit is None:
+            return []
+        return [_named(match) for match in fasteners_for(self.nominal, self.unit)]
+
+    @fact
+    def still_goes(self) -> str:
+        """What a position with its bonus leaves true: of a hole with steps, only what concerns the shank."""
+        return "the fastener would still enter" if self.part.steps else "every part would still assemble"
 
     @fact
     def guessed(self) -> bool:
@@ -156,7 +191,7 @@ class HoleView(PartView):
         if self.unit not in {Unit.INCH, Unit.MM}:
             return None
         nominal = self._size.nominal if self._size else None
-        places = max(nominal.places if nominal else 0, INCH_PLACES)
+        places = min(max(nominal.places if nominal else 0, INCH_PLACES), MOST_INCH_PLACES)
         place = Decimal(1).scaleb(-places) if self.unit is Unit.INCH else None
         drill = next_larger_stock(least, self.unit)
         while drill is not None:
@@ -195,6 +230,15 @@ def _says_other_use(part: Part) -> bool:
     if isinstance(part, FastenerNote):
         return not SCREWS.search(part.fastener.text)
     return isinstance(part, Words) and OTHER_USE.search(part.text) is not None
+
+
+def _named(match: ClearanceMatch) -> Fastener:
+    """The fastener of a published clearance size, by its size alone."""
+    sizes = match.sizes
+    metric = sizes.unit is Unit.MM
+    system = ThreadSystem.METRIC if metric else ThreadSystem.UNIFIED
+    diameter = Value(str(sizes.diameter), sizes.diameter, sizes.unit)
+    return Fastener(sizes.size, thread=Thread(system, sizes.size, diameter, series="M" if metric else ""))
 
 
 def _admits(fastener: Fastener, nominal: Decimal, unit: Unit | None) -> bool:

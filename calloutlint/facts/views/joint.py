@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterable, Iterator
+from decimal import Decimal
 from functools import cached_property
 from typing import TYPE_CHECKING
 
 from calloutlint.facts.assembly import Member, StatedJoint
 from calloutlint.facts.sides import side_by_words
-from calloutlint.facts.sizes import leading_size
+from calloutlint.facts.sizes import amount_in, basic_major, leading_size
 from calloutlint.facts.view import View, fact
 from calloutlint.facts.views.fastener import FastenerView
 from calloutlint.facts.views.feature import SURFACE_WORDS
@@ -16,11 +17,12 @@ from calloutlint.facts.views.fixing import FixingView
 from calloutlint.facts.views.located import is_located, positions
 from calloutlint.facts.views.part import PartView
 from calloutlint.facts.views.passage import PassageView
-from calloutlint.model.callout import Callout
+from calloutlint.model.callout import Callout, FastenerNote
 from calloutlint.model.drawing import Drawing
 from calloutlint.model.fastener import Fastener, Hold, HoleRef
 from calloutlint.model.size import SizeForm
 from calloutlint.model.values import Value
+from calloutlint.units import Unit
 
 if TYPE_CHECKING:
     from calloutlint.facts.views.callout import CalloutView
@@ -119,26 +121,55 @@ class JointView(View):
         return tuple(_written(member.ref) for member in lost)
 
     @fact
+    def fixing_lost(self) -> tuple[str, ...]:
+        """Fixing holes it names that are not at hand, as the joint writes them."""
+        return tuple(_written(member.ref) for member in self.part.fixing if member.callout is None)
+
+    @fact
+    def noted_otherwise(self) -> tuple[str, ...]:
+        """Its clearance holes beside which a note names a fastener of another diameter: `4 (M5)`."""
+        own = self._major(self.part.joint.fastener)
+        holes = (member for member in self.part.holes if member.callout is not None and own is not None)
+        return tuple(
+            f"{_written(member.ref)} ({note.fastener.text})"
+            for member in holes
+            for note in (member.callout.parts if member.callout else ())
+            if isinstance(note, FastenerNote) and self._major(note.fastener) not in {own, None}
+        )
+
+    @staticmethod
+    def _major(fastener: Fastener) -> Decimal | None:
+        return amount_in(basic_major(fastener.thread), Unit.MM) if fastener.thread else None
+
+    @fact
     def fixing_at_hand(self) -> bool:
         """Whether a hole that fixes the fastener is named and at hand."""
         return bool(self.fixings)
 
     @cached_property
     def _sums(self) -> dict[str, int]:
-        """How many holes each member has: the holes of a drawing added up, the mates by themselves."""
+        """How many holes each member has: the holes of a drawing added up, the mates by themselves.
+
+        Members on one drawing are told apart by their balloons.
+        """
         sums: dict[tuple[str, str], int | None] = {}
         known = {id(member) for member in self._at_hand}
-        for role, members in (("holes", self.part.holes), ("mates", self.part.mates)):
+        for role, members in self._by_role:
             for member in members:
                 key = (_part_name(member), role)
                 before, more = sums.get(key, 0), _count(member) if id(member) in known else None
                 sums[key] = None if before is None or more is None else before + more
         names = [name for name, _ in sums]
+        balloons = {role: _balloons(members) for role, members in self._by_role}
         return {
-            f"{name} ({role})" if names.count(name) > 1 else name: number
+            _member_name(name, balloons[role], names): number
             for (name, role), number in sums.items()
             if number is not None
         }
+
+    @property
+    def _by_role(self) -> tuple[tuple[str, tuple[Member, ...]], ...]:
+        return ("holes", self.part.holes), ("mates", self.part.mates)
 
     @fact
     def counts(self) -> tuple[int, ...]:
@@ -243,6 +274,17 @@ def _count(member: Member) -> int | None:
 
 def _part_name(member: Member) -> str:
     return member.drawing.name if member.drawing else member.ref.drawing or ""
+
+
+def _member_name(name: str, balloons: str, names: list[str]) -> str:
+    """What a member is called: its drawing, with its balloons where it has others, they alone on one sheet."""
+    if len(names) > 1 and set(names) == {name}:
+        return f"balloon {balloons}"
+    return f"{name}:{balloons}" if names.count(name) > 1 else name
+
+
+def _balloons(members: Iterable[Member]) -> str:
+    return "+".join(member.ref.balloon for member in members)
 
 
 def _written(ref: HoleRef) -> str:

@@ -9,7 +9,7 @@ from typing import TYPE_CHECKING
 from calloutlint.facts.formulas.boundaries import GeometricTolerance
 from calloutlint.facts.sizes import amount_in
 from calloutlint.model.drawing import Drawing
-from calloutlint.model.frame import Characteristic, Modifier, ScopeKind
+from calloutlint.model.frame import Characteristic, Modifier, ScopeKind, ZoneShape
 from calloutlint.units import Unit
 
 if TYPE_CHECKING:
@@ -34,14 +34,11 @@ def positions(callout: CalloutView) -> list[FrameView]:
     return [line for line in lines if not line.part.doubtful]
 
 
-def widest_position(callout: CalloutView) -> FrameView | None:
-    """The position line with the largest ⌀ tolerance; None where no diametral position is stated."""
-    diametral = [
-        line
-        for line in positions(callout)
-        if line.tolerance.shape == "diameter" and line.tolerance.value is not None
-    ]
-    return max(diametral, key=lambda line: line.tolerance.value or Decimal(0), default=None)
+def widest_position(callout: CalloutView, shape: ZoneShape = ZoneShape.DIAMETER) -> FrameView | None:
+    """The position line with the largest ⌀ tolerance, or of another shape; None where none is stated."""
+    lines = (line for line in positions(callout) if line.tolerance.shape is shape)
+    valued = [line for line in lines if line.tolerance.value is not None]
+    return max(valued, key=lambda line: line.tolerance.value or Decimal(0), default=None)
 
 
 def tolerance_of(line: FrameView, unit: Unit | None) -> GeometricTolerance | None:

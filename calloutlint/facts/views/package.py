@@ -51,10 +51,12 @@ class PackageView(View):
         return tuple(JointView(joint, self) for joint in self.assembly.joints)
 
     def presumed_passages(self) -> Iterator[MemberView | PassageView]:
-        """Holes taken for clearance holes of a fastener in their drawing's parts list."""
+        """Holes taken for clearance holes: of a fastener in the parts list, or by their size alone."""
         for view in self._views.values():
             if view.part.sizes and view.hole.presumed:
                 yield MemberView(view, view.hole.thinnest_presumed, None)
+                yield PassageView(view, view.hole.thinnest_presumed, None)
+            elif view.part.sizes and view.hole.guessed:
                 yield PassageView(view, view.hole.thinnest_presumed, None)
 
     def listed_fasteners(self) -> Iterator[FastenerView]:

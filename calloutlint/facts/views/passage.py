@@ -8,13 +8,14 @@ from decimal import ROUND_CEILING, ROUND_FLOOR, Decimal
 from calloutlint.facts.view import Length, fact
 from calloutlint.facts.views.located import positions
 from calloutlint.facts.views.passing import PassingView
+from calloutlint.model.fastener import Hold
 from calloutlint.model.frame import Modifier
 from calloutlint.units import Unit
 
-SHOWN = {Unit.INCH: 5, Unit.MM: 4}
-"""Places that messages show; what comes from another unit is rounded to them on the safe side."""
-DRAWN = {Unit.INCH: 3, Unit.MM: 2}
-"""Places that a corrected tolerance has at least."""
+MOST = {Unit.INCH: 4, Unit.MM: 3}
+"""Places of a cure at most: what has more is rounded to them on the safe side."""
+LEAST = {Unit.INCH: 3, Unit.MM: 2}
+"""Places that a corrected tolerance may have in any case."""
 
 
 class PassageView(PassingView):
@@ -40,7 +41,7 @@ class PassageView(PassingView):
         """The largest position tolerance of this hole that fits; unknown where none does."""
         if self.tolerance is None or self.least_short is None:
             return None
-        largest = self._rounded(self.tolerance - self.least_short, SHOWN, ROUND_FLOOR)
+        largest = self._rounded(self.tolerance - self.least_short, MOST, ROUND_FLOOR)
         return largest if largest >= 0 else None
 
     @fact
@@ -48,7 +49,8 @@ class PassageView(PassingView):
         """That tolerance as drawings state it, where half of the present one or more is left; else unknown."""
         if self.fitting_tolerance is None or self.tolerance is None:
             return None
-        places = {unit: max(least, places_of(self.tolerance)) for unit, least in DRAWN.items()}
+        own = places_of(self.tolerance)
+        places = {unit: min(max(least, own), MOST[unit]) for unit, least in LEAST.items()}
         fair = self._rounded(self.fitting_tolerance, places, ROUND_FLOOR)
         return fair if 2 * fair >= self.tolerance else None
 
@@ -64,16 +66,33 @@ class PassageView(PassingView):
         """The smallest hole that fits with the present tolerances: what the hole lacks, added to it."""
         if self.size is None or self._lacks is None:
             return None
-        return self._rounded(self.size.mmc + self._lacks, SHOWN, ROUND_CEILING)
+        return self._rounded(self.size.mmc + self._lacks, MOST, ROUND_CEILING)
 
     @fact
     def fitting_hole(self) -> Length | None:
-        """The next stock drill, as this drawing rounds it, with which it fits; unknown beyond stock."""
+        """The next stock drill, as this drawing rounds it, with which it fits; unknown beyond stock.
+
+        Without a position tolerance it is at least the published close hole. No drill makes a slot, or the
+        reamed or fit-coded hole of a pin.
+        """
         hole = self._callout.hole
-        if self._lacks is None or self.fitting_smallest is None:
+        undrilled = hole.slot or (hole.fitted and self.fastener.pin)
+        if self._lacks is None or self.fitting_smallest is None or undrilled:
             return None
         least = self.fitting_smallest if hole.nominal is None else hole.nominal + self._lacks
-        return hole.next_stock(least)
+        close = self.fastener.close if self.tolerance is None else None
+        return hole.next_stock(least if close is None else max(least, close))
+
+    @fact
+    def settled(self) -> bool:
+        """Whether all that decides is at hand: how it is held, where it is fixed the other hole's position."""
+        return self.hold is Hold.FLOATING or self.spare is not None
+
+    @property
+    def _wanting(self) -> str:
+        """P or D, whichever the tilt of an unprojected fixing hole is left out for want of."""
+        wanting = (("P", self.reach is None), ("D", self.engagement is None))
+        return " and ".join(name for name, lacks in wanting if lacks)
 
     @property
     def _lacks(self) -> Decimal | None:
@@ -93,7 +112,10 @@ class PassageView(PassingView):
         source = self.fastener.limits_from
         said = (
             (self.hold is None, "How the joint is held is not said: so much is needed either way."),
-            (self.tilt_unknown, "The fixing hole is not projected; its tilt is left out, for want of P or D."),
+            (
+                self.tilt_unknown,
+                f"The fixing hole is not projected; its tilt is left out, for want of {self._wanting}.",
+            ),
             (bool(source), f"The pin states no limits; its largest diameter is that of {source}."),
         )
         return _sentences(said) + self.position_remarks

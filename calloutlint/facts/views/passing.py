@@ -17,8 +17,10 @@ from calloutlint.facts.views.fastener import FastenerView
 from calloutlint.facts.views.fixing import FixingView
 from calloutlint.facts.views.located import is_located, tolerance_of, widest_position
 from calloutlint.facts.views.seated import SeatedView
+from calloutlint.facts.views.tolerance import ZONE_SIGNS
 from calloutlint.model.callout import Callout
 from calloutlint.model.fastener import Fastener, Hold
+from calloutlint.model.frame import ZoneShape
 from calloutlint.units import Unit, convert
 
 if TYPE_CHECKING:
@@ -69,8 +71,17 @@ class PassingView(SeatedView):
 
     @fact
     def position(self) -> FrameView | None:
-        """The line with its largest ⌀ position tolerance; unknown where none is stated."""
-        return widest_position(self._callout)
+        """The line with its largest ⌀ position tolerance, a slot's across its width; unknown without one."""
+        hole = self._callout.hole
+        if hole.sized_both_ways:
+            return None
+        return widest_position(self._callout, ZoneShape.WIDTH if hole.slot else ZoneShape.DIAMETER)
+
+    @fact
+    def sign(self) -> str:
+        """The sign before its position tolerance: ⌀, nothing for a width."""
+        zone = self.position.part.zone if self.position else None
+        return ZONE_SIGNS[zone.shape] if zone else ""
 
     @property
     def size(self) -> FeatureOfSize | None:
@@ -84,7 +95,7 @@ class PassingView(SeatedView):
 
     @fact
     def tolerance(self) -> Length | None:
-        """Its largest ⌀ position tolerance as stated."""
+        """Its largest position tolerance as stated."""
         return self._tolerance.amount if self._tolerance else None
 
     @fact
