@@ -3,8 +3,10 @@
 import pytest
 
 from calloutlint.callouts.parse import parse_callout
+from calloutlint.callouts.write import Style, write_parts
 from calloutlint.model.callout import Callout, FastenerNote, Meaning, Part, Unread, Words
 from calloutlint.model.fastener import Hold
+from calloutlint.model.size import Through
 from calloutlint.units import Unit
 
 
@@ -89,3 +91,48 @@ def test_a_fastener_named_in_a_callout_is_found(written: str, hold: Hold | None)
 @pytest.mark.parametrize("written", ["⌀.500 FOR 2.00 LENGTH", "⌀5 FOR M6 TAP", "FOR REFERENCE ONLY"])
 def test_other_things_that_a_callout_is_for_are_no_fasteners(written: str) -> None:
     assert not any(isinstance(part, FastenerNote) for part in read(written))
+
+
+@pytest.mark.parametrize(
+    ("written", "meanings"),
+    [
+        ("AT SURFACE K", ()),
+        ("FLUSH WITH SURFACE", ()),
+        ("SLOT IN FACE", (Meaning.SLOT,)),
+        ("PIN, SURFACE HARDENED", (Meaning.PIN,)),
+        ("BORE, HOLE SURFACE 32 RMS", (Meaning.BORE,)),
+        ("IN BOSS", ()),
+        ("FOR SHAFT LOCK", ()),
+        ("SHAFT END", ()),
+        ("TAB SIDE", ()),
+        ("BEARING SEAT, SHAFT SIDE", ()),
+        ("STUD, PRESS INTO HOLE", ()),
+        ("STUD IN HOLE", ()),
+        ("SPINDLE NUT", ()),
+        ("DOWEL PIN HOLE", (Meaning.HOLE,)),
+        ("DEBURR ON EDGE, SHAFT", (Meaning.SHAFT,)),
+        ("WIDTH OF SLOT", (Meaning.SLOT, Meaning.WIDTH)),
+    ],
+)
+def test_the_first_noun_before_a_preposition_is_the_feature(
+    written: str, meanings: tuple[Meaning, ...]
+) -> None:
+    (words,) = read(written)
+    assert isinstance(words, Words)
+    assert words.meanings == meanings
+
+
+@pytest.mark.parametrize(
+    ("written", "meanings"),
+    [
+        ("⌀.500 d9 SHAFT THROUGH COVER", {Meaning.SHAFT}),
+        ("⌀.250 THRU BOSS", set()),
+        ("⌀.250 THRU BORE", {Meaning.BORE}),
+        ("⌀.500 HOLE THROUGH COVER", {Meaning.HOLE}),
+    ],
+)
+def test_what_a_feature_goes_through_is_another_one(written: str, meanings: set[Meaning]) -> None:
+    parts = read(written)
+    assert Callout("1", parts).meanings == meanings
+    assert any(isinstance(getattr(part, "extent", None), Through) for part in parts) is ("SHAFT" not in written)
+    assert read(*write_parts(parts, Style.UNICODE)) == parts

@@ -18,6 +18,8 @@ _MEANINGS: tuple[tuple[Meaning, str], ...] = (
     (Meaning.INDIVIDUALLY, r"individually|indiv"),
     (Meaning.BOUNDARY, r"boundary"),
     (Meaning.EACH_ELEMENT, r"(?:le|each(?: radial)? (?:line )?element)"),
+)
+_FEATURES: tuple[tuple[Meaning, str], ...] = (
     (Meaning.HOLE, r"holes?"),
     (Meaning.SLOT, r"slots?|keyways?|keyseats?"),
     (Meaning.GROOVE, r"grooves?"),
@@ -36,9 +38,24 @@ _FIND = [
     (meaning, re.compile(rf"(?<![\w-])(?:{pattern})(?!\w)", re.IGNORECASE).search)
     for meaning, pattern in _MEANINGS
 ]
+# In `SHAFT END` and `BOLT HOLE CIRCLE` the feature is not the one that the callout is about.
+_OF_ANOTHER = r"(?:sides?|ends?|circles?|ports?|locks?|nuts?|only|hardened|hub|screws?|bolts?|keys?)"
+_NAMES = [
+    (
+        meaning,
+        re.compile(rf"(?<![\w-])(?:{pattern})(?!\w)(?!\s+{_OF_ANOTHER}(?!\w))", re.IGNORECASE).search,
+    )
+    for meaning, pattern in _FEATURES
+]
+_PREPOSITION = re.compile(
+    r"(?<![\w.-])(?:in|on|for|with|at|to|into|from|(?<!width )of|near|against|through|thru|by)(?![\w.-]).*",
+    re.IGNORECASE,
+)
+_BEHIND_THRU = re.compile(r"‹THRU(?: ALL)?›[\s,;]*$").search
 # `DOWEL PIN HOLE` is a hole.
 _INTERNAL = {Meaning.HOLE, Meaning.SLOT, Meaning.GROOVE, Meaning.BORE}
 _EXTERNAL = {Meaning.PIN, Meaning.SHAFT, Meaning.BOSS, Meaning.TAB}
+_FLAT = {Meaning.SURFACE, Meaning.FACE}
 _SPELLINGS = {spelling.upper() for row in SPELLINGS for spelling in row.every}
 _KNOWN = sorted(s for s in _SPELLINGS if s.replace("'", "").isalpha() and s.isascii() and len(s) > 3)
 _CHARACTERISTICS = {spelling.upper() for row in CHARACTERISTICS for spelling in row.every}
@@ -50,10 +67,29 @@ _LEAST_FOR_ONE_SLIP, _LEAST_FOR_TWO_SLIPS = 6, 9
 @lru_cache(maxsize=4096)
 def meanings_of(text: str) -> tuple[Meaning, ...]:
     """What the words say that rules can use, in the order of `Meaning`."""
-    found = {meaning for meaning, search in _FIND if search(text)}
-    if found & _INTERNAL:
-        found -= _EXTERNAL
+    found = {meaning for meaning, search in _FIND if search(text)} | _features(text)
     return tuple(meaning for meaning in Meaning if meaning in found)
+
+
+def _features(text: str) -> set[Meaning]:
+    """What the words call the feature: the first phrase that names one, up to its first preposition.
+
+    `SLOT IN FACE` is a slot, `PIN, SURFACE HARDENED` a pin, `FLUSH WITH SURFACE` says nothing of the kind.
+    """
+    for phrase in re.split("[,;]", text):
+        named = _PREPOSITION.sub("", phrase)
+        found = {meaning for meaning, search in _NAMES if search(named)}
+        if found:
+            return found - _EXTERNAL if found & _INTERNAL else found
+    return set()
+
+
+def meanings_behind(before: str, text: str) -> tuple[Meaning, ...]:
+    """What words say behind the text `before`: in `⌀.25 THRU BOSS` nothing, in `THRU BORE` it is a bore."""
+    found = meanings_of(text)
+    if _BEHIND_THRU(before) is None:
+        return found
+    return tuple(meaning for meaning in found if meaning not in _EXTERNAL | _FLAT)
 
 
 @lru_cache(maxsize=4096)

@@ -20,7 +20,7 @@ from calloutlint.model.callout import (
 )
 from calloutlint.model.frame import Frame, Segment
 from calloutlint.model.hole import HoleStep
-from calloutlint.model.size import Count, Size
+from calloutlint.model.size import Count, Size, Through
 from calloutlint.model.thread import Thread
 from calloutlint.units import Unit
 
@@ -115,6 +115,8 @@ def _joins(parts: Sequence[Part], at: int) -> bool:
     if isinstance(part, Words) and isinstance(before, Count):
         return not isinstance(following, Size | Thread | HoleStep) and not _is_keyword(part)
     if isinstance(part, Words):
+        if _becomes_thru_hole(part, before):
+            return False
         tapped = isinstance(before, Thread) and part.text == "TAP"
         return tapped or (isinstance(before, Size | Thread | HoleStep) and _trails(part, following))
     return isinstance(before, Words) and isinstance(part, Size | Thread) and _leads(before)
@@ -140,6 +142,12 @@ def _with_wrong_zone(line: str, text: str, frame: Frame) -> str:
     else:
         compartments[zone] += f" {text}"
     return " | ".join(compartments)
+
+
+def _becomes_thru_hole(words: Words, before: Part) -> bool:
+    """Whether THRU would take the first of the words for its own, as in THRU HOLE."""
+    through = isinstance(getattr(before, "extent", None), Through)
+    return through and normalise(f"THRU {words.text}").text.partition("›")[2].lstrip() != words.text
 
 
 def _trails(words: Words, following: Part | None) -> bool:

@@ -73,6 +73,7 @@ MAY_BE_WORDS = {
     "DESIGNATION",
     "WITHIN",
     "DEPTH",
+    "THRU",
     "STRAY",
     "STEP",
     "MAX",

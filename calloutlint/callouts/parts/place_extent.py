@@ -5,12 +5,17 @@ from lark import Token, Tree
 from calloutlint.callouts.parts.drafts import DepthDraft, SizeDraft, StepDraft, ThreadDraft
 from calloutlint.callouts.parts.place_word import as_word
 from calloutlint.callouts.parts.state import HOLES, SPEAKS_OF_SIZE_BEFORE, State
-from calloutlint.model.callout import Words
+from calloutlint.callouts.words import meanings_of
+from calloutlint.model.callout import Meaning, Words
 from calloutlint.model.size import SizeForm, Through
 
 
 def take_through(state: State, token: Token) -> None:
-    """THRU."""
+    """THRU. In `SHAFT THROUGH COVER` it is a preposition."""
+    if state.follows("WORD") and state.words and Meaning.SHAFT in meanings_of(state.words[-1]):
+        state.words.append(token)
+        return
+    state.end_words()
     place_extent(state, Through(token.strip("‹›"), state.line.span(token)))
 
 

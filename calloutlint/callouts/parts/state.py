@@ -14,7 +14,7 @@ from calloutlint.callouts.parts.drafts import (
     ThreadDraft,
 )
 from calloutlint.callouts.parts.line import Line, Node, joined
-from calloutlint.callouts.words import meanings_of, nearest_spelling
+from calloutlint.callouts.words import meanings_behind, meanings_of, nearest_spelling
 from calloutlint.model.callout import Part, Unread, Words
 from calloutlint.model.frame import Scope
 from calloutlint.model.hole import StepKind
@@ -96,6 +96,7 @@ class State:
         if not self.words:
             return
         span = self.line.span(self.words[0], self.words[-1])
+        before = self.line.normal.text[: self.words[0].start_pos]
         self.words = []
         text = self.line.written(span)
         if self.step is not None and not self.step.size and text.upper() in {"TO", "FOR"}:
@@ -103,7 +104,7 @@ class State:
         if self.step is not None and self.step.kind in SPEAKS_OF_SIZE_BEFORE:
             self.step = None
         self.target = None
-        self.add_words(text, span)
+        self.parts.append(Words(text, meanings_behind(before, text), span))
 
     def end_scope(self) -> None:
         """A scope that no frame took is plain words."""
