@@ -126,8 +126,7 @@ def test_a_loop_of_folders_is_no_trap(folder: Path) -> None:
         ),
         (
             "house = {file = 'x.toml'}",
-            "house: {'file': 'x.toml'} stands here; "
-            'a list of texts was expected, such as house = ["rules"]',
+            "house: {'file': 'x.toml'} stands here; a list of texts was expected, such as house = [\"rules\"]",
         ),
         (
             'house = "' + "x" * 400 + '"',

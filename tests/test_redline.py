@@ -40,7 +40,7 @@ def judged(rulebook: Rulebook) -> Callable[[str, str], Judged]:
 
 CORRECTIONS = [
     ("FRAME-01", INCH + DATUMS + "4) SURFACE\n   ⏥ | .004 | A | B", "SURFACE\n⏥ | .004"),
-    ("FRAME-04", INCH + DATUMS + "4) ⌀.281 +.007 -.002 THRU\n   ⌖ | .014 Ⓜ | A | B | C", "⌖ | ⌀.014 Ⓜ | A | B | C"),
+    ("FRAME-04", INCH + DATUMS + "4) ⌀.28 THRU\n   ⌖ | .014 Ⓜ | A | B | C", "⌖ | ⌀.014 Ⓜ | A | B | C"),
     ("FRAME-05", INCH + DATUMS + "4) FACE\n   ⟂ | .003 Ⓜ | A", "⟂ | .003 | A"),
     ("FRAME-06", OLD + DATUMS + "4) ⌀.5 THRU\n   ⌖ | ⌀.014 Ⓜ | A | B Ⓜ | C", "⌖ | ⌀.014 Ⓜ | A | B | C"),
     ("FRAME-16", INCH + DATUMS + "4) ⌀.50 THRU\n   ⌖ | ⌀.014 Ⓢ | A | B | C", "⌖ | ⌀.014 | A | B | C"),
