@@ -11,7 +11,7 @@ from calloutlint.cli import main
 README = (Path(__file__).parent.parent / "README.md").read_text(encoding="utf-8")
 SHEETS = dict(re.findall(r"`([\w-]+\.txt)`[^`]*?\n```text\n(.*?)```", README, re.DOTALL))
 HOUSE_SHEETS = re.findall(r"```toml\n(.*?)```", README, re.DOTALL)
-SESSIONS = re.findall(r"```console\n\$ calloutlint ([^\n]+)\n(.*?)```", README, re.DOTALL)
+RUNS = re.findall(r"```console\n\$ calloutlint ([^\n]+)\n(.*?)```", README, re.DOTALL)
 
 
 def comparable(text: str) -> list[str]:
@@ -19,7 +19,7 @@ def comparable(text: str) -> list[str]:
     return [re.sub(r"\b\d+ rules", "… rules", line.rstrip()) for line in text.strip("\n").splitlines()]
 
 
-@pytest.mark.parametrize(("arguments", "shown"), SESSIONS, ids=[arguments for arguments, _ in SESSIONS])
+@pytest.mark.parametrize(("arguments", "shown"), RUNS, ids=[arguments for arguments, _ in RUNS])
 def test_a_shown_run_is_current(
     arguments: str,
     shown: str,
@@ -37,7 +37,7 @@ def test_a_shown_run_is_current(
 
 def test_the_readme_shows_a_sheet_and_a_run() -> None:
     assert SHEETS
-    assert SESSIONS
+    assert RUNS
 
 
 def test_the_shown_house_rule_holds(tmp_path: Path) -> None:
