@@ -6,7 +6,7 @@ from calloutlint.callouts.parse import parse_callout
 from calloutlint.callouts.write import Style, write_parts
 from calloutlint.model.callout import Callout, FastenerNote, Meaning, Part, Unread, Words
 from calloutlint.model.fastener import Hold
-from calloutlint.model.size import Through
+from calloutlint.model.size import Size, Through
 from calloutlint.units import Unit
 
 
@@ -136,3 +136,46 @@ def test_what_a_feature_goes_through_is_another_one(written: str, meanings: set[
     assert Callout("1", parts).meanings == meanings
     assert any(isinstance(getattr(part, "extent", None), Through) for part in parts) is ("SHAFT" not in written)
     assert read(*write_parts(parts, Style.UNICODE)) == parts
+
+
+NOTES_WITH_NUMBERS = """\
+10 ACTIVE COILS, 12 TOTAL COILS|20 TPI|DIAMETRAL PITCH 12|32 TOOTH SERRATION|17 TEETH, 8 DP
+WHOLE DEPTH 2.7|3 COATS EPOXY|3 EQUAL SPACES|6 EQ SP|NO. 2 MORSE|PAINT COLOR NO. 26329
+LUBRICATE WITH ISO VG 46|PRESSURE TEST 150 PSIG MIN, 10 MIN HOLD|63 MICROINCH|63 ALL OVER|2 PLUGS
+3/16 FILLET WELD|CUT FROM 2 X 4 BAR|USE 1/8 DIA ROD|FOR 1/2 CONDUIT|FOR 1/4 SQ KEY|STAMP PART NO 12345-6
+ASTM A48 CL 30B|BAKE 375° ±25°F|STRESS RELIEVE 450°F 30 MIN|HÄRTE 58+4 HRC|FLUSH TO ISO 4406 16/14/11
+1ST OPERATION|2ND SIDE SIMILAR|√63|125√|(-1 ONLY)|COUNTERSINK TO CLEAN UP|ENDS SQUARE WITHIN 2°
+HELICAL COIL INSERT 1.5D|P96 DIAMOND KNURL|N7|TYPICAL SECTION|2 PLACES AS SHOWN|TAPER 1:10|1:10 TAPER|⌲ 1:10
+⌲ .20:1|⌳ .08:1|SCALE 2:1|DETAIL B SCALE 4:1|INVOLUTE SPLINE, 14 TEETH, 16/32 DP, CLASS 5|24 DP SERRATION
+12 PITCH|VOLUME 3.2 IN³|3 TURNS FULL THREAD"""
+
+
+@pytest.mark.parametrize("unit", [Unit.INCH, Unit.MM])
+@pytest.mark.parametrize("words", NOTES_WITH_NUMBERS.replace("\n", "|").split("|"))
+def test_a_number_that_a_note_counts_or_measures_by_is_no_size(words: str, unit: Unit) -> None:
+    parts = parse_callout([words], unit)
+    assert all(isinstance(part, Words) for part in parts)
+    for style in Style:
+        assert parse_callout(write_parts(parts, style), unit) == parts
+
+
+@pytest.mark.parametrize(
+    "written",
+    [
+        "6 THICK",
+        "25 WIDE",
+        ".50 BOSS",
+        "10 DEEP",
+        "12 ACROSS FLATS",
+        "25 BETWEEN FACES",
+        "40 OVERALL",
+        "20 RADIUS",
+        "16 ACCESS",
+        "3/16 THICK",
+        "12 SQ",
+        "63 LONG",
+        "2 X 45°",
+    ],
+)
+def test_a_number_with_a_word_that_says_what_it_measures_is_a_size(written: str) -> None:
+    assert any(isinstance(part, Size) for part in parse_callout([written], Unit.MM))

@@ -9,6 +9,7 @@ import pytest
 
 from calloutlint.callouts.parse import parse_callout
 from calloutlint.callouts.value import parse_size, parse_value
+from calloutlint.callouts.write import Style, write_parts
 from calloutlint.model.callout import DatumFeature, Part, Unread
 from calloutlint.model.frame import Frame, Modifier, ZoneShape
 from calloutlint.model.hole import HoleStep
@@ -341,3 +342,24 @@ def test_the_text_of_a_number_is_plain_text() -> None:
     assert isinstance(frame, Frame)
     assert frame.segments[0].zone is not None
     assert {type(use.value.text) for use in frame.segments[0].zone.modifiers if use.value} == {str}
+
+
+@pytest.mark.parametrize(
+    ("written", "canonical"),
+    [
+        ("⌀.500 X .50 MIN DEEP", "⌀.500 ↧ .50 MIN"),
+        ("10-32 UNF-2B X .38 MIN DP", "#10-32 UNF-2B ↧ .38 MIN"),
+        ("SPOTFACE ⌀.88 X .03 MAX DEEP", "SF ⌀.88 ↧ .03 MAX"),
+        ("⌀.500 ↧ MIN .31", "⌀.500 ↧ .31 MIN"),
+        ("M6-6H ↧ 12 TYP", "M6-6H ↧ 12 TYP"),
+    ],
+)
+def test_a_depth_may_be_a_least_or_a_largest_one(written: str, canonical: str) -> None:
+    parts = parse_callout([written], Unit.INCH)
+    assert write_parts(parts, Style.UNICODE) == [canonical]
+    assert parse_callout([canonical], Unit.INCH) == parts
+
+
+def test_a_drill_named_in_parentheses_behind_its_diameter_is_read() -> None:
+    parts = parse_callout(["⌀.201 (#7) DRILL ↧ .75"], Unit.INCH)
+    assert write_parts(parts, Style.UNICODE) == ["⌀.201 ↧ .75", "#7 DRILL"]

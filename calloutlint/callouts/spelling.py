@@ -133,7 +133,7 @@ _BOX_FOLLOWS = rf"|\s*\[\s*{_TOLERANCE}"
 _MAY_BE_BASIC = {"FLAT", "ANG", "CIR", "CYL"}  # `FLAT [.500]`, `ANG [30°]` are sizes
 _LONG_FOLLOWS = r"|\s+[A-Z](?![A-Za-z0-9.])"
 _DATUM = r"\s+(?:(?i:datums?)\s+)?[A-Z](?:\s*-\s*[A-Z])?(?!\w)"
-_NUMBER_WITHIN = rf"\s+{_TOLERANCE}(?!.*\b(?i:tir|fim|fir|total|per)\b|\s*[\d.]+\s*(?:°|(?i:deg)))"
+_NUMBER_WITHIN = rf"\s+{_TOLERANCE}(?!.*\b(?i:tir|fim|fir|total|per)\b|\s*[\d.]*\s*(?:°|(?i:deg)))"
 _WITHIN_FOLLOWS = rf"\s+(?i:within){_NUMBER_WITHIN}"
 _SAID = rf"(?={_WITHIN_FOLLOWS}|{_NUMBER_WITHIN}\S*(?:\s+(?:⌀|dia\b|DIA\b))?\s+(?i:to|with){_DATUM})"
 _FRAME_PHRASES = {

@@ -62,7 +62,7 @@ CHARACTERISTICS = _rows(
         "⏢",
         r"{\Fgdt;d}",
     ),
-    ("∠", "ANG", "angularity", "ANGULARITY", "⦟", "⌳", r"{\Fgdt;a}"),
+    ("∠", "ANG", "angularity", "ANGULARITY", "⦟", r"{\Fgdt;a}"),
     (
         "⟂",
         "PERP",

@@ -1,6 +1,6 @@
 """Second pass: which hole, thread or step a depth or THRU belongs to."""
 
-from lark import Token, Tree
+from lark import Token
 
 from calloutlint.callouts.parts.drafts import DepthDraft, SizeDraft, StepDraft, ThreadDraft
 from calloutlint.callouts.parts.place_word import as_word
@@ -31,7 +31,8 @@ def take_depth(state: State, token: Token) -> None:
 
 def take_deep(state: State, token: Token) -> None:
     """DEEP. After its number it was seen with the number; else the number follows or is missing."""
-    after_size = isinstance(state.previous, Tree) and state.previous.data == "size"
+    before = state.kinds[max(state.at - 2, 0) : state.at]
+    after_size = before[-1:] == ["size"] or before in (["size", "MIN"], ["size", "MAX"])
     if after_size and (state.size is None or state.size.form is not SizeForm.DIAMETER):
         return
     take_depth(state, token)

@@ -56,13 +56,20 @@ def _belongs_elsewhere(state: State, draft: SizeDraft) -> bool:
         place_extent(state, state.depth)
     elif state.drill is not None and state.box is SizeStatus.REFERENCE:
         state.drill_size = draft
-    elif state.follows("DEEP") and _is_depth(state, draft):
+    elif _deep_follows(state) and _is_depth(state, draft):
         place_depth(state, DepthDraft(draft.span, draft))
     elif state.step is not None and fits_step(state.step, draft):
         put_in_step(state.step, draft)
     else:
         return False
     return True
+
+
+def _deep_follows(state: State) -> bool:
+    """Whether DEEP follows the number, a MIN or MAX between them or not: `.50 MIN DEEP`."""
+    return state.follows("DEEP") or (
+        (state.follows("MIN") or state.follows("MAX")) and state.follows("DEEP", 1)
+    )
 
 
 def _is_depth(state: State, draft: SizeDraft) -> bool:

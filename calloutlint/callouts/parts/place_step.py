@@ -46,7 +46,12 @@ def _is_plain_tap(state: State) -> bool:
 
 
 def _is_plain_word(state: State, kind: StepKind) -> bool:
-    """Whether DRILL or REAM has nothing to drill: `DRILL JIG`, the first word of `DRILL AND REAM ⌀.250`."""
+    """Whether a step says no size and needs none.
+
+    `DRILL JIG`, the first word of `DRILL AND REAM ⌀.250`, `COUNTERSINK TO CLEAN UP`.
+    """
+    if state.follows("WORD") and state.following_text.upper() == "TO" and "size" not in state.kinds[state.at :]:
+        return True
     before = state.parts[-1] if state.parts else None
     named = state.drill is not None or isinstance(before, SizeDraft | ThreadDraft)
     return kind in SPEAKS_OF_SIZE_BEFORE and state.follows("WORD") and not named
@@ -92,7 +97,7 @@ def put_in_step(step: StepDraft, draft: SizeDraft) -> None:
 
 def take_drill_name(state: State, token: Token) -> None:
     """`#7` or `F` before DRILL, `#7` after it."""
-    name = re.sub(r"(?i)^no\.?\s*", "#", str(token)).replace(" ", "")
+    name = re.sub(r"(?i)^no\.?\s*", "#", token.strip("() ")).replace(" ", "")
     if state.step is not None and state.step.kind is StepKind.DRILL and state.step.size is None:
         state.step.drill = name
     else:

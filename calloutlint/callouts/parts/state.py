@@ -82,6 +82,12 @@ class State:
         place = self.at + 1 + at
         return place < len(self.kinds) and self.kinds[place] == kind
 
+    @property
+    def following_text(self) -> str:
+        """The next node as normalised text; empty where it is more than one piece, or none."""
+        following = self.line.items[self.at + 1 : self.at + 2]
+        return str(following[0]) if following and isinstance(following[0], Token) else ""
+
     def give_count(self, owner: Hole | FrameDraft) -> None:
         """Gives the count that waits to the part it stands before."""
         if self.count is not None:
