@@ -363,3 +363,27 @@ def test_a_depth_may_be_a_least_or_a_largest_one(written: str, canonical: str) -
 def test_a_drill_named_in_parentheses_behind_its_diameter_is_read() -> None:
     parts = parse_callout(["⌀.201 (#7) DRILL ↧ .75"], Unit.INCH)
     assert write_parts(parts, Style.UNICODE) == ["⌀.201 ↧ .75", "#7 DRILL"]
+
+
+@pytest.mark.parametrize(
+    ("written", "canonical"),
+    [
+        ("⌖ | ⌀.014 Ⓜ | A | B[BASIC] | C", "⌖ | ⌀.014 Ⓜ | A | B [BSC] | C"),
+        ("⌖ | ⌀.014 Ⓜ | A | B Ⓜ [⌀1.020] | C[.020]", "⌖ | ⌀.014 Ⓜ | A | B Ⓜ [⌀1.020] | C [.020]"),
+        ("○ | .010 Ⓖ", "○ | .010 Ⓖ"),
+        ("⌭ | .010 Ⓝ", "⌭ | .010 Ⓝ"),
+        ("⏥ | .010 Ⓒ", "⏥ | .010 Ⓒ"),
+        ("⌭ | .010 Ⓧ", "⌭ | .010 Ⓧ"),
+        ("M16 LH-6H ↧ 20", "M16-6H-LH ↧ 20"),
+        ("Tr 24x10 P5 LH-7H", "Tr24x10 P5-7H-LH"),
+        ("0°-5° GROOVE WALL", "0°-5° GROOVE WALL"),
+        ("5 X 1.000 (= 5.000)", "5X 1.000 (= 5.000)"),
+        ("(4.500 [114.30])", "(4.500) [114.30]"),
+    ],
+)
+def test_forms_of_the_standards_are_read_whole(written: str, canonical: str) -> None:
+    """Common practice in Y14.5 (stated boundaries), ISO 1101 (association) and B1.13; no clause quoted."""
+    parts = parse_callout([written], Unit.INCH)
+    assert write_parts(parts, Style.UNICODE) == [canonical]
+    for style in Style:
+        assert parse_callout(write_parts(parts, style), Unit.INCH) == parts

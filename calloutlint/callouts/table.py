@@ -148,6 +148,10 @@ MODIFIERS = _rows(
     ("Ⓘ", "(I)", "independency", "INDEPENDENCY", "<I>", "ⓘ"),
     ("Ⓔ", "(E)", "envelope requirement", "ENVELOPE REQUIREMENT", "<E>", "ⓔ"),
     ("Ⓡ", "(R)", "reciprocity", "RECIPROCITY", "<R>", "ⓡ"),
+    ("Ⓖ", "<G>", "least squares feature", "ⓖ"),
+    ("Ⓝ", "<N>", "minimum circumscribed feature", "ⓝ"),
+    ("Ⓒ", "<C>", "minimax feature", "ⓒ"),
+    ("Ⓧ", "<X>", "maximum inscribed feature", "ⓧ"),
     (
         "⟨ST⟩",
         "<ST>",

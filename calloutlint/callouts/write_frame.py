@@ -84,7 +84,15 @@ def _datum(datum: DatumRef, writing: Writing) -> str:
         name = f"({name})"
     if datum.freedoms:
         name += f"[{','.join(datum.freedoms)}]"
-    return _modified(name, datum.modifiers, writing)
+    text = _modified(name, datum.modifiers, writing)
+    return f"{text} [{_boundary(datum.boundary, writing)}]" if datum.boundary else text
+
+
+def _boundary(text: str, writing: Writing) -> str:
+    """The stated size of a datum's boundary: `BSC`, `⌀1.020`."""
+    number = text.lstrip("S⌀")
+    form = text.removesuffix(number)
+    return text if text.isalpha() or not form else writing.form(form) + number
 
 
 def _modified(name: str, uses: Sequence[ModifierUse], writing: Writing) -> str:

@@ -33,6 +33,10 @@ class Modifier(StrEnum):
     MMC = "M"
     LMC = "L"
     RFS = "S"
+    GAUSSIAN = "G"
+    MINIMUM_CIRCUMSCRIBED = "N"
+    MINIMAX = "C"
+    MAXIMUM_INSCRIBED = "X"
     PROJECTED = "P"
     FREE_STATE = "F"
     TANGENT = "T"
@@ -124,13 +128,15 @@ class DatumRef:
     """One datum compartment: `A`, `B Ⓜ`, `A-B`, `A[u,v,z]`, `D Ⓜ ▷`.
 
     A single datum has one letter; a common datum two or more. `modifiers` apply to the whole compartment
-    (for a single datum, always stand here); `freedoms` are the named degrees of freedom, in written order.
+    (for a single datum, always stand here); `freedoms` are the named degrees of freedom, in written order;
+    `boundary` is the stated size of the datum's boundary as written, `BSC` or `⌀1.020`.
     """
 
     letters: tuple[DatumLetter, ...]
     modifiers: tuple[ModifierUse, ...] = ()
     freedoms: tuple[str, ...] = ()
     span: Span = field(default=NOWHERE, compare=False)
+    boundary: str = ""
 
     @property
     def name(self) -> str:

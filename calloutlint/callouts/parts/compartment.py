@@ -12,12 +12,13 @@ from calloutlint.model.source import Span
 class Compartment:
     """The letters of one datum and their modifiers. `joining` while a hyphen waits for its letter."""
 
-    __slots__ = ("closed", "freedoms", "joining", "letters", "shared", "spans")
+    __slots__ = ("boundary", "closed", "freedoms", "joining", "letters", "shared", "spans")
 
     def __init__(self, letter: str, span: Span) -> None:
         self.letters: list[tuple[str, Span, list[ModifierUse]]] = [(letter, span, [])]
         self.shared: list[ModifierUse] = []
         self.freedoms: tuple[str, ...] = ()
+        self.boundary = ""
         self.joining = self.closed = False
         self.spans = [span]
 
@@ -31,6 +32,6 @@ class Compartment:
         span = joined(self.spans)
         if len(self.letters) > 1:
             letters = tuple(DatumLetter(letter, tuple(uses), at) for letter, at, uses in self.letters)
-            return DatumRef(letters, tuple(self.shared), self.freedoms, span)
+            return DatumRef(letters, tuple(self.shared), self.freedoms, span, self.boundary)
         letter, at, uses = self.letters[0]
-        return DatumRef((DatumLetter(letter, (), at),), tuple(uses), self.freedoms, span)
+        return DatumRef((DatumLetter(letter, (), at),), tuple(uses), self.freedoms, span, self.boundary)

@@ -20,8 +20,8 @@ def take_boxed_form(state: State, token: Token) -> None:
 
 def open_box(state: State, token: Token) -> None:
     """`[`: a dual dimension right after a size, else a basic one."""
-    behind = isinstance(state.previous, Token) and state.previous.type in {*STATUSES, "THRU"}
-    state.box = SizeStatus.BASIC
+    behind = isinstance(state.previous, Token) and state.previous.type in {*STATUSES, "THRU", "CLOSE"}
+    state.outer, state.box = state.box, SizeStatus.BASIC
     state.dual_of = state.size if state.after_size or behind else None
 
 
@@ -40,7 +40,7 @@ def close(state: State, token: Token) -> None:
     if state.dual_of is not None and state.dual_of.dual is not None:
         _name_dual(state.dual_of.dual, state.dual_statuses)
     state.dual_statuses = []
-    state.box = state.dual_of = None
+    state.box, state.outer, state.dual_of = state.outer, None, None
 
 
 def take_dual(size: SizeDraft, draft: SizeDraft) -> None:

@@ -207,6 +207,13 @@ class SegmentReader:
         self.datums[-1].freedoms = tuple(_FREEDOM.findall(piece))
         self.datums[-1].spans.append(self.line.span(piece))
 
+    def _boundary(self, piece: Token) -> None:
+        if not self.datums:
+            self._refuse(piece)
+            return
+        self.datums[-1].boundary = re.sub(r"[\[\]‹›\s]", "", piece)
+        self.datums[-1].spans.append(self.line.span(piece))
+
     def _close_group(self, piece: Token) -> None:
         if self.datums:
             self.datums[-1].closed = True
@@ -238,6 +245,7 @@ _TAKE: dict[str, Callable[[SegmentReader, Token], None]] = {
     "LETTERS": SegmentReader._letters,
     "HYPHEN": SegmentReader._hyphen,
     "FREEDOMS": SegmentReader._freedoms,
+    "BOUNDARY_BOX": SegmentReader._boundary,
     "CLOSE_GROUP": SegmentReader._close_group,
     "OPEN_GROUP": SegmentReader._nothing,
     "OPEN_BOX": SegmentReader._bar,

@@ -109,7 +109,7 @@ def _limits(text: str, line: Line) -> Limits:
         raise ValueError(f"'{text}' is not a pair of limits.")
     limits = Limits(line.value(match[1]), line.value(match[2]))
     smaller, larger = sorted((limits.first.amount, limits.second.amount))
-    if larger > _WIDEST_LIMITS * smaller:
+    if "°" not in text and larger > _WIDEST_LIMITS * smaller:
         raise ValueError(f"'{text}' is too wide a pair of limits to be one.")
     return limits
 

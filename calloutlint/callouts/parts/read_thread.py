@@ -40,6 +40,8 @@ def read_thread(tree: Tree[Token], line: Line) -> ThreadDraft:
             draft.series = text
         elif piece.type == "ACME":
             draft.system, draft.series = ThreadSystem.ACME, " ".join(text.upper().split())
+        elif piece.type == "LEFT_HAND_BEFORE":
+            draft.left_hand = True
         elif piece.type != "UNREAD":
             draft.class_ = text.replace(" ", "")
     return draft

@@ -56,6 +56,7 @@ class State:
         self.drill: str | None = None
         self.drill_size: SizeDraft | None = None
         self.box: SizeStatus | None = None
+        self.outer: SizeStatus | None = None
         self.dual_of: SizeDraft | None = None
         self.dual_statuses: list[SizeStatus] = []
         self.status: SizeStatus | None = None
