@@ -77,6 +77,7 @@ def test_words_that_rules_can_use_are_understood(written: str, meaning: Meaning)
         ("FOR .250-20 UNC SCREW", None),
         ("CLEARANCE FOR M6 FLOATING", Hold.FLOATING),
         ("CLR FOR #10", None),
+        ("FOR M6 SCREW, FIXED", Hold.FIXED),
         ("CLEAR FOR 1/4 BOLT FIXED", Hold.FIXED),
         ("FOR ⌀6 m6 DOWEL PIN", None),
     ],

@@ -12,7 +12,7 @@ _NAMED = re.compile(
     re.IGNORECASE,
 )
 _STOPS = re.compile(
-    r"\s*(?:[,;]|(?<!\S)-[A-Z]-|(?<!\w)(?:press|interference|force|shrink|drive|slip|sliding|slide|running"
+    r"\s*(?:[,;](?!\s*(?:fixed|floating)(?!\w))|(?<!\S)-[A-Z]-|(?<!\w)(?:press|interference|force|shrink|drive|slip|sliding|slide|running"
     r"|clearance|transition|loose|free)[ -]fit|‹(?:THRU|PL|TYP)).*",
     re.IGNORECASE,
 )
@@ -46,7 +46,7 @@ def read_note(text: str) -> tuple[Fastener, Hold | None]:
     named = _NAMED.search(text)
     what = named["what"] if named else text
     hold = _HOLD.search(what)
-    return parse_fastener(_HOLD.sub("", what)), Hold(hold[1].lower()) if hold else None
+    return parse_fastener(_HOLD.sub("", what).rstrip(" ,;")), Hold(hold[1].lower()) if hold else None
 
 
 def names_fastener(text: str) -> bool:
