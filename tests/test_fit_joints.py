@@ -39,6 +39,11 @@ def places(findings: list[Finding]) -> list[tuple[str, str, str]]:
 
 
 LEGAL = {
+    "notes that make no joint": (
+        "4) KEYSEAT FOR NO. 606 WOODRUFF KEY\n5) FLAT FOR SET SCREW\n6) SLOT 6 H9 FOR PIN 6\n"
+        "7) WRENCH CLEARANCE FOR 3/4 NUT\n8) ⌀12 ±0.1 SHAFT FOR SET SCREW HUB\n"
+        "9) 2X ⌀8 H7 FOR PIN ⌀8 m6\n10) 4X ⌀6.6 +0.2 0 THRU FOR MOUNTING BOLTS, SEE NOTE 4\n"
+    ),
     "pins and screws in one pattern": (
         "joint: screws = 4 with M6 ISO 4762, fixed in 6\n"
         "joint: pins = 5 with ⌀6 m6 dowel pin, fixed in 7\n"

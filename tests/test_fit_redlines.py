@@ -106,3 +106,54 @@ def test_no_tolerance_is_left_and_no_nominal_to_enlarge(rulebook: Rulebook) -> N
     found = judged(rulebook, text + "4) 4X ⌀6.1-6.3 THRU\n⌖ | ⌀0.5 Ⓜ | A | B | C\n", "FIT-02")
     assert found.redline is None
     assert "at least 6.5 at MMC" in found.finding.message
+
+
+UNCORRECTED = {
+    "not said how it is held": (
+        "FIT-02",
+        "4) 4X ⌀6.6 +0.2 0 THRU CLEARANCE FOR M6\n⌖ | ⌀0.7 Ⓜ | A | B | C\n",
+    ),
+    "the part that fixes is not at hand": (
+        "FIT-03",
+        "joint: c = 4 with M6 ISO 4762, fixed in MOTOR-9:7\n4) 4X ⌀6.6 +0.2 0 THRU\n⌖ | ⌀0.7 Ⓜ | A | B | C\n",
+    ),
+    "only the missing projected zone is the cause": (
+        "FIT-03",
+        "joint: c = 4 with M6 ISO 4762, fixed in 7, projection 20\n"
+        "4) 4X ⌀6.6 +0.2 0 THRU\n⌖ | ⌀0.3 Ⓜ | A | B | C\n7) 4X M6-6H ↧ 12\n⌖ | ⌀0.25 | A | B | C\n",
+    ),
+    "a fit code that locates a pin": (
+        "FIT-01",
+        "joint: c = 4 with ⌀6 m6 pin, floating\n4) 2X ⌀6 F8 THRU\n⌖ | ⌀0 Ⓜ | A | B | C\n",
+    ),
+    "a slot, which no drill makes": (
+        "FIT-01",
+        "joint: c = 4 with M6 hex head bolt, floating\n4) SLOT 5.9 ±0.1\n⌖ | 0.1 Ⓜ | A | B | C\n",
+    ),
+}
+
+
+@pytest.mark.parametrize("name", UNCORRECTED)
+def test_nothing_is_proposed_that_would_not_settle_the_joint(rulebook: Rulebook, name: str) -> None:
+    rule, body = UNCORRECTED[name]
+    head, _, callouts = body.rpartition("\n4) ")
+    joint, callouts = (head + "\n", "4) " + callouts) if head else ("", body)
+    assert judged(rulebook, MM + joint + DATUMS + callouts, rule).redline is None
+
+
+def test_without_a_position_the_published_close_hole_is_proposed(rulebook: Rulebook) -> None:
+    """ISO 273: fine for M6 is 6.4 (from memory)."""
+    text = MM + "joint: c = 4 with M6 ISO 4762, floating\n" + DATUMS + "4) 4X ⌀5.8 +0.2 0 THRU\n"
+    redline = judged(rulebook, text, "FIT-01").redline
+    assert redline is not None
+    assert redline.text == "4X ⌀6.4 +0.2 0 THRU"
+
+
+def test_cures_from_another_unit_are_rounded_to_the_safe_side(rulebook: Rulebook) -> None:
+    """An M8 is .31496 in: .350 − .31496 = .03504 holds .0350; .31496 + .040 = .35496 asks for .3550."""
+    text = INCH + "joint: c = 4 with M8 ISO 4762, floating\n" + DATUMS
+    found = judged(rulebook, text + "4) 4X ⌀.350 +.006 -.000 THRU\n⌖ | ⌀.040 Ⓜ | A | B | C\n", "FIT-02")
+    assert "position ⌀.035 or less, or a hole of at least .355 at MMC" in found.finding.message
+    assert found.redline is not None
+    assert found.redline.text == "4X ⌀.350 +.006 -.000 THRU\n⌖ | ⌀.035 Ⓜ | A | B | C"
+    assert found.redline.proven

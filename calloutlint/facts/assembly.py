@@ -8,6 +8,7 @@ from calloutlint.facts.sizes import leading_size, stated_limits
 from calloutlint.model.callout import Callout, FastenerNote
 from calloutlint.model.drawing import Drawing, Package
 from calloutlint.model.fastener import Fastener, Hold, HoleRef, Joint
+from calloutlint.model.hole import StepKind
 from calloutlint.model.size import Deviations, Limits, PlusMinus, Size, SizeForm
 from calloutlint.model.values import Value
 from calloutlint.units import Unit, convert
@@ -135,12 +136,14 @@ def _noted(callout: Callout, note: FastenerNote) -> Joint:
 
 
 def _holds(callout: Callout, fastener: Fastener) -> bool:
-    """Whether the hole that names a fastener fixes it: tapped, or not surely larger than a pin."""
+    """Whether the hole that names a fastener fixes it: tapped, finished to fit a pin, or not surely larger."""
     if callout.threads:
         return True
     size = leading_size(callout)
     if fastener.pin is None or size is None:
         return False
+    if size.fit is not None or any(step.kind is StepKind.REAM for step in callout.steps):
+        return True
     hole, pin = stated_limits(size), stated_limits(fastener.pin)
     largest = pin[1] if pin else (fastener.pin.nominal.amount if fastener.pin.nominal else None)
     if hole is None or largest is None:

@@ -141,14 +141,20 @@ class HoleView(PartView):
 
     @property
     def thinnest_presumed(self) -> Fastener:
-        """The thinnest of the fasteners it is taken for: what it does not fit, none of them fits."""
-        return min(self._presumed or self._guessed, key=lambda fastener: _diameter_mm(fastener))
+        """The thinnest of those fasteners: what it does not fit, none of them fits."""
+        return min(self._presumed, key=lambda fastener: _diameter_mm(fastener))
+
+    @property
+    def thinnest_guessed(self) -> Fastener | None:
+        """The thinnest fastener of the drawing's unit that the hole is a published size for, if guessed."""
+        return min(self._guessed, key=lambda fastener: _diameter_mm(fastener), default=None)
 
     @property
     def _guessed(self) -> list[Fastener]:
-        if self.nominal is None or self.unit is None:
+        if self.nominal is None or self.unit is None or not self.guessed:
             return []
-        return [_named(match) for match in fasteners_for(self.nominal, self.unit)]
+        matches = fasteners_for(self.nominal, self.unit)
+        return [_named(match) for match in matches if match.sizes.unit is self.unit]
 
     @fact
     def still_goes(self) -> str:

@@ -56,8 +56,8 @@ class PackageView(View):
             if view.part.sizes and view.hole.presumed:
                 yield MemberView(view, view.hole.thinnest_presumed, None)
                 yield PassageView(view, view.hole.thinnest_presumed, None)
-            elif view.part.sizes and view.hole.guessed:
-                yield PassageView(view, view.hole.thinnest_presumed, None)
+            elif view.part.sizes and (thinnest := view.hole.thinnest_guessed) is not None:
+                yield PassageView(view, thinnest, None)
 
     def listed_fasteners(self) -> Iterator[FastenerView]:
         """Fasteners of joints, and those of the parts lists that no joint of their drawing uses."""

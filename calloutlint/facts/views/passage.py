@@ -121,12 +121,16 @@ class PassageView(PassingView):
         return _sentences(said) + self.position_remarks
 
     @fact
+    def several_positions(self) -> bool:
+        """Whether it has several position lines, of which the largest ⌀ tolerance counts."""
+        return len(positions(self._callout)) > 1
+
+    @fact
     def position_remarks(self) -> str:
         """The same of the position tolerance alone."""
-        several = len(positions(self._callout)) > 1
         return _sentences(
             (
-                (several, "Of its position lines the largest ⌀ tolerance counts."),
+                (self.several_positions, "Of its position lines the largest ⌀ tolerance counts."),
                 (self._at(Modifier.LMC), "At Ⓛ the position is largest where the hole is smallest."),
                 (self._shifts, "The datum shift that material modifiers on the datums allow is not counted."),
             )
