@@ -387,3 +387,9 @@ def test_forms_of_the_standards_are_read_whole(written: str, canonical: str) -> 
     assert write_parts(parts, Style.UNICODE) == [canonical]
     for style in Style:
         assert parse_callout(write_parts(parts, style), Unit.INCH) == parts
+
+
+def test_a_countersink_takes_the_angle_before_it() -> None:
+    parts = read("82° CSK ⌀.50")
+    assert write_parts(parts, Style.UNICODE) == ["⌵ ⌀.50 X 82°"]
+    assert read("⌵ ⌀.50 X 82°") == parts

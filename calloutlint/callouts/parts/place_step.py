@@ -27,7 +27,7 @@ def take_step(state: State, token: Token) -> None:
         draft.size.form = SizeForm.DIAMETER
     state.drill = state.drill_size = None
     of_size_before = kind in SPEAKS_OF_SIZE_BEFORE
-    if not of_size_before and isinstance(last, SizeDraft) and _stands_after_number(state):
+    if not of_size_before and isinstance(last, SizeDraft) and _stands_after_number(state, kind):
         _claim(state, draft, last)
     state.parts.append(draft)
     state.give_count(draft)
@@ -57,11 +57,16 @@ def _is_plain_word(state: State, kind: StepKind) -> bool:
     return kind in SPEAKS_OF_SIZE_BEFORE and state.follows("WORD") and not named
 
 
-def _stands_after_number(state: State) -> bool:
-    """Whether the word stands after its number: `.438 CBORE .25 DEEP`."""
+def _stands_after_number(state: State, kind: StepKind) -> bool:
+    """Whether the word stands after its number: `.438 CBORE .25 DEEP`, `82° CSK ⌀.50`."""
     if not (isinstance(state.previous, Tree) and state.previous.data == "size"):
         return False
-    return not state.follows("size") or state.follows("DEEP", 1)
+    angle_first = kind is StepKind.COUNTERSINK and _is_angle(state.last)
+    return angle_first or not state.follows("size") or state.follows("DEEP", 1)
+
+
+def _is_angle(part: object) -> bool:
+    return isinstance(part, SizeDraft) and part.form is SizeForm.ANGLE
 
 
 def _claim(state: State, draft: StepDraft, last: SizeDraft) -> None:
