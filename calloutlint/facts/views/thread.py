@@ -24,7 +24,7 @@ from calloutlint.trade.threads import limits_of, series_has
 from calloutlint.trade.unified_series import only_tpi
 from calloutlint.units import Unit
 
-STUD = re.compile(r"\b(?:STUDS?|SCREWS?|BOLTS?|ROD)\b", re.IGNORECASE)
+STUD = re.compile(r"(?:THREADED )?(?:STUDS?|ROD)\b(?! SIDE| END| HOLE)", re.IGNORECASE)
 OTHER_CLASS = {"1A": "1B", "2A": "2B", "3A": "3B", "1B": "1A", "2B": "2A", "3B": "3A", "6g": "6H", "6H": "6g"}
 
 
@@ -157,11 +157,12 @@ class ThreadView(PartView):
         said = side_by_words(callout.part)
         if said is not None:
             return said
-        if any(STUD.search(part.text) for part in callout.part.parts if isinstance(part, Words)):
-            return False
-        if callout.in_any_joint or side_by_hole(callout.part):
+        if side_by_hole(callout.part) or isinstance(self.part.extent, Through | Depth):
             return True
-        return True if isinstance(self.part.extent, Through | Depth) else None
+        words = (part.text for part in callout.part.parts if isinstance(part, Words))
+        if any(STUD.match(text) for text in words):
+            return False
+        return True if callout.in_any_joint else None
 
     @fact
     def depth(self) -> Length | None:
