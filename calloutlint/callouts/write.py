@@ -5,6 +5,7 @@ from collections.abc import Iterator, Sequence
 from calloutlint.callouts.expected import BY_PLACE
 from calloutlint.callouts.note import names_fastener
 from calloutlint.callouts.spelling import normalise
+from calloutlint.callouts.words import meanings_behind
 from calloutlint.callouts.write_frame import write_frame, write_scope, write_segment
 from calloutlint.callouts.write_size import write_size, write_step, write_thread
 from calloutlint.callouts.writing import Style, Writing
@@ -115,7 +116,7 @@ def _joins(parts: Sequence[Part], at: int) -> bool:
     if isinstance(part, Words) and isinstance(before, Count):
         return not isinstance(following, Size | Thread | HoleStep) and not _is_keyword(part)
     if isinstance(part, Words):
-        if _becomes_thru_hole(part, before):
+        if _becomes_thru_hole(part, before) or _is_silenced(part, before):
             return False
         tapped = isinstance(before, Thread) and part.text == "TAP"
         return tapped or (isinstance(before, Size | Thread | HoleStep) and _trails(part, following))
@@ -142,6 +143,12 @@ def _with_wrong_zone(line: str, text: str, frame: Frame) -> str:
     else:
         compartments[zone] += f" {text}"
     return " | ".join(compartments)
+
+
+def _is_silenced(words: Words, before: Part) -> bool:
+    """Whether words that name the feature would name it no more behind THRU, as in `THRU BOSS`."""
+    through = isinstance(getattr(before, "extent", None), Through)
+    return through and meanings_behind("‹THRU›", words.text) != words.meanings
 
 
 def _becomes_thru_hole(words: Words, before: Part) -> bool:
