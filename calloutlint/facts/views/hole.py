@@ -224,12 +224,6 @@ class HoleView(PartView):
         depths = [depth for size in sizes if (depth := self._length(size.nominal)) is not None]
         return max(depths, default=None)
 
-    @fact
-    def thread_depth(self) -> Length | None:
-        """Depth of full thread as stated (nominal)."""
-        depths = [t.extent.size for t in self.part.threads if isinstance(t.extent, Depth) and t.extent.size]
-        return self._length(depths[0].nominal) if depths else None
-
 
 def _says_other_use(part: Part) -> bool:
     """Whether words say that something else than a screw goes through: oil, sight, a rivet, a handle."""

@@ -14,8 +14,8 @@ from calloutlint.facts.view import View, fact
 from calloutlint.facts.views.fastener import FastenerView
 from calloutlint.facts.views.feature import SURFACE_WORDS
 from calloutlint.facts.views.fixing import FixingView
-from calloutlint.facts.views.located import is_located, positions
-from calloutlint.facts.views.part import PartView
+from calloutlint.facts.views.joined import JoinedView
+from calloutlint.facts.views.located import positions
 from calloutlint.facts.views.passage import PassageView
 from calloutlint.model.callout import Callout, FastenerNote
 from calloutlint.model.drawing import Drawing
@@ -187,31 +187,10 @@ class JointView(View):
         return len(set(self.counts)) <= 1
 
 
-class MemberView(PartView):
+class MemberView(JoinedView):
     """A hole of a stated joint, clearance or fixing, or one taken for a clearance hole."""
 
     subject = "member"
-    part: Callout
-
-    def __init__(self, callout: CalloutView, fastener: Fastener, joint: JointView | None) -> None:
-        super().__init__(callout.part, callout)
-        self._fastener = fastener
-        self._joint = joint
-
-    @fact
-    def joint(self) -> JointView | None:
-        """The stated joint; unknown where the hole is only taken for a clearance hole."""
-        return self._joint
-
-    @fact
-    def fastener(self) -> FastenerView:
-        """The fastener that goes through it, or is fixed in it."""
-        return FastenerView(self._fastener, self.unit)
-
-    @fact
-    def located(self) -> bool | None:
-        """Whether something locates it; unknown where a general tolerance may."""
-        return is_located(self._callout)
 
     @fact
     def owes_location(self) -> bool:

@@ -13,46 +13,25 @@ from calloutlint.facts.formulas import fastening
 from calloutlint.facts.formulas.boundaries import FeatureOfSize, GeometricTolerance, allowed, inner_boundary
 from calloutlint.facts.sizes import amount_in
 from calloutlint.facts.view import Length, fact
-from calloutlint.facts.views.fastener import FastenerView
 from calloutlint.facts.views.fixing import FixingView
-from calloutlint.facts.views.located import is_located, tolerance_of, widest_position
+from calloutlint.facts.views.located import tolerance_of, widest_position
 from calloutlint.facts.views.seated import SeatedView
 from calloutlint.facts.views.tolerance import ZONE_SIGNS
-from calloutlint.model.callout import Callout
-from calloutlint.model.fastener import Fastener, Hold
+from calloutlint.model.fastener import Hold
 from calloutlint.model.frame import ZoneShape
 from calloutlint.units import Unit, convert
 
 if TYPE_CHECKING:
-    from calloutlint.facts.views.callout import CalloutView
     from calloutlint.facts.views.frame import FrameView
-    from calloutlint.facts.views.joint import JointView
 
 
 class PassingView(SeatedView):
     """A clearance hole with the fastener that passes it, by a stated joint or by assumption."""
 
-    part: Callout
-
-    def __init__(self, callout: CalloutView, fastener: Fastener, joint: JointView | None) -> None:
-        super().__init__(callout.part, callout)
-        self._fastener = fastener
-        self._joint = joint
-
-    @fact
-    def joint(self) -> JointView | None:
-        """The stated joint; unknown where the hole is only taken for a clearance hole."""
-        return self._joint
-
     @fact
     def stated(self) -> bool:
         """Whether a stated joint names it."""
         return self._joint is not None
-
-    @fact
-    def fastener(self) -> FastenerView:
-        """The fastener that passes it."""
-        return FastenerView(self._fastener, self.unit)
 
     @fact
     def hold(self) -> Hold | None:
@@ -63,11 +42,6 @@ class PassingView(SeatedView):
     def under_head(self) -> bool:
         """Whether the head, or the nut, bears on it: an outermost part, as far as the joint tells."""
         return self._joint is None or self._joint.is_outermost(self.part)
-
-    @fact
-    def located(self) -> bool | None:
-        """Whether something locates it; unknown where a general tolerance may."""
-        return is_located(self._callout)
 
     @fact
     def position(self) -> FrameView | None:

@@ -6,22 +6,19 @@ from typing import TYPE_CHECKING
 
 from calloutlint.facts.formulas import fastening
 from calloutlint.facts.view import Length, fact
-from calloutlint.facts.views.part import PartView
+from calloutlint.facts.views.joined import JoinedView
 from calloutlint.facts.views.step import StepView
 from calloutlint.model.hole import StepKind
 
 if TYPE_CHECKING:
     from decimal import Decimal
 
-    from calloutlint.facts.views.fastener import FastenerView
-
 SEATS = {StepKind.COUNTERBORE, StepKind.SPOTFACE}
 
 
-class SeatedView(PartView):
-    """A hole that a head may bear on; the fastener and the hole's position are given by what builds on it."""
+class SeatedView(JoinedView):
+    """A hole that a head may bear on; the hole's position is given by what builds on it."""
 
-    fastener: FastenerView
     tolerance_at_lmc: Decimal | None
 
     @fact
